@@ -1,0 +1,2 @@
+//! Swaybound.
+fn main() {}

@@ -1,0 +1,92 @@
+//! The shape every quick method has, and the table row it is listed by.
+
+use super::{Forces, Members, Response, Work, Worksheet};
+use crate::frame::Frame;
+use crate::lane::Plain;
+
+/// What a method is, for reports and for choosing it.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Info {
+    /// Name in files and on the command line, such as `portal-tributary`.
+    pub id: &'static str,
+    /// Name in sentences, such as `portal method, tributary widths`.
+    pub name: &'static str,
+    /// Who published it, and where.
+    pub source: &'static str,
+    /// What it assumes, one sentence each.
+    pub assumptions: &'static [&'static str],
+    /// True where member sizes must be known (areas for the cantilever method count only as ratios).
+    pub needs_sizes: bool,
+}
+
+/// A reason to read a method's numbers with care, as one sentence.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Caution(pub String);
+
+/// Whether a method may be used on a frame.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub enum Fit {
+    /// The frame is what the method was published for.
+    Suits,
+    /// The method answers, with these reasons to doubt it.
+    Doubtful(Vec<Caution>),
+    /// The method has no answer for this frame.
+    Refused(Caution),
+}
+
+/// A quick method, written once over lanes.
+pub trait Method {
+    /// What the method is.
+    const INFO: Info;
+
+    /// Whether the method may be used on `frame`.
+    fn fit(frame: &Frame) -> Fit;
+
+    /// Computes the member forces of `W` frames.
+    ///
+    /// `work` and `forces` must have been made for `members`.
+    fn respond<L: crate::lane::Lane<W>, const W: usize>(
+        members: &Members<W>,
+        work: &mut Work<W>,
+        forces: &mut Forces<W>,
+    );
+
+    /// The hand calculation with the frame's own numbers; `response` is the method's answer for `frame`.
+    fn worksheet(frame: &Frame, response: &Response) -> Worksheet;
+}
+
+/// One method as a row of plain function pointers, so that methods can stand in one list.
+#[derive(Debug, Clone, Copy)]
+pub struct Entry {
+    /// What the method is.
+    pub info: &'static Info,
+    /// See [`Method::fit`].
+    pub fit: fn(&Frame) -> Fit,
+    /// [`Method::respond`] for one frame.
+    pub one: fn(&Members<1>, &mut Work<1>, &mut Forces<1>),
+    /// [`Method::respond`] for four frames in portable arithmetic.
+    pub four: fn(&Members<4>, &mut Work<4>, &mut Forces<4>),
+    /// See [`Method::worksheet`].
+    pub worksheet: fn(&Frame, &Response) -> Worksheet,
+}
+
+impl Entry {
+    /// The row of method `M`.
+    pub const fn of<M: Method>() -> Self {
+        Self {
+            info: &M::INFO,
+            fit: M::fit,
+            one: M::respond::<f64, 1>,
+            four: M::respond::<Plain, 4>,
+            worksheet: M::worksheet,
+        }
+    }
+
+    /// The method's answer for one frame.
+    pub fn analyse(&self, frame: &Frame) -> Response {
+        let members = Members::of(frame);
+        let mut forces = Forces::for_members(&members);
+        (self.one)(&members, &mut Work::for_members(&members), &mut forces);
+        Response::from_forces(self.info.id, frame, &forces)
+    }
+}

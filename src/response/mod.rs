@@ -1,0 +1,19 @@
+//! What an analysis is given and what it answers, in one shape for every method.
+//!
+//! [`Members`] and [`Forces`] are the lane form, `W` frames side by side; [`Response`] is one frame's answer with
+//! everything a reader needs; [`statics`] judges any response by equilibrium alone.
+
+mod forces;
+mod members;
+mod method;
+mod quantity;
+mod single;
+pub mod statics;
+mod worksheet;
+
+pub use forces::{Forces, Work, axial_from_beam_shears};
+pub use members::Members;
+pub use method::{Caution, Entry, Fit, Info, Method};
+pub use quantity::{Member, Quantity, Value};
+pub use single::{BeamForces, ColumnForces, Movement, Response};
+pub use worksheet::{Amount, Cell, Column, Step, Worksheet};

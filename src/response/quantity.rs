@@ -1,0 +1,160 @@
+//! The quantities a response states, each with its place: one list that files, errors and reports share.
+
+use crate::frame::{Frame, bay_name, line_name};
+use crate::units::{ReportUnits, Unit};
+
+/// What a value belongs to. Indices count from 0.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Member {
+    /// A column, by storey and line.
+    Column {
+        /// Storey, 0 = ground.
+        storey: usize,
+        /// Column line, 0 = A.
+        line: usize,
+    },
+    /// A beam, by its own floor and bay.
+    Beam {
+        /// Floor, 0 = lowest.
+        floor: usize,
+        /// Bay, 0 = A-B.
+        bay: usize,
+    },
+    /// A whole storey.
+    Storey {
+        /// Storey, 0 = ground.
+        storey: usize,
+    },
+}
+
+impl Member {
+    /// `column`, `beam` or `storey`, as the files say.
+    pub fn kind(self) -> &'static str {
+        match self {
+            Self::Column { .. } => "column",
+            Self::Beam { .. } => "beam",
+            Self::Storey { .. } => "storey",
+        }
+    }
+
+    /// Storey (a beam: its floor), counted from 0.
+    pub fn storey(self) -> usize {
+        match self {
+            Self::Column { storey, .. } | Self::Storey { storey } | Self::Beam { floor: storey, .. } => storey,
+        }
+    }
+
+    /// Line or bay by name, `-` for a whole storey.
+    pub fn at(self) -> String {
+        match self {
+            Self::Column { line, .. } => line_name(line),
+            Self::Beam { bay, .. } => bay_name(bay),
+            Self::Storey { .. } => "-".into(),
+        }
+    }
+}
+
+/// A quantity of a column, beam or storey.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Quantity {
+    /// Moment at the foot of a column.
+    MomentFoot,
+    /// Moment at the head of a column.
+    MomentHead,
+    /// Moment at the left end of a beam.
+    MomentLeft,
+    /// Moment at the right end of a beam.
+    MomentRight,
+    /// Shear of a column, a beam or a storey.
+    Shear,
+    /// Axial force of a column.
+    Axial,
+    /// The larger of a member's two end moments, without sign.
+    DesignMoment,
+    /// Movement of a floor relative to the floor below.
+    Drift,
+    /// Movement of a floor relative to the ground.
+    Sway,
+}
+
+impl Quantity {
+    /// Name in the files.
+    pub fn id(self) -> &'static str {
+        match self {
+            Self::MomentFoot => "moment_foot",
+            Self::MomentHead => "moment_head",
+            Self::MomentLeft => "moment_left",
+            Self::MomentRight => "moment_right",
+            Self::Shear => "shear",
+            Self::Axial => "axial",
+            Self::DesignMoment => "design_moment",
+            Self::Drift => "drift",
+            Self::Sway => "sway",
+        }
+    }
+
+    /// Unit in files and reports.
+    pub fn unit(self, units: ReportUnits) -> Unit {
+        match self {
+            Self::MomentFoot | Self::MomentHead | Self::MomentLeft | Self::MomentRight | Self::DesignMoment => {
+                units.moment()
+            }
+            Self::Shear | Self::Axial => units.force(),
+            Self::Drift | Self::Sway => units.movement(),
+        }
+    }
+}
+
+/// One number of a response and where it belongs, in N, m.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Value {
+    /// The member or storey.
+    pub member: Member,
+    /// The quantity.
+    pub quantity: Quantity,
+    /// The number, N, m; signs of the crate's table.
+    pub value: f64,
+}
+
+impl super::Response {
+    /// Every number of this response: columns storey by storey, then beams floor by floor, then storeys.
+    pub fn values(&self, frame: &Frame) -> Vec<Value> {
+        let mut values = Vec::new();
+        for storey in 0..frame.storeys() {
+            for line in 0..frame.lines() {
+                let member = Member::Column { storey, line };
+                let column = self.column(storey, line);
+                let numbers = [
+                    (Quantity::MomentFoot, column.foot),
+                    (Quantity::MomentHead, column.head),
+                    (Quantity::Shear, column.shear),
+                    (Quantity::Axial, column.axial),
+                    (Quantity::DesignMoment, column.design_moment()),
+                ];
+                values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
+            }
+        }
+        for floor in 0..frame.storeys() {
+            for bay in 0..frame.bays() {
+                let member = Member::Beam { floor, bay };
+                let beam = self.beam(floor, bay);
+                let numbers = [
+                    (Quantity::MomentLeft, beam.left),
+                    (Quantity::MomentRight, beam.right),
+                    (Quantity::Shear, beam.shear),
+                    (Quantity::DesignMoment, beam.design_moment()),
+                ];
+                values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
+            }
+        }
+        for storey in 0..frame.storeys() {
+            let member = Member::Storey { storey };
+            values.push(Value { member, quantity: Quantity::Shear, value: self.storey_shear(storey) });
+            if let Some(movement) = self.movement(storey) {
+                values.push(Value { member, quantity: Quantity::Drift, value: movement.drift });
+                values.push(Value { member, quantity: Quantity::Sway, value: movement.sway });
+            }
+        }
+        values
+    }
+}

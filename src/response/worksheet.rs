@@ -1,0 +1,56 @@
+//! A hand calculation as data: steps, each with its rule and a table of this frame's numbers.
+
+/// What the numbers of a worksheet column are.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Amount {
+    /// A name: text.
+    Name,
+    /// A number without unit.
+    Ratio,
+    /// m.
+    Length,
+    /// N.
+    Force,
+    /// N m.
+    Moment,
+}
+
+/// One column of a step's table.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Column {
+    /// Head of the column, without unit.
+    pub head: String,
+    /// What its numbers are.
+    pub amount: Amount,
+}
+
+/// One entry of a step's table.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Cell {
+    /// A name.
+    Name(String),
+    /// A number in N, m.
+    Number(f64),
+    /// Nothing.
+    Blank,
+}
+
+/// One step of a hand calculation.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Step {
+    /// What the step finds.
+    pub title: String,
+    /// The rule in words and symbols.
+    pub rule: String,
+    /// The table's columns.
+    pub columns: Vec<Column>,
+    /// The table's rows, one entry per column.
+    pub rows: Vec<Vec<Cell>>,
+}
+
+/// A method's hand calculation for one frame.
+#[derive(Debug, Clone, PartialEq, Default)]
+pub struct Worksheet {
+    /// The steps in the order a person would take them.
+    pub steps: Vec<Step>,
+}
