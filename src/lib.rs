@@ -27,6 +27,7 @@
 //! negative and add up to -V h. Beam shear = (M_left + M_right) / L. Floors are rigid in their own plane: one sway per
 //! floor.
 pub mod approx;
+pub mod compare;
 pub mod exact;
 pub mod frame;
 pub mod lane;
