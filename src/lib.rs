@@ -33,4 +33,5 @@ pub mod frame;
 pub mod lane;
 pub mod response;
 pub mod solve;
+pub mod store;
 pub mod units;
