@@ -31,6 +31,7 @@ pub mod compare;
 pub mod exact;
 pub mod frame;
 pub mod lane;
+pub mod report;
 pub mod response;
 pub mod solve;
 pub mod store;

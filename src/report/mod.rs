@@ -1,0 +1,3 @@
+//! Reports: what an engineer reads and files.
+
+pub mod figure;
