@@ -28,5 +28,6 @@
 //! floor.
 pub mod frame;
 pub mod lane;
+pub mod report;
 pub mod response;
 pub mod units;
