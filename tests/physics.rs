@@ -11,7 +11,7 @@ use support::{Sizes, Within, build, energy, laws, parts};
 use swaybound::approx;
 use swaybound::exact::{Unsolvable, slope_deflection, stiffness};
 use swaybound::frame::{Feet, Frame, FrameParts, SizeSource};
-use swaybound::response::{Forces, Members, Quantity, Response, Work, statics};
+use swaybound::response::{Forces, Member, Members, Quantity, Response, Work, statics};
 
 /// Two solutions of one ordinary frame in different forms: what rounding does to it, with a margin of a hundred.
 const SAME: f64 = 1e-11;
@@ -256,15 +256,12 @@ proptest! {
 
     /// Four frames side by side give every frame the bits it has alone.
     #[test]
-    fn four_lanes_give_the_bits_of_one(parts in frames()) {
-        let members = Members::of(&build(parts));
-        let repeated = members.repeated();
-        for entry in approx::METHODS {
-            let (mut one, mut four) = (Forces::for_members(&members), Forces::for_members(&repeated));
-            (entry.one)(&members, &mut Work::for_members(&members), &mut one);
-            (entry.four)(&repeated, &mut Work::for_members(&repeated), &mut four);
-            same_bits(entry.info.id, &one, &four);
-        }
+    fn four_lanes_give_the_bits_of_one(parts in frames(), factors in [0.2f64..5.0, 0.2..5.0, 0.2..5.0]) {
+        let members = Members::of(&build(parts.clone()));
+        same_bits_side_by_side(&members.repeated(), [&members; 4]);
+        let other = factors.map(|factor| Members::of(&build(changed(&parts, factor))));
+        let four = side_by_side([&members, &other[0], &other[1], &other[2]]);
+        same_bits_side_by_side(&four, [&members, &other[0], &other[1], &other[2]]);
     }
 
     /// Members up to a million times stiffer than others: solved, and balanced.
@@ -327,8 +324,53 @@ fn mirror_images(frame: &Frame, here: &Response, there: &Response) {
     }
 }
 
+/// A frame of the same shape with other numbers throughout.
+fn changed(parts: &FrameParts, factor: f64) -> FrameParts {
+    let mut other = parts.clone();
+    other.bays.iter_mut().enumerate().for_each(|(bay, width)| *width *= factor + bay as f64);
+    other.storeys.iter_mut().enumerate().for_each(|(storey, height)| *height *= factor + (storey % 3) as f64);
+    other.lateral.iter_mut().for_each(|force| *force *= factor);
+    for (index, column) in other.columns.iter_mut().enumerate() {
+        column.area = column.area.map(|area| area * (factor + (index % 5) as f64));
+    }
+    other.feet = if other.feet == Feet::Pinned { Feet::Fixed } else { Feet::Pinned };
+    other
+}
+
+/// Four frames of one shape in four lanes.
+fn side_by_side(frames: [&Members<1>; 4]) -> Members<4> {
+    let gather = |values: fn(&Members<1>) -> &Vec<[f64; 1]>| {
+        let count = values(frames[0]).len();
+        (0..count).map(|index| frames.map(|frame| values(frame)[index][0])).collect()
+    };
+    Members {
+        storeys: frames[0].storeys,
+        bays: frames[0].bays,
+        height: gather(|frame| &frame.height),
+        width: gather(|frame| &frame.width),
+        position: gather(|frame| &frame.position),
+        shear: gather(|frame| &frame.shear),
+        area: gather(|frame| &frame.area),
+        ground_hinge: frames.map(|frame| frame.ground_hinge[0]),
+    }
+}
+
+/// Runs every quick method on four frames together and on each alone.
 #[track_caller]
-fn same_bits(method: &str, one: &Forces<1>, four: &Forces<4>) {
+fn same_bits_side_by_side(together: &Members<4>, alone: [&Members<1>; 4]) {
+    for entry in &approx::METHODS {
+        let mut four = Forces::for_members(together);
+        (entry.four)(together, &mut Work::for_members(together), &mut four);
+        for (lane, members) in alone.into_iter().enumerate() {
+            let mut one = Forces::for_members(members);
+            (entry.one)(members, &mut Work::for_members(members), &mut one);
+            same_bits(entry.info.id, &one, &four, lane);
+        }
+    }
+}
+
+#[track_caller]
+fn same_bits(method: &str, one: &Forces<1>, four: &Forces<4>, lane: usize) {
     let pairs = [
         (&one.column_foot, &four.column_foot),
         (&one.column_head, &four.column_head),
@@ -339,12 +381,46 @@ fn same_bits(method: &str, one: &Forces<1>, four: &Forces<4>) {
     for (one, four) in pairs {
         assert_eq!(one.len(), four.len(), "{method}");
         for ([alone], together) in one.iter().zip(four) {
-            assert!(
-                together.iter().all(|lane| lane.to_bits() == alone.to_bits()),
-                "{method}: {alone} and {together:?}"
-            );
+            assert_eq!(together[lane].to_bits(), alone.to_bits(), "{method}, lane {lane}: {alone} and {together:?}");
         }
     }
+}
+
+/// A change to one number of a response.
+type Slip = fn(&mut Forces<1>);
+
+/// The crate's statics check finds one number in the whole frame that is off by a thousandth, and says where.
+#[test]
+fn statics_find_a_single_slip() {
+    use statics::Law;
+    let bare = parts(&[6.0, 5.0], &[4.0, 3.5, 3.0], &[1e4, 2e4, 3e4]).areas(|_, _| 0.1);
+    let frame = build(bare);
+    let members = Members::of(&frame);
+    let mut sound = Forces::for_members(&members);
+    (approx::find("cantilever").unwrap().one)(&members, &mut Work::for_members(&members), &mut sound);
+    let check = |forces: &Forces<1>| statics::check(&frame, &Response::from_forces("slip", &frame, forces));
+    assert!(check(&sound).closes());
+    let column = Member::Column { storey: 1, line: 2 };
+    let slips: [(Slip, Law, Member); 6] = [
+        (|forces| forces.column_head[5][0] *= 1.001, Law::JointMoments, column),
+        (|forces| forces.column_foot[8][0] *= 1.001, Law::JointMoments, column),
+        (|forces| forces.beam_right[3][0] *= 1.001, Law::JointMoments, column),
+        (|forces| forces.column_head[5][0] *= 1.001, Law::StoreyShears, Member::Storey { storey: 1 }),
+        (|forces| forces.column_axial[3][0] *= 1.001, Law::StoreyVertical, Member::Storey { storey: 1 }),
+        (|forces| forces.column_axial[5][0] *= 1.001, Law::Overturning, Member::Storey { storey: 1 }),
+    ];
+    for (slip, law, place) in slips {
+        let mut forces = sound.clone();
+        slip(&mut forces);
+        let found = check(&forces);
+        assert!(!found.closes(), "{law:?} at {place:?} went unseen");
+        let worst = found.worst(law).unwrap();
+        assert_eq!(worst.member, place, "{law:?}");
+        assert!(worst.relative.abs() > 1e-5, "{worst:?}");
+    }
+    let mut broken = sound;
+    broken.beam_left[0][0] = f64::NAN;
+    assert!(!check(&broken).closes(), "a number that is none must not pass");
 }
 
 /// Pinned feet and beams without stiffness: nothing resists sway, and the error says where.

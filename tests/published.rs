@@ -253,6 +253,13 @@ fn axial_forces_of_the_portal_variants() {
         shares.collect::<Vec<_>>()
     };
     assert!(interior("portal", &unequal).iter().all(|share| *share > 0.1), "interior columns must carry axial force");
+    // The tributary variant itself: half a bay on either side; read.
+    let tributary = quick("portal-tributary", &unequal);
+    for (line, width) in [2.5, 6.5, 7.25, 3.25].into_iter().enumerate() {
+        for (storey, shear) in [85e3, 65e3, 30e3].into_iter().enumerate() {
+            close("tributary shear", tributary.column(storey, line).shear, shear * width / 19.5, ROUNDING);
+        }
+    }
     for (method, frame) in [("portal", &equal), ("portal-tributary", &equal), ("portal-tributary", &unequal)] {
         for share in interior(method, frame) {
             close("interior axial force over end axial force", share, 0.0, Within::Absolute(1e-13));
