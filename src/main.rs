@@ -1,7 +1,9 @@
-//! Swaybound.
+//! The `swaybound` program: reads the command line, runs the command, prints the fault, sets the exit code.
 
 mod cli;
 
-fn main() -> std::process::ExitCode {
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
     cli::run()
 }

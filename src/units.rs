@@ -46,6 +46,14 @@ pub enum ReportUnits {
 }
 
 impl ReportUnits {
+    /// Name in files: `metric` or `us`.
+    pub fn name(self) -> &'static str {
+        match self {
+            Self::Metric => "metric",
+            Self::Us => "us",
+        }
+    }
+
     /// Unit of forces: kN or kip.
     pub fn force(self) -> Unit {
         match self {

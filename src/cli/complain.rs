@@ -24,7 +24,12 @@ pub fn render_warning(warning: &FileWarning, path: &str, text: &str, styled: boo
     finish(title.element(snippet).element(Level::HELP.message(warning.help())), styled)
 }
 
-fn at<'a>(text: &'a str, path: &'a str, span: &Range<usize>, key: &'a str) -> Snippet<'a, annotate_snippets::Annotation<'a>> {
+fn at<'a>(
+    text: &'a str,
+    path: &'a str,
+    span: &Range<usize>,
+    key: &'a str,
+) -> Snippet<'a, annotate_snippets::Annotation<'a>> {
     let primary = AnnotationKind::Primary.span(first_line(text, span));
     let primary = if key.is_empty() { primary } else { primary.label(key) };
     Snippet::source(text).path(path).annotation(primary)
@@ -40,4 +45,14 @@ fn first_line(text: &str, span: &Range<usize>) -> Range<usize> {
 fn finish(group: Group<'_>, styled: bool) -> String {
     let renderer = if styled { Renderer::styled() } else { Renderer::plain() };
     renderer.term_width(WIDTH).render(&[group])
+}
+
+/// A message that belongs to no place in a text.
+pub fn plain_error(message: &str) -> String {
+    finish(Group::with_title(Level::ERROR.primary_title(message)), true)
+}
+
+/// A warning that belongs to no place in a text.
+pub fn plain_warning(message: &str) -> String {
+    finish(Group::with_title(Level::WARNING.primary_title(message)), true)
 }

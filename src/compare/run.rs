@@ -7,6 +7,7 @@ use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame};
 use crate::response::statics::{self, Statics};
 use crate::response::{Entry, Fit, Response};
+use thiserror::Error;
 
 /// Above this height over width, column axial strain is part of the exact answer where areas allow it.
 const SLENDER: f64 = 2.0;
@@ -14,6 +15,27 @@ const SLENDER: f64 = 2.0;
 const TALL: usize = 8;
 /// Foot springs of the second line that fixed feet get, times 4 E I_c / h: real feet lie between (common practice).
 pub const FOOT_RATIOS: [f64; 2] = [20.0, 1.0];
+
+/// A drift over this share of the storey height is taken for a slip in loads, sizes or units (common practice: codes allow
+/// a small part of it).
+const ABSURD_DRIFT: f64 = 1.0 / 20.0;
+
+/// A result that is allowed but absurd. Storeys count from 1.
+#[derive(Debug, Clone, Copy, PartialEq, Error)]
+pub enum ResultWarning {
+    /// A storey drifts out of all proportion.
+    #[error(
+        "storey {storey} drifts by 1/{:.1} of its height, beyond 1/20: check loads, sizes and units; the analysis is linear \
+         and means little there",
+        1.0 / ratio
+    )]
+    LargeDrift {
+        /// The storey with the largest drift over height.
+        storey: usize,
+        /// Its drift over its height.
+        ratio: f64,
+    },
+}
 
 /// Which exact analysis the quick methods are measured by.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
@@ -99,6 +121,15 @@ impl Comparison {
         let mut verdicts: Vec<_> = self.verdicts.iter().filter(|verdict| verdict.subject == subject).collect();
         verdicts.sort_by(|a, b| b.lowest.percent.total_cmp(&a.lowest.percent));
         verdicts
+    }
+
+    /// Results that are allowed but absurd for a building.
+    pub fn warnings(&self, frame: &Frame) -> Vec<ResultWarning> {
+        let drift = |storey: usize| self.reference().movement(storey).map(|movement| movement.drift.abs());
+        let storeys =
+            (0..frame.storeys()).filter_map(|storey| Some((storey, drift(storey)? / frame.storey_height(storey))));
+        let worst = storeys.max_by(|a, b| a.1.total_cmp(&b.1)).filter(|(_, ratio)| *ratio > ABSURD_DRIFT);
+        worst.map(|(storey, ratio)| ResultWarning::LargeDrift { storey: storey + 1, ratio }).into_iter().collect()
     }
 
     /// Whether some quick method is nowhere short on `subject` by more than the tolerance.

@@ -132,6 +132,13 @@ pub struct Verdict {
     pub places: Vec<PlaceVerdict>,
 }
 
+impl Verdict {
+    /// The largest factor over all members; `None` where some quick value is zero.
+    pub fn largest_factor(&self) -> Option<f64> {
+        self.places.iter().map(|place| place.factor).try_fold(0.0_f64, |a, b| Some(a.max(b?)))
+    }
+}
+
 /// Judges one method's errors; `None` where it states nothing on `subject`.
 ///
 /// # Formula

@@ -253,6 +253,12 @@ impl Frame {
         Self::new(FrameParts { feet, ..self.parts.clone() })
     }
 
+    /// The same frame with its reports in other units.
+    pub fn with_report_units(mut self, units: ReportUnits) -> Self {
+        self.parts.report_units = units;
+        self
+    }
+
     /// Foot springs of `ratio` times 4 E I_c / h of the column each stands under, N m/rad.
     pub fn foot_springs(&self, ratio: f64) -> Vec<f64> {
         (0..self.lines()).map(|line| ratio * 4.0 * self.column_stiffness(0, line)).collect()

@@ -6,6 +6,7 @@
 //! Nothing here reads a clock, a disk or a terminal: all of it comes from the caller, so equal input gives equal
 //! bytes.
 
+pub mod compare;
 pub mod csv;
 mod dataset;
 mod document;

@@ -42,6 +42,11 @@ impl Law {
         Self::Overturning,
     ];
 
+    /// Whether the law adds up moments, not forces.
+    pub fn is_of_moments(self) -> bool {
+        matches!(self, Self::JointMoments | Self::MemberShears | Self::Overturning)
+    }
+
     /// The law in words.
     pub fn name(self) -> &'static str {
         match self {

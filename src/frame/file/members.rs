@@ -49,7 +49,8 @@ pub(super) fn columns(source: Source, tables: &[Spanned<ColumnsWritten>], grid: 
         let echo = Echo { what, typed };
         checked.push(Table { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
     }
-    let name = |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
+    let name =
+        |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
     assign(checked, "columns", name, warnings)
 }
 
@@ -100,7 +101,13 @@ fn column_size(
 ) -> Result<(Section, String), FileFault> {
     let keep_one = |second: &Spanned<Scalar>, name| {
         let first = table.rectangle.as_ref().map_or(0..0, Spanned::span);
-        conflict("rectangle", name, "a rectangle gives both inertia and area: keep it, or inertia with area", first, second.span())
+        conflict(
+            "rectangle",
+            name,
+            "a rectangle gives both inertia and area: keep it, or inertia with area",
+            first,
+            second.span(),
+        )
     };
     match (&table.rectangle, &table.inertia, &table.area) {
         (Some(_), Some(inertia), _) => Err(keep_one(inertia, "inertia")),
@@ -129,9 +136,13 @@ fn beam_size(
     warnings: &mut Vec<FileWarning>,
 ) -> Result<(Section, String), FileFault> {
     match (&table.rectangle, &table.inertia) {
-        (Some(first), Some(second)) => {
-            Err(conflict("rectangle", "inertia", "a rectangle gives the inertia: keep one of the two", first.span(), second.span()))
-        }
+        (Some(first), Some(second)) => Err(conflict(
+            "rectangle",
+            "inertia",
+            "a rectangle gives the inertia: keep one of the two",
+            first.span(),
+            second.span(),
+        )),
         (Some(rectangle), None) => {
             let ([width, depth], typed) = sides(source, rectangle, warnings)?;
             Ok((Section { inertia: width * depth * depth * depth / 12.0, area: None }, typed))
@@ -148,7 +159,13 @@ fn beam_size(
     }
 }
 
-fn conflict(first: &'static str, second: &'static str, help: &'static str, at: Range<usize>, span: Range<usize>) -> FileFault {
+fn conflict(
+    first: &'static str,
+    second: &'static str,
+    help: &'static str,
+    at: Range<usize>,
+    span: Range<usize>,
+) -> FileFault {
     FileFault::new(FaultKind::Conflict { first, second, help }, span).beside(at, "given here")
 }
 
@@ -210,7 +227,9 @@ fn assign(
         return Err(FileFault::new(kind, last.span.clone()));
     }
     let unused = |number: usize| !owners.contains(&Some(number));
-    warnings.extend(tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)));
+    warnings.extend(
+        tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)),
+    );
     let sections = owners.iter().flatten().map(|number| tables[*number].section).collect();
     Ok(Members { sections, echo: tables.into_iter().map(|table| table.echo).collect(), warnings })
 }

@@ -1,11 +1,11 @@
 //! Unknown sizes: the table `[sizes]` becomes a size model.
 
+use super::Echo;
 use super::fault::{FaultKind, FileFault};
 use super::scalar::{Scalar, Spread};
 use super::source::{Need, Source};
 use super::warning::{FileWarning, WarningKind};
 use super::written::{Maybe, SizesWritten, WithinWritten};
-use super::Echo;
 use crate::frame::MAX_STOREYS;
 use crate::frame::sizes::{Range, SizeModel, Within};
 use crate::units::Dimension;
@@ -17,7 +17,9 @@ const LARGEST_CHANGE: f64 = 1e60;
 /// Checks `[sizes]` for a frame of so many storeys.
 pub(super) fn model(source: Source, written: &SizesWritten, storeys: usize) -> Result<SizeModel, FileFault> {
     let default = SizeModel::default();
-    let ratio = |value: &Maybe<Spread>, default| read(source, value, Need::Positive, None).map(|range| range.unwrap_or(default));
+    let ratio = |value: &Maybe<Spread>, default| {
+        read(source, value, Need::Positive, None).map(|range| range.unwrap_or(default))
+    };
     let model = SizeModel {
         beam_to_column: ratio(&written.beam_to_column, default.beam_to_column)?,
         interior_to_end: ratio(&written.interior_to_end, default.interior_to_end)?,
@@ -37,7 +39,12 @@ pub(super) fn model(source: Source, written: &SizesWritten, storeys: usize) -> R
     Ok(model)
 }
 
-fn read(source: Source, value: &Maybe<Spread>, need: Need, unit: Option<Dimension>) -> Result<Option<Range>, FileFault> {
+fn read(
+    source: Source,
+    value: &Maybe<Spread>,
+    need: Need,
+    unit: Option<Dimension>,
+) -> Result<Option<Range>, FileFault> {
     value.as_ref().map(|value| source.spread(value, need, unit)).transpose()
 }
 
@@ -86,7 +93,10 @@ pub(super) fn one_statement(within: &Maybe<WithinWritten>, sizes: &Spanned<Sizes
 pub(super) fn growing(written: &SizesWritten, model: &SizeModel) -> Vec<FileWarning> {
     let tapers = [(&written.taper, model.taper), (&written.beam_taper, model.beam_taper)];
     let grown = tapers.into_iter().filter(|(_, range)| range.ends().1 > 1.0);
-    grown.filter_map(|(value, _)| value.as_ref()).map(|value| FileWarning::new(WarningKind::Growing, value.span())).collect()
+    grown
+        .filter_map(|(value, _)| value.as_ref())
+        .map(|value| FileWarning::new(WarningKind::Growing, value.span()))
+        .collect()
 }
 
 /// What the user typed in `[sizes]`, the defaults told as such.

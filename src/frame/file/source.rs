@@ -104,7 +104,10 @@ impl Source<'_> {
     fn number_at(&self, value: &Scalar, span: Range<usize>, need: Need) -> Result<f64, FileFault> {
         let Scalar::Number(number) = value else {
             let found = format!("the text \"{}\"", self.typed(span.clone()));
-            return Err(FileFault::new(FaultKind::WrongForm { found, expected: "a number without quotes".into() }, span));
+            return Err(FileFault::new(
+                FaultKind::WrongForm { found, expected: "a number without quotes".into() },
+                span,
+            ));
         };
         need.miss(*number).map_or(Ok(*number), |needed| Err(self.out_of_range(span, needed)))
     }
@@ -123,7 +126,12 @@ impl Source<'_> {
     }
 
     /// Position of a word in `allowed`.
-    pub fn choice(&self, typed: &str, span: Range<usize>, allowed: &'static [&'static str]) -> Result<usize, FileFault> {
+    pub fn choice(
+        &self,
+        typed: &str,
+        span: Range<usize>,
+        allowed: &'static [&'static str],
+    ) -> Result<usize, FileFault> {
         let position = allowed.iter().position(|word| *word == typed);
         position.ok_or_else(|| FileFault::new(FaultKind::Choice { typed: typed.into(), allowed }, span))
     }

@@ -34,7 +34,9 @@ pub(super) fn translate(error: &toml::de::Error, text: &str) -> FileFault {
     if let Some(rest) = message.strip_prefix("unknown field ") {
         return FileFault::new(unknown_key(rest), span);
     }
-    if let Some((found, expected)) = message.strip_prefix("invalid type: ").and_then(|rest| rest.split_once(", expected ")) {
+    if let Some((found, expected)) =
+        message.strip_prefix("invalid type: ").and_then(|rest| rest.split_once(", expected "))
+    {
         return FileFault::new(FaultKind::WrongForm { found: form(found), expected: due(expected) }, span);
     }
     syntax(message, text, span)
@@ -69,7 +71,8 @@ fn unknown_key(rest: &str) -> FaultKind {
         return FaultKind::WrongForm { found: "a date".into(), expected: "a text in quotes or a table".into() };
     }
     let known: Vec<_> = names.filter(|name| name != "area" || !rest.contains("`floors`")).collect();
-    let near = known.iter().min_by_key(|name| distance(name, &key)).filter(|name| distance(name, &key) <= 2 + key.len() / 6);
+    let near =
+        known.iter().min_by_key(|name| distance(name, &key)).filter(|name| distance(name, &key) <= 2 + key.len() / 6);
     let home = || HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| (*place).to_string());
     let suggestion = home().or_else(|| near.cloned());
     FaultKind::UnknownKey { key, suggestion, known }

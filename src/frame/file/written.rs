@@ -96,7 +96,8 @@ pub(super) struct EqualStoreys {
 }
 
 impl Expecting for EqualStoreys {
-    const EXPECTING: &str = "a list such as [\"4.8 m\", \"3.9 m\"] or a table such as { count = 8, height = \"3.9 m\", first = \"4.8 m\" }";
+    const EXPECTING: &str =
+        "a list such as [\"4.8 m\", \"3.9 m\"] or a table such as { count = 8, height = \"3.9 m\", first = \"4.8 m\" }";
 }
 
 /// The column feet.

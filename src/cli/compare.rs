@@ -1,0 +1,167 @@
+//! `swaybound compare`: the quick methods beside the exact answer of one frame.
+
+use super::failure::Failure;
+use super::{Common, Format, complain, output};
+use clap::{Args, ValueEnum};
+use std::path::{Path, PathBuf};
+use std::process::ExitCode;
+use std::time::{Instant, SystemTime};
+use swaybound::compare::verdict::Subject;
+use swaybound::compare::{Comparison, ExactChoice, Options, compare};
+use swaybound::frame::file::{FrameFile, parse};
+use swaybound::report::compare::{Findings, about, brief, charts, page, tables};
+use swaybound::report::figure::png;
+use swaybound::report::{Dataset, Figure, Input, Record, Run, command_line, csv, html, json, text, workbook};
+use swaybound::store::{ReportFolder, read_text};
+
+/// Pixels of a PNG per CSS pixel of the chart.
+const PNG_SCALE: f32 = 2.0;
+
+/// Run the quick methods beside the exact analysis of one frame and state every error
+#[derive(Debug, Args)]
+#[command(after_help = super::CAUTION)]
+pub(super) struct CompareArgs {
+    /// The frame file (TOML)
+    frame: PathBuf,
+    /// How far a value may be off before a method does not suffice, percent of the storey's largest exact value
+    #[arg(long, value_name = "PERCENT", default_value = "20", value_parser = tolerance)]
+    tolerance: f64,
+    /// The exact analysis that errors are measured by
+    #[arg(long, value_enum, default_value_t = Exact::Auto)]
+    exact: Exact,
+    /// Exit with 1 where no quick method meets the tolerance for column design moments
+    #[arg(long)]
+    require: bool,
+    /// Write the charts as PNG too
+    #[arg(long)]
+    png: bool,
+    #[command(flatten)]
+    common: Common,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+enum Exact {
+    /// With column axial strain for tall or slender frames whose columns have areas
+    Auto,
+    /// Inextensible members
+    SlopeDeflection,
+    /// With column axial strain
+    Stiffness,
+}
+
+impl Exact {
+    fn choice(self) -> ExactChoice {
+        match self {
+            Self::Auto => ExactChoice::Automatic,
+            Self::SlopeDeflection => ExactChoice::SlopeDeflection,
+            Self::Stiffness => ExactChoice::Stiffness,
+        }
+    }
+
+    fn name(self) -> &'static str {
+        match self {
+            Self::Auto => "auto",
+            Self::SlopeDeflection => "slope-deflection",
+            Self::Stiffness => "stiffness",
+        }
+    }
+}
+
+fn tolerance(text: &str) -> Result<f64, String> {
+    let number = text.trim().trim_end_matches('%').trim_end();
+    match number.parse::<f64>() {
+        Ok(value) if value > 0.0 && value < 100.0 => Ok(value),
+        _ => Err("give a percentage over 0 and under 100, such as 20 or 20%".into()),
+    }
+}
+
+/// Runs the command.
+pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
+    let (start, clock) = (SystemTime::now(), Instant::now());
+    let text = read_text(&args.frame)?;
+    let file = read_frame(args, &text)?;
+    let options = Options { tolerance: args.tolerance, exact: args.exact.choice() };
+    let unsolvable = |fault| Failure::Unsolvable { fault, path: args.frame.clone() };
+    let comparison = compare(&file.frame, options).map_err(unsolvable)?;
+    let warnings: Vec<_> = comparison.warnings(&file.frame).iter().map(ToString::to_string).collect();
+    if !args.common.quiet {
+        warn(args, &file, &text, &warnings);
+    }
+    let findings = Findings { file: &file, comparison: &comparison, warnings: &warnings };
+    let record = record(args, &text, &findings);
+    let tables = tables(&file.frame, &comparison);
+    let host = format!("{} {}", std::env::consts::OS, std::env::consts::ARCH);
+    let dataset = Dataset::new(record, Run::new(start, clock.elapsed(), 1, host), tables)?;
+    write_report(args, &findings, &dataset)?;
+    output::results(&standard_output(args.common.format, &findings, &dataset)?)?;
+    let met = comparison.some_method_meets(Subject::ColumnMoments);
+    Ok(if args.require && !met { ExitCode::from(1) } else { ExitCode::SUCCESS })
+}
+
+fn read_frame(args: &CompareArgs, text: &str) -> Result<FrameFile, Failure> {
+    let fault = |fault| Failure::File { fault: Box::new(fault), path: args.frame.clone(), text: text.into() };
+    let file = parse(text).map_err(fault)?;
+    Ok(match args.common.units {
+        Some(units) => FrameFile { frame: file.frame.with_report_units(units.into()), ..file },
+        None => file,
+    })
+}
+
+fn warn(args: &CompareArgs, file: &FrameFile, text: &str, warnings: &[String]) {
+    let path = args.frame.display().to_string();
+    for warning in &file.warnings {
+        output::note(&complain::render_warning(warning, &path, text, true));
+    }
+    for warning in warnings {
+        output::note(&complain::plain_warning(&format!("{path}: {warning}")));
+    }
+}
+
+fn record(args: &CompareArgs, text: &str, findings: &Findings) -> Record {
+    let words = std::iter::once("swaybound".to_string()).chain(std::env::args().skip(1));
+    let frame = findings.frame();
+    let comparison: &Comparison = findings.comparison;
+    Record::new("compare", command_line(words))
+        .with_input(Input::new(args.frame.display().to_string(), text))
+        .with_option("tolerance_percent", args.tolerance)
+        .with_option("exact", args.exact.name())
+        .with_option("units", frame.report_units().name())
+        .with_option("require", args.require)
+        .with_count("storeys", frame.storeys())
+        .with_count("bays", frame.bays())
+        .with_count("methods", comparison.responses().count())
+}
+
+fn write_report(args: &CompareArgs, findings: &Findings, dataset: &Dataset) -> Result<(), Failure> {
+    let place = args.common.out.clone().unwrap_or_else(|| output::usual_place(&args.frame, "compare"));
+    let folder = ReportFolder::start(&place, &args.frame)?;
+    for table in dataset.tables() {
+        folder.write(&format!("{}.csv", table.name()), csv::write(table).as_bytes())?;
+    }
+    folder.write("result.json", json::write(dataset)?.as_bytes())?;
+    folder.write("record.json", json::record(dataset)?.as_bytes())?;
+    let charts = charts(findings);
+    for chart in &charts {
+        folder.write(&format!("{}.svg", chart.name), chart.svg.as_bytes())?;
+        if args.png {
+            folder.write(&format!("{}.png", chart.name), &png(&chart.svg, PNG_SCALE)?)?;
+        }
+    }
+    let figures: Vec<Figure> = charts.iter().map(|chart| chart.figure()).collect();
+    let page = page(findings, dataset.record(), figures);
+    folder.write("report.html", html::write(&page).as_bytes())?;
+    folder.write("results.xlsx", &workbook::write(dataset, &about(findings))?)?;
+    folder.finish()?;
+    if !args.common.quiet {
+        output::note(&format!("report: {}", Path::new(&place).join("report.html").display()));
+    }
+    Ok(())
+}
+
+fn standard_output(format: Format, findings: &Findings, dataset: &Dataset) -> Result<String, Failure> {
+    Ok(match format {
+        Format::Text => text::write(&brief(findings), text::Options { colour: true, ..text::Options::default() }),
+        Format::Csv => dataset.table("values").map(csv::write).unwrap_or_default(),
+        Format::Json => json::write(dataset)?,
+    })
+}

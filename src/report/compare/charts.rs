@@ -1,0 +1,239 @@
+//! The charts of a comparison.
+
+use super::{Findings, comparison_name, summary, words};
+use crate::compare::errors::{Flag, ValueError};
+use crate::compare::verdict::Subject;
+use crate::frame::line_name;
+use crate::report::figure::{
+    self, Cell, Elevation, EndMoments, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series, colour_limit,
+};
+use crate::report::number::signed_percent;
+use crate::report::{Figure, say};
+use crate::response::{Member, Quantity, Response};
+use crate::units::Unit;
+
+/// The most column lines that get a panel of their own.
+const MOST_PANELS: usize = 12;
+/// Percent, for shares of one.
+const PERCENT: Unit = Unit { symbol: "%", si: 0.01 };
+
+/// A finished chart.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Chart {
+    /// Name of its file, without ending.
+    pub name: String,
+    /// What it shows.
+    pub title: String,
+    /// What is to be seen in it.
+    pub caption: String,
+    /// The drawing.
+    pub svg: String,
+    /// Width at which its letters have their true size, CSS pixels.
+    pub width: f64,
+}
+
+impl Chart {
+    /// The chart as a figure of the page.
+    pub fn figure(&self) -> Figure {
+        Figure::new(&self.name, &self.title, &self.svg, self.width)
+            .caption(say(&self.caption))
+            .description(&self.caption)
+            .file(format!("{}.svg", self.name))
+    }
+}
+
+/// Every chart: elevations by method, column moments up the height, shares of storey shear, the moment diagram.
+pub fn charts(findings: &Findings) -> Vec<Chart> {
+    let mut charts = elevations(findings);
+    charts.push(column_moments(findings));
+    charts.push(shear_shares(findings));
+    charts.push(moment_diagram(findings));
+    charts
+}
+
+fn chart(name: String, title: &str, caption: &str, figure: &dyn figure::Figure) -> Chart {
+    let svg = figure.svg();
+    let notes = svg.notes().iter().fold(caption.to_string(), |text, note| format!("{text} {note}"));
+    Chart { name, title: title.into(), caption: notes, svg: svg.as_str().into(), width: svg.width() }
+}
+
+fn elevations(findings: &Findings) -> Vec<Chart> {
+    let comparison = findings.comparison;
+    let design = |error: &&ValueError| error.quantity == Quantity::DesignMoment;
+    let all = summary::quick_errors(comparison).flat_map(|(_, errors)| errors.iter().filter(design));
+    let limit = colour_limit(all.filter_map(|error| error.storey_error_percent));
+    let one = |(method, errors): (&'static str, &Vec<ValueError>)| {
+        let design: Vec<_> = errors.iter().filter(design).collect();
+        let cells = |kind: &str| {
+            design.iter().filter(|error| error.member.kind() == kind).map(|error| cell(error)).collect::<Vec<_>>()
+        };
+        let name = comparison_name(comparison, method);
+        let title = format!("Error of design moments: {name}");
+        let caption = elevation_caption(&design);
+        let figure = Elevation {
+            title: title.clone(),
+            description: caption.clone(),
+            grid: Grid::of(findings.frame()),
+            columns: cells("column"),
+            beams: cells("beam"),
+            limit,
+            measure: "error of the design moment, % of the storey's largest exact value".into(),
+        };
+        chart(format!("elevation-{method}"), &title, &caption, &figure)
+    };
+    summary::quick_errors(comparison).map(one).collect()
+}
+
+fn cell(error: &ValueError) -> Cell {
+    match error.storey_error_percent {
+        _ if error.flags.contains(&Flag::NearZero) => Cell::NearZero,
+        Some(percent) => Cell::Error(percent),
+        None => Cell::Missing,
+    }
+}
+
+/// The shortest and the most generous member in words.
+fn elevation_caption(design: &[&ValueError]) -> String {
+    let percents = || design.iter().filter_map(|error| Some((error.storey_error_percent?, error.member)));
+    let low = percents().min_by(|a, b| a.0.total_cmp(&b.0));
+    let high = percents().max_by(|a, b| a.0.total_cmp(&b.0));
+    match (low, high) {
+        (Some(low), Some(high)) => format!(
+            "Shortest: {} ({}); most over: {} ({}).",
+            words::member(low.1),
+            signed_percent(low.0, 0),
+            words::member(high.1),
+            signed_percent(high.0, 0)
+        ),
+        _ => String::new(),
+    }
+}
+
+/// The column lines that get a panel: all, or the end lines and those with the largest errors.
+fn panel_lines(findings: &Findings) -> Vec<usize> {
+    let frame = findings.frame();
+    let mut lines: Vec<_> = (0..frame.lines()).collect();
+    if lines.len() <= MOST_PANELS {
+        return lines;
+    }
+    let worst = |line: usize| {
+        let errors = summary::quick_errors(findings.comparison).flat_map(|(_, errors)| errors);
+        let on_line = errors.filter(|error| matches!(error.member, Member::Column { line: own, .. } if own == line));
+        let of_moments = on_line.filter(|error| error.quantity == Quantity::DesignMoment);
+        of_moments.filter_map(|error| error.storey_error_percent).map(f64::abs).fold(0.0, f64::max)
+    };
+    let sizes: Vec<_> =
+        lines.iter().map(|line| if frame.is_end_line(*line) { f64::INFINITY } else { worst(*line) }).collect();
+    lines.sort_by(|a, b| sizes[*b].total_cmp(&sizes[*a]).then(a.cmp(b)));
+    lines.truncate(MOST_PANELS);
+    lines.sort_unstable();
+    lines
+}
+
+/// The exact answer and the quick ones.
+fn drawn<'a>(findings: &Findings<'a>) -> Vec<&'a Response> {
+    let quick = findings.comparison.quick.iter().filter_map(|quick| quick.response.as_ref());
+    std::iter::once(findings.comparison.reference()).chain(quick).collect()
+}
+
+fn panels(findings: &Findings, value: &dyn Fn(&Response, usize, usize) -> f64) -> Vec<Panel> {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let series = |response: &Response, line: usize| Series {
+        method: response.method.into(),
+        name: comparison_name(comparison, response.method),
+        values: (0..frame.storeys()).map(|storey| value(response, storey, line)).collect(),
+    };
+    let panel = |line: usize| Panel {
+        name: format!("line {}", line_name(line)),
+        series: drawn(findings).into_iter().map(|response| series(response, line)).collect(),
+    };
+    panel_lines(findings).into_iter().map(panel).collect()
+}
+
+/// What is said where not every line has a panel.
+fn left_out(findings: &Findings) -> &'static str {
+    if findings.frame().lines() > MOST_PANELS {
+        " The end lines and the lines with the largest errors are shown."
+    } else {
+        ""
+    }
+}
+
+fn column_moments(findings: &Findings) -> Chart {
+    let title = "Column design moments up the height";
+    let comparison = findings.comparison;
+    let worst = comparison.ranked(Subject::ColumnMoments).first().map_or_else(String::new, |best| {
+        format!(
+            "Least short: {}, {} in {}.",
+            comparison_name(comparison, best.method),
+            signed_percent(best.lowest.percent, 0),
+            words::member(best.lowest.member)
+        )
+    });
+    let caption = format!("{worst}{}", left_out(findings));
+    let figure = Profiles {
+        title: title.into(),
+        description: caption.clone(),
+        quantity: "column design moment".into(),
+        unit: findings.frame().report_units().moment(),
+        storeys: findings.frame().parts().storeys.clone(),
+        panels: panels(findings, &|response, storey, line| response.column(storey, line).design_moment()),
+    };
+    chart("column-moments".into(), title, &caption, &figure)
+}
+
+fn shear_shares(findings: &Findings) -> Chart {
+    let frame = findings.frame();
+    let title = "Share of each storey's shear by column line";
+    let caption = format!("The shares of a storey add up to 100 %.{}", left_out(findings));
+    let share = |response: &Response, storey: usize, line: usize| {
+        response.column(storey, line).shear / frame.storey_shear(storey)
+    };
+    let figure = Profiles {
+        title: title.into(),
+        description: caption.clone(),
+        quantity: "share of the storey shear".into(),
+        unit: PERCENT,
+        storeys: frame.parts().storeys.clone(),
+        panels: panels(findings, &share),
+    };
+    chart("shear-shares".into(), title, &caption, &figure)
+}
+
+fn end_moments(findings: &Findings, response: &Response) -> EndMoments {
+    let storeys = || 0..findings.frame().storeys();
+    let columns = storeys().flat_map(|storey| response.storey_columns(storey)).map(|column| [column.foot, column.head]);
+    let beams = storeys().flat_map(|floor| response.floor_beams(floor)).map(|beam| [beam.left, beam.right]);
+    EndMoments { columns: columns.collect(), beams: beams.collect() }
+}
+
+fn moment_diagram(findings: &Findings) -> Chart {
+    let comparison = findings.comparison;
+    let reference = comparison.reference();
+    let name = comparison_name(comparison, reference.method);
+    let title = "Moment diagram under the lateral forces";
+    let best = comparison.ranked(Subject::ColumnMoments).first().map(|verdict| verdict.method);
+    let quick = comparison.quick.iter().filter_map(|quick| quick.response.as_ref());
+    let outline = quick.into_iter().find(|response| Some(response.method) == best);
+    let caption = match outline {
+        Some(response) => format!(
+            "Drawn on the side in tension. Filled: {name}. Outline: {}, the least short for column design moments.",
+            comparison_name(comparison, response.method)
+        ),
+        None => format!("Drawn on the side in tension: {name}."),
+    };
+    let figure = MomentDiagram {
+        title: title.into(),
+        description: caption.clone(),
+        grid: Grid::of(findings.frame()),
+        exact_name: name,
+        exact: end_moments(findings, reference),
+        quick: outline.map(|response| OutlineMoments {
+            method: response.method.into(),
+            name: comparison_name(comparison, response.method),
+            moments: end_moments(findings, response),
+        }),
+        unit: findings.frame().report_units().moment(),
+    };
+    chart("moment-diagram".into(), title, &caption, &figure)
+}

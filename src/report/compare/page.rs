@@ -1,0 +1,366 @@
+//! The page of a comparison: verdict first, method sheet and record last.
+
+use super::summary::{by_storey, short_name};
+use super::{Findings, comparison_name, feet_table, sheet, words};
+use crate::compare::verdict::{Extreme, Subject, Verdict};
+use crate::frame::SizeSource;
+use crate::report::number::{Form, decimals, signed_percent};
+use crate::report::{Document, Figure, Record, Sentence, State, TableBlock, TableCell, say};
+use crate::response::statics::{Law, Statics};
+use crate::response::{Quantity, Response};
+
+/// The most rows of a table by storey on the page.
+const MOST_ROWS: usize = 60;
+/// The most columns (members) of a frame whose hand calculation is printed in full.
+const SHEET_LIMIT: usize = 1000;
+
+/// Builds the page. `figures` stand in the order of [`super::charts`].
+pub fn page(findings: &Findings, record: &Record, figures: Vec<Figure>) -> Document {
+    let frame = findings.frame();
+    let mut report = Document::new(frame.title());
+    report.subtitle(words::outline(frame));
+    if let Some(notice) = words::size_notice(frame) {
+        report.paragraph(notice);
+    }
+    opening(&mut report, findings);
+    verdicts(&mut report, findings);
+    charts(&mut report, figures);
+    storeys(&mut report, findings);
+    statics(&mut report, findings);
+    described(&mut report, findings);
+    method_sheet(&mut report, findings);
+    closing(&mut report, findings, record);
+    report
+}
+
+fn opening(report: &mut Document, findings: &Findings) {
+    let comparison = findings.comparison;
+    report.section("Verdict");
+    for (state, sentence) in Subject::ALL.into_iter().filter_map(|subject| words::finding(comparison, subject)) {
+        report.verdict(state, sentence.then(" See ").refer("ranking").then("."));
+    }
+    report.paragraph(words::measure(findings.frame(), comparison));
+    report.table(ranking(findings));
+    let cautions = findings.cautions_of_methods();
+    if !cautions.is_empty() {
+        report.caution("Read with care", cautions);
+    }
+}
+
+/// One row per quick method: lowest and highest error on every subject.
+fn ranking(findings: &Findings) -> TableBlock {
+    let comparison = findings.comparison;
+    let mut table = TableBlock::new("ranking", "Quick methods: lowest and highest error of any member").name("method");
+    for subject in Subject::ALL {
+        table = table.under(subject.name()).percent("lowest", 0).percent("highest", 0).number("multiply by", "", 3);
+    }
+    for quick in &comparison.quick {
+        let id = quick.entry.info.id;
+        let mut cells = vec![TableCell::from(comparison_name(comparison, id))];
+        for subject in Subject::ALL {
+            let found = comparison.verdicts.iter().find(|verdict| verdict.method == id && verdict.subject == subject);
+            cells.extend(found.map_or_else(
+                || vec![TableCell::blank(); 3],
+                |verdict| extremes(comparison.options.tolerance, verdict),
+            ));
+        }
+        table.row(cells);
+    }
+    table.note(
+        "“Multiply by” is the largest |exact| / |quick| of any member: with it no member of this frame would be short. \
+         It multiplies the lateral part only.",
+    );
+    judged(table, comparison.options.tolerance)
+}
+
+fn extremes(tolerance: f64, verdict: &Verdict) -> Vec<TableCell> {
+    let factor = verdict.largest_factor().map_or_else(|| TableCell::from("none"), TableCell::from);
+    vec![low(tolerance, verdict.lowest), high(tolerance, verdict.highest), factor]
+}
+
+fn low(tolerance: f64, extreme: Extreme) -> TableCell {
+    TableCell::from(extreme.percent).marked((extreme.percent < -tolerance).then_some(State::FallsShort))
+}
+
+fn high(tolerance: f64, extreme: Extreme) -> TableCell {
+    TableCell::from(extreme.percent).marked((extreme.percent > tolerance).then_some(State::SafeSide))
+}
+
+fn judged(mut table: TableBlock, tolerance: f64) -> TableBlock {
+    table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
+    table.meaning(State::SafeSide, format!("over by more than {tolerance} %"));
+    table
+}
+
+fn verdicts(report: &mut Document, findings: &Findings) {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    report.section("Where each method holds");
+    for subject in Subject::ALL {
+        report.subsection(words::capital(subject.name()));
+        for verdict in comparison.ranked(subject) {
+            report.verdict(words::mark(verdict.state), words::verdict(comparison, verdict, frame.report_units()));
+        }
+        report.table(place_table(findings, subject));
+    }
+    if let Some(table) = feet_table(comparison) {
+        report.subsection("If the fixed feet turn a little");
+        report.table(judged(table, comparison.options.tolerance));
+    }
+}
+
+/// One row per place: lowest and highest error and factor of every method.
+fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
+    let comparison = findings.comparison;
+    let verdicts: Vec<_> = comparison.verdicts.iter().filter(|verdict| verdict.subject == subject).collect();
+    let key = format!("places-{}", subject.name().replace(' ', "-"));
+    let caption = format!("{}: lowest and highest error by place", words::capital(subject.name()));
+    let mut table = TableBlock::new(key, caption.as_str()).name("place").count("members");
+    for verdict in &verdicts {
+        let head = short_name(verdict.method);
+        table = table.under(head).percent("lowest", 0).percent("highest", 0).number("factor", "", 3);
+    }
+    let places = verdicts.first().map_or(0, |verdict| verdict.places.len());
+    for index in (0..places).rev() {
+        let first = &verdicts[0].places[index];
+        let mut cells = vec![TableCell::from(words::capital(&first.place.words())), first.members.into()];
+        for verdict in &verdicts {
+            let place = &verdict.places[index];
+            let tolerance = comparison.options.tolerance;
+            let factor = place.factor.map_or_else(|| TableCell::from("none"), TableCell::from);
+            cells.extend([low(tolerance, place.lowest), high(tolerance, place.highest), factor]);
+        }
+        table.row(cells);
+    }
+    judged(table, comparison.options.tolerance)
+}
+
+fn charts(report: &mut Document, figures: Vec<Figure>) {
+    report.section("Charts");
+    for figure in figures {
+        report.figure(figure);
+    }
+}
+
+fn storeys(report: &mut Document, findings: &Findings) {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    report.section("Storey by storey");
+    for subject in Subject::ALL {
+        report.table(by_storey(frame, comparison, subject, MOST_ROWS));
+    }
+    if let Some(table) = drift_table(findings) {
+        report.table(table);
+    }
+    report.paragraph(
+        say("Every value of every member stands in ")
+            .code("values.csv")
+            .then(", every error in ")
+            .code("errors.csv")
+            .then("; both are sheets of ")
+            .code("results.xlsx")
+            .then("."),
+    );
+}
+
+/// Exact drifts; `None` where sizes are only relative.
+fn drift_table(findings: &Findings) -> Option<TableBlock> {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let unit = Quantity::Drift.unit(frame.report_units());
+    comparison.reference().movement(0)?;
+    let mut table = TableBlock::new("drift", "Storey drift and sway of the exact analyses").name("storey");
+    for response in &comparison.exact {
+        table = table.under(response.method).number("drift", unit.symbol, 3).text("height / drift").number(
+            "sway",
+            unit.symbol,
+            3,
+        );
+    }
+    for storey in (0..frame.storeys()).rev() {
+        let mut cells = vec![TableCell::from((storey + 1).to_string())];
+        for response in &comparison.exact {
+            let Some(movement) = response.movement(storey) else { continue };
+            let ratio = frame.storey_height(storey) / movement.drift.abs();
+            cells.extend([
+                unit.from_si(movement.drift).into(),
+                TableCell::from(decimals(ratio, 0)),
+                unit.from_si(movement.sway).into(),
+            ]);
+        }
+        table.row(cells);
+    }
+    table.note(
+        "The quick methods of this comparison give no drifts. A drift that is too small is on the unsafe side for drift \
+         limits; one that is too large lengthens the period.",
+    );
+    Some(table)
+}
+
+fn statics(report: &mut Document, findings: &Findings) {
+    let comparison = findings.comparison;
+    report.section("Statics");
+    let close = comparison.statics.iter().all(|(_, statics)| statics.closes());
+    let (state, text) = match close {
+        true => (State::Suffices, "Statics close for every method: what is left over, see "),
+        false => (State::FallsShort, "Statics do not close: do not use these numbers. What is left over, see "),
+    };
+    let word = if close { "closes" } else { "does not close" };
+    report.verdict_in_words(state, word, say(text).refer("equilibrium").then("."));
+    report.table(equilibrium(findings));
+    for (method, statics) in &comparison.statics {
+        let name = words::capital(&comparison_name(comparison, method));
+        report.details(format!("Storey sums: {name}"), |inner| {
+            inner.table(storey_sums(findings, method, statics));
+        });
+    }
+}
+
+/// What every law leaves over, by method.
+fn equilibrium(findings: &Findings) -> TableBlock {
+    let comparison = findings.comparison;
+    let mut table =
+        TableBlock::new("equilibrium", "Equilibrium: the largest sum that should be zero, relative").name("law");
+    table = comparison.statics.iter().fold(table, |table, (method, _)| table.number(short_name(method), "", 1));
+    for law in Law::ALL {
+        let cells = comparison.statics.iter().map(|(_, statics)| match statics.worst(law) {
+            Some(worst) if worst.relative.abs() < 1e-12 => TableCell::from("< 10⁻¹²"),
+            Some(worst) => worst.relative.abs().into(),
+            None => TableCell::blank(),
+        });
+        table.row(std::iter::once(TableCell::from(law.name())).chain(cells));
+    }
+    table.note(
+        "Over the frame's largest moment, storey shear, axial force or overturning moment. Every quick method here \
+         satisfies statics; statics alone say nothing about how it shares the forces out.",
+    );
+    table
+}
+
+fn storey_sums(findings: &Findings, method: &str, statics: &Statics) -> TableBlock {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let (force, moment) = (frame.report_units().force(), frame.report_units().moment());
+    let caption = format!("Storey sums, {}", comparison_name(comparison, method));
+    let mut table = TableBlock::new(format!("statics-{method}"), caption.as_str())
+        .name("storey")
+        .under("shear")
+        .number("applied", force.symbol, 4)
+        .number("sum of columns", force.symbol, 4)
+        .under("overturning at the storey's foot")
+        .number("applied", moment.symbol, 4)
+        .number("by column moments", moment.symbol, 4)
+        .number("by axial forces", moment.symbol, 4)
+        .number("left over", moment.symbol, 4)
+        .under("")
+        .number("sum of axial forces", force.symbol, 4)
+        .number("largest joint sum", moment.symbol, 4);
+    let tidy = |value: f64, scale: f64| if value.abs() < 1e-12 * scale { 0.0 } else { value };
+    let (largest_force, largest_moment) = (frame.storey_shear(0), frame.overturning_above(0.0));
+    for (storey, sums) in statics.storeys.iter().enumerate().rev() {
+        let left_over = sums.overturning_applied - sums.by_moments - sums.by_axial;
+        table.row([
+            TableCell::from((storey + 1).to_string()),
+            force.from_si(sums.shear_applied).into(),
+            force.from_si(sums.shear_found).into(),
+            moment.from_si(sums.overturning_applied).into(),
+            moment.from_si(sums.by_moments).into(),
+            moment.from_si(sums.by_axial).into(),
+            moment.from_si(tidy(left_over, largest_moment)).into(),
+            force.from_si(tidy(sums.axial_sum, largest_force)).into(),
+            moment.from_si(tidy(sums.joint_moment, largest_moment)).into(),
+        ]);
+    }
+    table
+}
+
+fn described(report: &mut Document, findings: &Findings) {
+    report.section("The frame as typed");
+    let pairs = findings.file.echo.iter().map(|echo| (echo.what.clone(), say(echo.typed.as_str())));
+    report.pairs(pairs);
+    if findings.frame().size_source() == SizeSource::Stated {
+        report.paragraph("Inertias enter with their stiffness factors; areas do not carry them.");
+    }
+}
+
+fn method_sheet(report: &mut Document, findings: &Findings) {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    report.page_break();
+    report.section("Method sheet");
+    report.paragraph(
+        "The hand calculations with this frame's numbers, in the order a checker would take them. Moments and shears \
+         are positive in their usual sense under load to the right; axial forces are positive in tension.",
+    );
+    if frame.storeys() * frame.lines() > SHEET_LIMIT {
+        report.paragraph(
+            say(format!("This frame has more than {SHEET_LIMIT} columns: the calculation is not printed; all its values stand in "))
+                .code("values.csv")
+                .then("."),
+        );
+        return;
+    }
+    for quick in &comparison.quick {
+        let Some(response) = &quick.response else { continue };
+        let info = quick.entry.info;
+        report.details(format!("{}: line by line", words::capital(info.name)), |inner| {
+            inner.paragraph(say(format!("Source: {}.", info.source)));
+            inner.list(info.assumptions.iter().copied());
+            sheet::add(
+                inner,
+                &format!("sheet-{}", info.id),
+                &(quick.entry.worksheet)(frame, response),
+                frame.report_units(),
+            );
+        });
+    }
+}
+
+fn closing(report: &mut Document, findings: &Findings, record: &Record) {
+    report.section("Assumptions");
+    report.list(assumptions(findings));
+    report.section("Cautions");
+    report.caution("Before these numbers are used", words::cautions());
+    report.section("Record");
+    report.record(record);
+    report.footer(
+        "Lateral part only, for preliminary sizing and checking; not a design. The licensed engineer and the code in \
+         force decide.",
+    );
+}
+
+fn assumptions(findings: &Findings) -> Vec<Sentence> {
+    let comparison = findings.comparison;
+    let mut list = vec![
+        say(
+            "Plane frame, linear elastic, first order, no shear deformation; members run from joint centre to joint centre.",
+        ),
+        say("Floors are rigid in their own plane: one sway per floor."),
+        say("slope-deflection: inextensible members. stiffness: columns stretch and shorten as well."),
+        say("Loads act to the right at the floors; the mirror case is the mirror image."),
+        say("Design moment: the larger end moment of a member."),
+        say("Places: ground, second, middle, below the top and top storey, by end and interior; in low frames ground \
+             wins, then the top, then the second."),
+    ];
+    list.extend(comparison.exact.iter().filter_map(|response: &Response| {
+        let residual = Form::Significant(2).show(response.residual()?);
+        Some(say(format!("{}: relative residual {residual}.", comparison_name(comparison, response.method))))
+    }));
+    if let [first, second] = &comparison.exact[..] {
+        list.extend(strain_effect(findings, first, second));
+    }
+    list
+}
+
+/// How far the two exact analyses lie apart.
+fn strain_effect(findings: &Findings, first: &Response, second: &Response) -> Option<Sentence> {
+    let (_, errors) = findings.comparison.errors.iter().find(|(method, _)| *method == second.method)?;
+    let of_columns =
+        errors.iter().filter(|error| error.quantity == Quantity::DesignMoment && error.member.kind() == "column");
+    let farthest = of_columns
+        .filter_map(|error| Some((error, error.storey_error_percent?)))
+        .max_by(|a, b| a.1.abs().total_cmp(&b.1.abs()))?;
+    let (error, percent) = farthest;
+    Some(say(format!(
+        "Column axial strain: {} differs from {} by up to {} of a storey's largest column design moment ({}).",
+        second.method,
+        first.method,
+        signed_percent(percent, 1),
+        words::member(error.member)
+    )))
+}

@@ -1,0 +1,73 @@
+//! Hand calculations as blocks of the page.
+
+use crate::report::{Align, Column, Document, Form, TableBlock, TableCell};
+use crate::response::{Amount, Cell, Step, Worksheet};
+use crate::units::{ReportUnits, Unit};
+
+/// Adds the steps of a hand calculation; `key` begins the keys of its tables.
+pub(super) fn add(report: &mut Document, key: &str, worksheet: &Worksheet, units: ReportUnits) {
+    for (index, step) in worksheet.steps.iter().enumerate() {
+        report.minor(format!("{}. {}", index + 1, step.title));
+        report.paragraph(step.rule.as_str());
+        report.table(table(&format!("{key}-{}", index + 1), step, units));
+    }
+}
+
+fn table(key: &str, step: &Step, units: ReportUnits) -> TableBlock {
+    let shared = shared_unit(step, units);
+    let caption = if shared.is_empty() { step.title.clone() } else { format!("{}, {shared}", step.title) };
+    let mut table = TableBlock::new(key, caption.as_str());
+    for (index, column) in step.columns.iter().enumerate() {
+        let unit = unit(column.amount, units);
+        let symbol = if unit.symbol == shared { "" } else { unit.symbol };
+        let (align, form) = form(column.amount);
+        table = table.column(Column {
+            head: column.head.clone(),
+            unit: symbol.into(),
+            under: String::new(),
+            align,
+            form,
+            key: index == 0,
+        });
+    }
+    for row in &step.rows {
+        table.row(row.iter().zip(&step.columns).map(|(cell, column)| match cell {
+            Cell::Name(name) => TableCell::from(name.as_str()),
+            Cell::Number(value) => unit(column.amount, units).from_si(*value).into(),
+            Cell::Blank => TableCell::blank(),
+        }));
+    }
+    table
+}
+
+/// The unit of all numbers of a step, where they have one in common.
+fn shared_unit(step: &Step, units: ReportUnits) -> &'static str {
+    let mut symbols =
+        step.columns.iter().filter(|column| column.amount != Amount::Name).map(|c| unit(c.amount, units).symbol);
+    let first = symbols.next().unwrap_or_default();
+    if symbols.all(|symbol| symbol == first) { first } else { "" }
+}
+
+fn unit(amount: Amount, units: ReportUnits) -> Unit {
+    let length = units.length();
+    match (amount, units) {
+        (Amount::Name | Amount::Ratio, _) => Unit { symbol: "", si: 1.0 },
+        (Amount::Length, _) => length,
+        (Amount::Force, _) => units.force(),
+        (Amount::Moment, _) => units.moment(),
+        (Amount::Area, ReportUnits::Metric) => Unit { symbol: "m²", si: 1.0 },
+        (Amount::Area, ReportUnits::Us) => Unit { symbol: "ft²", si: length.si * length.si },
+        (Amount::PerLength, ReportUnits::Metric) => Unit { symbol: "1/m", si: 1.0 },
+        (Amount::PerLength, ReportUnits::Us) => Unit { symbol: "1/ft", si: 1.0 / length.si },
+    }
+}
+
+/// A hand calculation is followed digit by digit, so it shows one figure more than results do.
+fn form(amount: Amount) -> (Align, Form) {
+    match amount {
+        Amount::Name => (Align::Left, Form::Whole),
+        Amount::Ratio | Amount::PerLength | Amount::Area => (Align::Right, Form::Significant(4)),
+        Amount::Length => (Align::Right, Form::Decimals(3)),
+        Amount::Force | Amount::Moment => (Align::Right, Form::Significant(4)),
+    }
+}
