@@ -8,4 +8,4 @@ pub mod places;
 mod run;
 pub mod verdict;
 
-pub use run::{Comparison, ExactChoice, FootLine, Options, Quick, ResultWarning, compare};
+pub use run::{Comparison, ExactChoice, FOOT_RATIOS, FootLine, Options, Quick, ResultWarning, compare};

@@ -69,7 +69,7 @@ pub struct Quick {
     pub response: Option<Response>,
 }
 
-/// How the worst shortfall of a method moves when fixed feet turn a little.
+/// How the worst shortfall of a method in the two lowest storeys moves when fixed feet turn a little.
 #[derive(Debug, Clone, PartialEq)]
 pub struct FootLine {
     /// Name of the method in files.
@@ -190,7 +190,7 @@ fn evaluate(
     let verdicts: Vec<_> = judged.collect();
     let responses = exact.iter().chain(quick.iter().filter_map(|quick| quick.response.as_ref()));
     let statics = responses.map(|response| (response.method, statics::check(frame, response))).collect();
-    let feet = foot_lines(frame, options, &exact[0], &quick, &verdicts);
+    let feet = foot_lines(frame, options, &exact[0], &quick);
     Comparison {
         options,
         no_stiffness,
@@ -204,14 +204,8 @@ fn evaluate(
     }
 }
 
-/// The second line of a fixed-foot report: the same exact analysis on feet that turn a little.
-fn foot_lines(
-    frame: &Frame,
-    options: Options,
-    exact: &Response,
-    quick: &[Quick],
-    verdicts: &[Verdict],
-) -> Vec<FootLine> {
+/// The second line of a fixed-foot report: the lowest storeys against feet that turn a little.
+fn foot_lines(frame: &Frame, options: Options, exact: &Response, quick: &[Quick]) -> Vec<FootLine> {
     if *frame.feet() != Feet::Fixed {
         return Vec::new();
     }
@@ -221,14 +215,26 @@ fn foot_lines(
         analyse(&frame).ok()
     });
     let [Some(stiff), Some(soft)] = &sprung else { return Vec::new() };
-    let lowest = |verdict: &Verdict, exact: &Response| {
-        let response = quick.iter().find(|quick| quick.entry.info.id == verdict.method)?.response.as_ref()?;
-        let errors = errors(frame, exact, response);
-        Some(judge(verdict.method, verdict.subject, &errors, options.tolerance)?.lowest.percent)
+    let lines = |response: &Response| {
+        let sets = [exact, stiff, soft].map(|exact| lowest_storeys(errors(frame, exact, response)));
+        let line = |subject: Subject| {
+            let lowest =
+                |set: &[ValueError]| Some(judge(response.method, subject, set, options.tolerance)?.lowest.percent);
+            let [fixed, stiff, soft] = &sets;
+            Some(FootLine {
+                method: response.method,
+                subject,
+                fixed: lowest(fixed)?,
+                sprung: [lowest(stiff)?, lowest(soft)?],
+            })
+        };
+        Subject::ALL.into_iter().filter_map(line).collect::<Vec<_>>()
     };
-    let line = |verdict: &Verdict| {
-        let sprung = [lowest(verdict, stiff)?, lowest(verdict, soft)?];
-        Some(FootLine { method: verdict.method, subject: verdict.subject, fixed: verdict.lowest.percent, sprung })
-    };
-    verdicts.iter().filter_map(line).collect()
+    quick.iter().filter_map(|quick| quick.response.as_ref()).flat_map(lines).collect()
+}
+
+/// The errors of the two lowest storeys, where feet matter most.
+fn lowest_storeys(mut errors: Vec<ValueError>) -> Vec<ValueError> {
+    errors.retain(|error| error.member.storey() < 2);
+    errors
 }

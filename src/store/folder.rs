@@ -1,6 +1,7 @@
 //! Report folders: written beside their place under another name, then swapped in as a whole.
 
 use super::StoreFault;
+use crate::report::json;
 use std::fs;
 use std::path::{Path, PathBuf};
 
@@ -143,8 +144,7 @@ fn may_be_alive(pid: u32) -> bool {
 fn is_ours(place: &Path) -> bool {
     let path = place.join(RECORD);
     let small = fs::metadata(&path).is_ok_and(|data| data.is_file() && data.len() <= RECORD_LIMIT);
-    let record = || serde_json::from_slice::<serde_json::Value>(&fs::read(&path).ok()?).ok();
-    small && record().is_some_and(|record| record["record"]["program"] == "swaybound")
+    small && fs::read_to_string(&path).is_ok_and(|text| json::is_ours(&text))
 }
 
 fn lies_in(input: &Path, place: &Path) -> bool {

@@ -1,6 +1,6 @@
 //! The terminal report of a comparison: tables first, verdicts last.
 
-use super::summary::by_storey;
+use super::summary::{READING, by_storey};
 use super::words;
 use super::{Findings, feet_table};
 use crate::compare::verdict::Subject;
@@ -18,6 +18,7 @@ pub fn brief(findings: &Findings) -> Document {
         report.paragraph(notice);
     }
     report.paragraph(words::measure(frame, comparison));
+    report.paragraph(READING);
     for subject in Subject::ALL {
         report.table(by_storey(frame, comparison, subject, MOST_ROWS));
     }

@@ -14,6 +14,8 @@ use crate::units::Unit;
 
 /// The most column lines that get a panel of their own.
 const MOST_PANELS: usize = 12;
+/// How the names of elevations begin.
+pub(super) const ELEVATION: &str = "elevation-";
 /// Percent, for shares of one.
 const PERCENT: Unit = Unit { symbol: "%", si: 0.01 };
 
@@ -79,7 +81,7 @@ fn elevations(findings: &Findings) -> Vec<Chart> {
             limit,
             measure: "error of the design moment, % of the storey's largest exact value".into(),
         };
-        chart(format!("elevation-{method}"), &title, &caption, &figure)
+        chart(format!("{ELEVATION}{method}"), &title, &caption, &figure)
     };
     summary::quick_errors(comparison).map(one).collect()
 }

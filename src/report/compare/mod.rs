@@ -14,8 +14,9 @@ pub use page::page;
 pub use tables::tables;
 
 use super::workbook::About;
-use super::{Sentence, TableBlock, TableCell, say};
-use crate::compare::Comparison;
+use super::{Sentence, State, TableBlock, TableCell, say};
+use crate::compare::verdict::Subject;
+use crate::compare::{Comparison, FOOT_RATIOS};
 use crate::frame::Frame;
 use crate::frame::file::FrameFile;
 use crate::response::Fit;
@@ -77,27 +78,23 @@ pub fn about(findings: &Findings) -> About {
 
 /// The second line of fixed feet, where there is one.
 fn feet_table(comparison: &Comparison) -> Option<TableBlock> {
-    let mut table =
-        TableBlock::new("feet", "Feet are neither fixed nor pinned: lowest error with springs under the columns")
-            .name("method")
-            .name("quantity")
-            .percent("fixed feet", 0)
-            .under("foot spring over 4 E I/h")
-            .percent("20", 0)
-            .percent("1", 0);
+    let caption = "Feet are neither fixed nor pinned: lowest error in the two lowest storeys, by foot spring";
+    let mut table = TableBlock::new("feet", caption).name("method");
+    for subject in Subject::ALL {
+        table = table.under(subject.name()).percent("fixed", 0);
+        table = FOOT_RATIOS.iter().fold(table, |table, ratio| table.percent(format!("spring {ratio}"), 0));
+    }
     let tolerance = comparison.options.tolerance;
-    let cell = |percent: f64| {
-        let short = percent < -tolerance;
-        TableCell::from(percent).marked(short.then_some(super::State::FallsShort))
-    };
-    for line in &comparison.feet {
-        let names = [comparison_name(comparison, line.method), line.subject.name().into()].map(TableCell::from);
-        table.row(names.into_iter().chain([line.fixed, line.sprung[0], line.sprung[1]].map(cell)));
+    let cell = |percent: f64| TableCell::from(percent).marked((percent < -tolerance).then_some(State::FallsShort));
+    for lines in comparison.feet.chunk_by(|a, b| a.method == b.method) {
+        let numbers = lines.iter().flat_map(|line| [line.fixed, line.sprung[0], line.sprung[1]].map(cell));
+        table.row(std::iter::once(TableCell::from(summary::short_name(lines[0].method))).chain(numbers));
     }
     table.note(
-        "The exact answer with rotational springs of 20 and of 1 times 4 E I/h of the lowest columns, beside the quick \
-         methods with fixed feet; percent of the storey's largest exact value, negative is short.",
+        "Springs: rotational foot stiffness over 4 E I/h of the lowest columns. The exact answer changes with the feet, \
+         the quick methods keep theirs fixed; percent of the storey's largest exact value, negative is short.",
     );
+    table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
     (!comparison.feet.is_empty()).then_some(table)
 }
 

@@ -1,6 +1,7 @@
 //! The page of a comparison: verdict first, method sheet and record last.
 
-use super::summary::{by_storey, short_name};
+use super::charts::ELEVATION;
+use super::summary::{READING, by_storey, short_name};
 use super::{Findings, comparison_name, feet_table, sheet, words};
 use crate::compare::verdict::{Extreme, Subject, Verdict};
 use crate::frame::SizeSource;
@@ -8,6 +9,7 @@ use crate::report::number::{Form, decimals, signed_percent};
 use crate::report::{Document, Figure, Record, Sentence, State, TableBlock, TableCell, say};
 use crate::response::statics::{Law, Statics};
 use crate::response::{Quantity, Response};
+use std::cmp::Reverse;
 
 /// The most rows of a table by storey on the page.
 const MOST_ROWS: usize = 60;
@@ -119,9 +121,11 @@ fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
         let head = short_name(verdict.method);
         table = table.under(head).percent("lowest", 0).percent("highest", 0).number("factor", "", 3);
     }
-    let places = verdicts.first().map_or(0, |verdict| verdict.places.len());
-    for index in (0..places).rev() {
-        let first = &verdicts[0].places[index];
+    let Some(first) = verdicts.first() else { return table };
+    let mut order: Vec<_> = (0..first.places.len()).collect();
+    order.sort_by_key(|index| (Reverse(first.places[*index].place.band), first.places[*index].place.class));
+    for index in order {
+        let first = &first.places[index];
         let mut cells = vec![TableCell::from(words::capital(&first.place.words())), first.members.into()];
         for verdict in &verdicts {
             let place = &verdict.places[index];
@@ -134,16 +138,21 @@ fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
     judged(table, comparison.options.tolerance)
 }
 
+/// Elevations stand side by side to be compared, the others one below the other.
 fn charts(report: &mut Document, figures: Vec<Figure>) {
     report.section("Charts");
-    for figure in figures {
+    let (elevations, others): (Vec<_>, Vec<_>) =
+        figures.into_iter().partition(|figure| figure.key.starts_with(ELEVATION));
+    report.figures(elevations);
+    others.into_iter().for_each(|figure| {
         report.figure(figure);
-    }
+    });
 }
 
 fn storeys(report: &mut Document, findings: &Findings) {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     report.section("Storey by storey");
+    report.paragraph(READING);
     for subject in Subject::ALL {
         report.table(by_storey(frame, comparison, subject, MOST_ROWS));
     }

@@ -9,8 +9,10 @@ use crate::frame::Frame;
 use crate::report::{State, TableBlock, TableCell, say};
 use std::ops::Range;
 
-/// The most rows a terminal table has; taller frames show groups of storeys.
-const MOST_ROWS: usize = 20;
+/// How the cells of [`by_storey`] are to be read.
+pub(super) const READING: &str = "Errors in percent of the largest exact value of the same storey: of the members of a \
+                                  cell the one most off, but the shortest where any is short by more than the \
+                                  tolerance.";
 
 /// Groups of storeys from the ground, single ones where they fit.
 pub(super) fn groups(storeys: usize, most: usize) -> Vec<Range<usize>> {
@@ -48,7 +50,7 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, subject: Subject
         table = table.under(class_head(subject, *class)).number("exact", unit.symbol, 3);
         table = methods.iter().fold(table, |table, method| table.percent(short_name(method), 0));
     }
-    let groups = groups(frame.storeys(), most.min(MOST_ROWS.max(most)));
+    let groups = groups(frame.storeys(), most);
     for group in groups.iter().rev() {
         let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), subject))];
         for class in &classes {
@@ -70,10 +72,6 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, subject: Subject
         }
         table.row(cells);
     }
-    table.note(
-        "Errors in percent of the largest exact value of the same storey: of the members of a cell the one most off, \
-         but the shortest where any is short by more than the tolerance.",
-    );
     let tolerance = comparison.options.tolerance;
     table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
     table.meaning(State::SafeSide, format!("over by more than {tolerance} %"));

@@ -178,7 +178,12 @@ pub(super) fn verdict(comparison: &Comparison, verdict: &Verdict, units: ReportU
         let all = found.len() == verdict.places.len();
         (!found.is_empty()).then(|| format!(" {head}: {}.", if all { "everywhere".into() } else { places(&found) }))
     });
-    lists.fold(sentence.then("."), Sentence::then)
+    let factor = match verdict.largest_factor() {
+        Some(factor) if factor > 1.005 => format!(" Multiplied by {factor:.2}, no member would be short."),
+        Some(_) => String::new(),
+        None => " Some value is zero: no factor covers every member.".into(),
+    };
+    lists.fold(sentence.then("."), Sentence::then).then(factor)
 }
 
 /// `34 %` of −34.2, never rounded to nothing.
@@ -196,19 +201,10 @@ fn nowhere_short(verdict: &Verdict) -> String {
     }
 }
 
-/// A member with both values: `column A, storey 1 (120 kN m where 182 kN m is exact: multiply by 1.52)`.
+/// A member with both values: `column A, storey 1 (120 kN m where 182 kN m is exact)`.
 fn extreme(extreme: Extreme, unit: Unit) -> String {
-    let factor = match extreme.factor {
-        Some(factor) if factor > 1.0 => format!(": multiply by {factor:.2}"),
-        Some(_) => String::new(),
-        None => ": no factor helps".into(),
-    };
-    format!(
-        "{} ({} where {} is exact{factor})",
-        member(extreme.member),
-        amount(extreme.quick.abs(), unit),
-        amount(extreme.exact.abs(), unit)
-    )
+    let (quick, exact) = (amount(extreme.quick.abs(), unit), amount(extreme.exact.abs(), unit));
+    format!("{} ({quick} where {exact} is exact)", member(extreme.member))
 }
 
 /// The text with a capital first letter.
