@@ -1,9 +1,11 @@
 //! The report engine as a whole: files read back equal, pages are safe and repeatable, text keeps its width.
 
+#![allow(clippy::unwrap_used, reason = "helpers of tests too")]
+
 #[path = "report_engine/sample.rs"]
 mod sample;
 
-use calamine::{Data, Reader, Xlsx};
+use calamine::{Data, DataType, Reader, Xlsx};
 use proptest::prelude::*;
 use sample::{NASTY, dataset, document};
 use swaybound::report::{
@@ -128,7 +130,7 @@ fn the_workbook_reads_back_equal() {
         }
     }
     let front = book.worksheet_range("About").unwrap();
-    let said = |words: &str| front.used_cells().any(|(_, _, cell)| cell.to_string() == words);
+    let said = |words: &str| front.used_cells().any(|(_, _, cell)| cell.as_string().is_some_and(|text| text == words));
     for words in ["It is not a design.", "Load acts to the right.", "Column line or bay", "my frame.toml", "[grid]"] {
         assert!(said(words), "{words}");
     }
@@ -223,6 +225,15 @@ fn rows_of_the_page_are_as_wide_as_their_heads() {
     }
 }
 
+#[test]
+fn tables_are_fitted_to_the_sheet() {
+    let page = html::write(&document());
+    let classes: Vec<&str> =
+        page.split("<div class=\"table ").skip(1).map(|rest| rest.split_once('"').unwrap().0.trim()).collect();
+    let expected = ["short", "", "tight short", "landscape", "landscape tight short", "landscape tight short"];
+    assert_eq!(classes, expected);
+}
+
 /// The page as XML: void elements closed, bare attributes given a value, the style's letters kept apart.
 fn strict_xml(page: &str) -> String {
     let body = page.strip_prefix("<!DOCTYPE html>").unwrap();
@@ -243,7 +254,7 @@ fn text_names_figures_tables_and_verdicts() {
         "▼ falls short: Portal: short by",
         "Figure\u{a0}1. Elevation one.",
         "elevation-one.svg",
-        "Table\u{a0}4 (part 1 of",
+        "Table\u{a0}5 (part 1 of",
     ] {
         assert!(shown.contains(words), "{words}");
     }

@@ -144,6 +144,13 @@ impl From<usize> for Cell {
     }
 }
 
+impl From<u64> for Cell {
+    /// A count; one beyond the largest 64-bit signed integer becomes a number.
+    fn from(value: u64) -> Self {
+        i64::try_from(value).map_or(Self::Number(value as f64), Self::Integer)
+    }
+}
+
 impl From<i64> for Cell {
     fn from(value: i64) -> Self {
         Self::Integer(value)

@@ -329,6 +329,12 @@ impl From<usize> for TableCell {
     }
 }
 
+impl From<u64> for TableCell {
+    fn from(value: u64) -> Self {
+        Self::of(Content::Formed(value as f64, Form::Whole))
+    }
+}
+
 impl From<&str> for TableCell {
     fn from(text: &str) -> Self {
         Self::of(Content::Text(text.into()))

@@ -119,17 +119,30 @@ fn by_method() -> TableBlock {
     table
 }
 
+/// A table for a sheet on its side.
+fn wide() -> TableBlock {
+    let mut table = TableBlock::new("wide-one", "Column shears of a long frame").name("Storey").name("Method");
+    for line in 0..18 {
+        table = table.number(format!("Line {}", line + 1), "kN", 3);
+    }
+    for storey in 1..=60 {
+        let values = (0..18).map(|line| TableCell::from(100.0 * noise(storey + 50 * line)));
+        table.row([TableCell::from(storey), TableCell::from("portal")].into_iter().chain(values));
+    }
+    table
+}
+
 /// So many lines that no sheet holds the table.
 fn very_wide() -> TableBlock {
     let mut table = TableBlock::new("very-wide", "Column shears of a very long frame").name("Storey").name("Method");
-    for line in 0..30 {
+    for line in 0..44 {
         table = table.number(format!("Line {}", line + 1), "kN", 3);
     }
     for storey in 1..=6 {
         if storey == 4 {
             table.rule();
         }
-        let values = (0..30).map(|line| TableCell::from(100.0 * noise(storey + 50 * line)));
+        let values = (0..44).map(|line| TableCell::from(100.0 * noise(storey + 50 * line)));
         table.row([TableCell::from(storey), TableCell::from("portal")].into_iter().chain(values));
     }
     table
@@ -190,6 +203,7 @@ pub fn document() -> Document {
         .table(by_method())
         .figure(Figure::new("wide", "Moment profiles", drawing(1100, 420), 1100.0).caption(say("Profiles of ").refer("by-method").then(".")))
         .section("A very long frame")
+        .table(wide())
         .table(very_wide())
         .details("Hand calculation, portal method", |inner| {
             inner.subsection("Step 1").paragraph("Interior columns take twice the shear of end columns.").formula("V = 2 × 45 kN");

@@ -2,6 +2,7 @@
 
 use super::{Page, grid, svg};
 use crate::report::document::{Block, Figure, Verdict};
+use crate::report::labels::slug;
 use crate::report::sentence::{Sentence, Span, clean, clean_lines};
 use crate::report::table::State;
 use maud::{Markup, PreEscaped, html};
@@ -85,7 +86,7 @@ impl Page<'_> {
 
     fn figure(&self, figure: &Figure) -> Markup {
         let says = if figure.description.is_empty() { &figure.title } else { &figure.description };
-        let drawing = svg::inline(&figure.svg, &figure.key, &clean(says));
+        let drawing = svg::inline(&figure.svg, &slug(&figure.key), &clean(says));
         html! {
             figure id=(figure.key) style={ "--natural:" (figure.natural_width.round()) "px" } {
                 div.drawing tabindex="0" role="group" aria-label=(clean(&figure.title)) { (PreEscaped(drawing)) }

@@ -11,6 +11,8 @@ use maud::{Markup, html};
 const GAP: usize = 2;
 /// Letters of a text column that count: longer text is wrapped.
 const WRAPPED_TEXT: usize = 26;
+/// Tables with no more rows stand on one printed page.
+const UNBROKEN_ROWS: usize = 14;
 /// Letters across a printed page, by the class that makes them fit on A4 and on Letter (see the print styles).
 const FITS: [(usize, &str); 4] = [(100, ""), (122, "tight"), (146, "landscape"), (176, "landscape tight")];
 
@@ -18,7 +20,8 @@ const FITS: [(usize, &str); 4] = [(100, ""), (122, "tight"), (146, "landscape"),
 pub(super) fn draw(table: &TableBlock, page: &Page) -> Markup {
     let columns = 0..table.columns.len();
     let signs: Vec<bool> = columns.clone().map(|column| table.has_signs(column)).collect();
-    let grid = Grid { table, page, signs };
+    let mut grid = Grid { table, page, signs, long: Vec::new() };
+    grid.long = columns.clone().map(|column| grid.longest(column) > WRAPPED_TEXT).collect();
     let extents: Vec<Extent> = columns.map(|column| grid.extent(column)).collect();
     let widest = FITS[FITS.len() - 1].0;
     let parts = parts(&extents, table.keys(), GAP, widest);
@@ -39,17 +42,24 @@ struct Grid<'a> {
     table: &'a TableBlock,
     page: &'a Page<'a>,
     signs: Vec<bool>,
+    /// Columns whose text needs room even where it is wrapped.
+    long: Vec<bool>,
 }
 
 impl Grid<'_> {
-    fn extent(&self, index: usize) -> Extent {
-        let column = &self.table.columns[index];
+    /// Letters of the longest entry.
+    fn longest(&self, index: usize) -> usize {
         let cells = self.table.rows.iter().filter_map(|row| match row {
             Row::Cells(cells) => cells.get(index),
             _ => None,
         });
         let letters = |cell: &TableCell| self.table.words(cell, index, self.page.labels).chars().count();
-        let entries = cells.map(letters).max().unwrap_or(0);
+        cells.map(letters).max().unwrap_or(0)
+    }
+
+    fn extent(&self, index: usize) -> Extent {
+        let column = &self.table.columns[index];
+        let entries = self.longest(index);
         let entries = if column.align == Align::Right { entries } else { entries.min(WRAPPED_TEXT) };
         let head = column.head.split(' ').map(|word| word.chars().count()).max().unwrap_or(0).min(WRAPPED_TEXT);
         let sign = if self.signs[index] { 2 } else { 0 };
@@ -60,13 +70,17 @@ impl Grid<'_> {
         let table = self.table;
         let id = if index == 0 { table.key.clone() } else { format!("{}--{}", table.key, index + 1) };
         let last = index + 1 == parts;
+        let short = if table.rows.len() <= UNBROKEN_ROWS { " short" } else { "" };
         html! {
-            div class={ "table " (fit) } id=(id) {
+            div class={ "table " (fit) (short) } id=(id) {
                 div.scroll tabindex="0" role="group" aria-labelledby={ (id) "-caption" } {
                     table {
                         caption id={ (id) "-caption" } {
-                            strong { (self.page.labels.name(&table.key)) "." } " " (self.page.sentence(&table.caption))
-                            @if parts > 1 { " (part " (index + 1) " of " (parts) ")" }
+                            span {
+                                strong { (self.page.labels.name(&table.key)) "." } " "
+                                (self.page.sentence(&table.caption))
+                                @if parts > 1 { " (part " (index + 1) " of " (parts) ")" }
+                            }
                         }
                         (self.heads(part))
                         (self.bodies(part))
@@ -158,6 +172,7 @@ impl Grid<'_> {
             Column { align: Align::Right, .. } => "right",
             Column { align: Align::Centre, .. } => "centre",
             Column { key: true, .. } if index == 0 => "key",
+            _ if self.long[index] => "left long",
             _ => "left",
         }
     }

@@ -15,7 +15,7 @@ pub(super) fn inline(svg: &str, prefix: &str, description: &str) -> String {
         }
         let (tag, behind) = rest.split_at(tag_end(rest));
         let tag = Tag::read(tag).renamed(prefix);
-        out.push_str(&if root { tag.as_root(description).text() } else { tag.text() });
+        out.push_str(&if root { tag.made_root(description).text() } else { tag.text() });
         (rest, root) = (behind, false);
     }
     out + rest
@@ -73,7 +73,7 @@ impl<'a> Tag<'a> {
     }
 
     /// The outermost tag: a viewBox in place of width and height, and a role.
-    fn as_root(mut self, description: &str) -> Self {
+    fn made_root(mut self, description: &str) -> Self {
         let taken = |tag: &mut Self, key: &str| {
             let at = tag.attributes.iter().position(|(known, _)| known == key);
             at.map(|at| tag.attributes.remove(at).1.trim_end_matches("px").to_string())

@@ -100,7 +100,7 @@ impl<'a> Grid<'a> {
             return self.natural(column);
         }
         let words = self.entries(column).map(|entry| entry.longest_word()).max().unwrap_or(1);
-        words.max(NARROW_TEXT).max(self.head_width(column))
+        words.clamp(NARROW_TEXT, COMFORTABLE_TEXT).max(self.head_width(column))
     }
 
     /// An entry with its sign. In a column with signs every entry leaves room for one.

@@ -103,7 +103,7 @@ impl Ink {
 
     /// Without blanks at its end.
     pub fn trimmed(mut self) -> Self {
-        while self.letters.last().is_some_and(|letter| letter.0 == ' ') {
+        while self.letters.last().is_some_and(|letter| matches!(letter.0, ' ' | '\u{a0}')) {
             self.letters.pop();
         }
         self

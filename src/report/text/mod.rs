@@ -161,7 +161,7 @@ impl Page<'_> {
             false => Ink::new(" ", Tone::Plain).joined(ink_of(&figure.caption, self.labels)),
         };
         let name = Ink::new(&format!("{}. {}.", self.labels.name(&figure.key), figure.title), Tone::Strong);
-        let file = figure.file.as_ref().map_or("See the page.".into(), |file| format!("See the file {file}."));
+        let file = figure.file.as_ref().map_or("(On the page only.)".into(), |file| format!("(Drawn in {file}.)"));
         self.block(&[name.joined(caption).joined(Ink::new(&format!(" {file}"), Tone::Faint))]);
     }
 
