@@ -1,8 +1,8 @@
 //! Scenes for the figure tests: frames of many shapes with forces that satisfy statics.
 
 use swaybound::report::figure::{
-    Cell, Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series, Spread,
-    SpreadRow, Svg, colour_limit,
+    Cell, Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series,
+    Spread, SpreadRow, Svg, colour_limit,
 };
 use swaybound::units::ReportUnits;
 
@@ -54,7 +54,11 @@ pub fn moments(grid: &Grid, interior: f64, inflection: impl Fn(usize) -> f64) ->
 }
 
 pub fn exact(grid: &Grid) -> EndMoments {
-    moments(grid, 1.55, |storey| if storey == 0 { 0.63 } else { 0.46 - 0.1 * storey as f64 / grid.storeys.len() as f64 })
+    moments(
+        grid,
+        1.55,
+        |storey| if storey == 0 { 0.63 } else { 0.46 - 0.1 * storey as f64 / grid.storeys.len() as f64 },
+    )
 }
 
 pub fn portal(grid: &Grid) -> EndMoments {
@@ -122,7 +126,10 @@ pub fn profiles(storeys: usize, bays: usize) -> Profiles {
             let values = of(&moments(&grid, 1.4 + 0.2 * index as f64, |_| 0.5), line, 1.0);
             Series { method: (*method).into(), name: (*name).into(), values }
         });
-        Panel { name: format!("line {}", swaybound::frame::line_name(line)), series: std::iter::once(truth).chain(quick).collect() }
+        Panel {
+            name: format!("line {}", swaybound::frame::line_name(line)),
+            series: std::iter::once(truth).chain(quick).collect(),
+        }
     };
     Profiles {
         title: "Column design moments by storey".into(),

@@ -7,7 +7,7 @@ use super::font::text_width;
 use super::legend::legend;
 use super::look::{EXACT_METHODS, look};
 use super::number::rounded;
-use super::panel::{heading, heading_height};
+use super::panel::heading;
 use super::plan::{LEAST_WIDTH, LINE, MARGIN, thinned};
 use super::svg::finish;
 use super::{Figure, Svg};
@@ -64,8 +64,7 @@ impl Figure for Profiles {
     fn svg(&self) -> Svg {
         let mut canvas = Canvas::default();
         let frame = self.arrange();
-        heading(&mut canvas, &self.title, frame.width);
-        let top = heading_height(&self.title, frame.width) + 4.0;
+        let top = heading(&mut canvas, &self.title, frame.width) + 4.0;
         let entries = self.entries();
         let marked: Vec<_> = entries.iter().map(|(id, name)| (look(id), true, name.clone())).collect();
         let mut y = legend(&mut canvas, &marked, (MARGIN, top), frame.width - 2.0 * MARGIN) + 6.0;
@@ -200,9 +199,9 @@ impl Profiles {
             markers.push((x, bottom - ends[0] - share * (ends[1] - ends[0])));
         }
         canvas.path(run, Stroke::of(look));
-        let heights: Vec<f64> = markers.iter().map(|marker| marker.1).collect();
-        for at in thinned(&heights, 20.0, (10.0 * share) as usize) {
-            canvas.marker(markers[at], look);
+        let step = (24.0 * self.storeys.len() as f64 / frame.height).ceil().max(1.0);
+        for marker in markers.iter().skip((share * step) as usize).step_by(step as usize) {
+            canvas.marker(*marker, look);
         }
     }
 

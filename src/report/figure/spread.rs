@@ -5,8 +5,8 @@ use super::canvas::{Anchor, Canvas, Fill, SMALL, Stroke, Words};
 use super::colour::{GRID, INK, QUIET, WHITE, signed_colour};
 use super::font::{text_width, wrap};
 use super::look::look;
-use super::number::percent;
-use super::panel::{heading, heading_height, paragraph};
+use super::number::{percent, rounded_signed};
+use super::panel::{heading, paragraph};
 use super::plan::MARGIN;
 use super::svg::finish;
 use super::{Figure, Svg};
@@ -55,8 +55,7 @@ impl Figure for Spread {
         let side = rows.iter().flat_map(|row| [label(row.low), label(row.high)]).fold(20.0, f64::max);
         let left = 2.0 * MARGIN + NAMES + side;
         let width = left + PLOT + side + MARGIN;
-        heading(&mut canvas, &self.title, width);
-        let top = heading_height(&self.title, width) + 24.0;
+        let top = heading(&mut canvas, &self.title, width) + 24.0;
         let bottom = top + ROW * rows.len() as f64;
         let (first, last) = (ticks[0], ticks[ticks.len() - 1]);
         let x = |value: f64| left + PLOT * (value - first) / (last - first);
@@ -81,7 +80,7 @@ fn axes(canvas: &mut Canvas, ticks: &[f64], x: &impl Fn(f64) -> f64, (top, botto
     for tick in ticks {
         let stroke = if *tick == 0.0 { Stroke::solid(INK, 1.2) } else { Stroke::solid(GRID, 0.8) };
         canvas.line((x(*tick), top), (x(*tick), bottom + 3.0), stroke);
-        canvas.words(Words::new(format!("{} %", percent(*tick)), (x(*tick), bottom + 13.0), Anchor::Middle));
+        canvas.words(Words::new(format!("{} %", rounded_signed(*tick, 3)), (x(*tick), bottom + 13.0), Anchor::Middle));
     }
     let zero = x(0.0);
     canvas.words(Words::new("short (unsafe side)", (zero - 6.0, top - 10.0), Anchor::End).colour(QUIET));
