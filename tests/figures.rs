@@ -1,4 +1,5 @@
 //! The figures: sound SVG, nothing cut off, no words over words, the same bytes each time, the right side of a member.
+#![allow(clippy::unwrap_used, clippy::panic)]
 
 #[path = "figures/scenes.rs"]
 mod scenes;

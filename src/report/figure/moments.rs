@@ -100,6 +100,12 @@ impl Span {
         self.towards[0].0 == 0.0
     }
 
+    /// Both moments without sign. Moments that differ only by rounding count as equal, so that the order of labels is
+    /// that of the members.
+    fn sizes(&self) -> [f64; 2] {
+        self.moments.map(|moment| format!("{:.6e}", moment.abs()).parse().unwrap_or(0.0))
+    }
+
     fn largest(&self) -> f64 {
         self.moments[0].abs().max(self.moments[1].abs())
     }
@@ -252,8 +258,10 @@ struct Labels<'a> {
 
 impl Labels<'_> {
     fn print(mut self, exact: &[Span], quick: &[Span], plan: &Plan) {
+        let sizes: Vec<[f64; 2]> = exact.iter().map(Span::sizes).collect();
+        let size = |(span, end): (usize, usize)| sizes[span][end];
         let mut ends: Vec<(usize, usize)> = (0..exact.len()).flat_map(|span| [(span, 0), (span, 1)]).collect();
-        ends.sort_by(|a, b| size(exact, *b).total_cmp(&size(exact, *a)));
+        ends.sort_by(|a, b| size(*b).total_cmp(&size(*a)));
         let of_beam = |end: &&(usize, usize)| exact[end.0].is_beam();
         let first = [ends.iter().find(|end| !of_beam(end)), ends.iter().find(of_beam)];
         let first: Vec<_> = first.into_iter().flatten().copied().collect();
@@ -266,10 +274,11 @@ impl Labels<'_> {
         for end in &first {
             let _ = self.label(exact, *end, false) || self.label(exact, *end, true);
         }
-        let least = LEAST_LABELLED * first.iter().map(|end| size(exact, *end)).fold(0.0, f64::max);
+        let least = LEAST_LABELLED * first.iter().map(|end| size(*end)).fold(0.0, f64::max);
         let both = exact.len() <= BOTH_LABELLED;
         let others = ends.into_iter().filter(|end| !first.contains(end));
-        for end in others.filter(|end| roomy && size(exact, *end) > least && (both || governs(exact, *end))) {
+        let wanted = |end: &(usize, usize)| size(*end) > least && (both || governs(sizes[end.0], end.1));
+        for end in others.filter(|end| roomy && wanted(end)) {
             self.label(exact, end, false);
         }
     }
@@ -305,15 +314,8 @@ impl Labels<'_> {
 }
 
 /// Whether this end has the larger moment of its member.
-fn governs(spans: &[Span], (span, end): (usize, usize)) -> bool {
-    let (here, there) = (size(spans, (span, end)), size(spans, (span, 1 - end)));
-    here > there || (here == there && end == 0)
-}
-
-/// The moment at an end. Ends that differ only by rounding count as equal, so that the order is that of the members.
-fn size(spans: &[Span], (span, end): (usize, usize)) -> f64 {
-    let moment = spans[span].moments[end].abs();
-    format!("{moment:.6e}").parse().unwrap_or(moment)
+fn governs(sizes: [f64; 2], end: usize) -> bool {
+    sizes[end] > sizes[1 - end] || (sizes[0] == sizes[1] && end == 0)
 }
 
 /// The runs of members that have moments.
