@@ -36,6 +36,9 @@ fn every(check: impl Fn(&str, &Svg)) {
             check(&format!("{name} {storeys}x{bays}"), &svg);
         }
     }
+    for (name, svg) in scenes::hard() {
+        check(name, &svg);
+    }
 }
 
 #[test]
@@ -270,6 +273,9 @@ fn png_refuses_what_it_cannot_draw() {
 fn gallery() {
     let folder = std::path::Path::new(env!("CARGO_TARGET_TMPDIR"));
     for (storeys, bays) in [(1, 1), (3, 2), (9, 4), (40, 8), (200, 20), (2, 12), (500, 100)] {
+        for (name, svg) in scenes::hard() {
+            std::fs::write(folder.join(format!("{name}.png")), png(svg.as_str(), 2.0).unwrap()).unwrap();
+        }
         let start = std::time::Instant::now();
         let figures = scenes::all(storeys, bays);
         println!("{storeys}x{bays}: {:?}", start.elapsed());

@@ -142,7 +142,7 @@ fn line_names(canvas: &mut Canvas, plan: &Plan, y: f64, radius: f64) {
     }
 }
 
-/// Bay widths where they fit, and the whole width. Returns the y below.
+/// Bay widths where they fit (none where most do not), and the whole width. Returns the y below.
 fn dimensions(canvas: &mut Canvas, grid: &Grid, plan: &Plan, mut y: f64) -> f64 {
     let number = |length: f64| rounded(grid.length.from_si(length), 4);
     let symbol = grid.length.symbol;
@@ -153,9 +153,11 @@ fn dimensions(canvas: &mut Canvas, grid: &Grid, plan: &Plan, mut y: f64) -> f64 
         dimension(canvas, (first, last), y, format!("{total} {symbol}"));
         return y + 6.0;
     }
-    if grid.bays.iter().zip(plan.x.windows(2)).all(fits) {
-        for (bay, ends) in grid.bays.iter().zip(plan.x.windows(2)) {
-            dimension(canvas, (ends[0], ends[1]), y, number(*bay));
+    let pairs: Vec<(&f64, &[f64])> = grid.bays.iter().zip(plan.x.windows(2)).collect();
+    if 2 * pairs.iter().filter(|pair| fits(**pair)).count() >= pairs.len() {
+        for (bay, ends) in pairs {
+            let words = if fits((bay, ends)) { number(*bay) } else { String::new() };
+            dimension(canvas, (ends[0], ends[1]), y, words);
         }
         y += 20.0;
     }

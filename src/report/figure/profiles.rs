@@ -3,7 +3,7 @@
 use super::axis::round_ticks;
 use super::canvas::{Anchor, Canvas, Point, SMALL, Stroke, Words};
 use super::colour::{GRID, INK, QUIET, RULE};
-use super::font::text_width;
+use super::font::{text_width, wrap};
 use super::legend::legend;
 use super::look::{EXACT_METHODS, look};
 use super::number::rounded;
@@ -19,9 +19,11 @@ const ACROSS: usize = 4;
 const PLOT: f64 = 188.0;
 /// Room for storey numbers left of each row, CSS px.
 const NUMBERS: f64 = 46.0;
-/// Room above a plot for its name, and below it for the axis, CSS px.
+/// Room above a plot for its name, CSS px.
 const NAME: f64 = 22.0;
-const AXIS: f64 = 40.0;
+/// Room below a plot for its ticks, and below a row of panels, CSS px.
+const TICKS: f64 = 20.0;
+const ROW_GAP: f64 = 6.0;
 
 /// One method's values in a panel.
 #[derive(Debug, Clone, PartialEq)]
@@ -74,7 +76,7 @@ impl Figure for Profiles {
                 let left = frame.left + index as f64 * (PLOT + frame.gap);
                 self.panel(&mut canvas, &frame, panel, (left, y + NAME));
             }
-            y += NAME + frame.height + AXIS;
+            y += NAME + frame.height + TICKS + LINE * self.axis_name().len() as f64 + ROW_GAP;
         }
         finish(canvas, &self.title, &self.description, frame.width, y + MARGIN - 4.0)
     }
@@ -153,7 +155,10 @@ impl Profiles {
             let x = frame.x(left, *tick);
             canvas.words(Words::new(rounded(*tick, 4), (x, bottom + 11.0), Anchor::Middle));
         }
-        canvas.words(Words::new(self.axis_name(), (middle, bottom + 27.0), Anchor::Middle).colour(QUIET));
+        for (index, line) in self.axis_name().into_iter().enumerate() {
+            let at = (middle, bottom + TICKS + LINE * (index as f64 + 0.5));
+            canvas.words(Words::new(line, at, Anchor::Middle).colour(QUIET));
+        }
         let exact = |series: &&Series| EXACT_METHODS.contains(&&*series.method);
         let (beneath, above): (Vec<_>, Vec<_>) = panel.series.iter().partition(exact);
         let count = panel.series.len();
@@ -164,9 +169,8 @@ impl Profiles {
         }
     }
 
-    fn axis_name(&self) -> String {
-        let whole = format!("{}, {}", self.quantity, self.unit.symbol);
-        if text_width(&whole, SMALL, false) <= PLOT { whole } else { self.unit.symbol.to_owned() }
+    fn axis_name(&self) -> Vec<String> {
+        wrap(&format!("{}, {}", self.quantity, self.unit.symbol), SMALL, false, PLOT)
     }
 
     fn grid(&self, canvas: &mut Canvas, frame: &Arrangement, (left, top): Point) {
