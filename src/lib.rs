@@ -26,8 +26,13 @@
 //! The column shears of a storey add up to the storey shear V; with loads to the right the column end moments are
 //! negative and add up to -V h. Beam shear = (M_left + M_right) / L. Floors are rigid in their own plane: one sway per
 //! floor.
+pub mod approx;
+pub mod compare;
+pub mod exact;
 pub mod frame;
 pub mod lane;
 pub mod report;
 pub mod response;
+pub mod solve;
+pub mod store;
 pub mod units;

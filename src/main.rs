@@ -1,2 +1,7 @@
 //! Swaybound.
-fn main() {}
+
+mod cli;
+
+fn main() -> std::process::ExitCode {
+    cli::run()
+}

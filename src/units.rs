@@ -3,6 +3,12 @@
 //! Inside the crate every number is in N, m and rad. This module holds the only conversion factors.
 //! Exact by definition: 1 lbf = 4.448 221 615 260 5 N, 1 ft = 0.3048 m, 1 in = 0.0254 m.
 
+mod dimension;
+mod parse;
+
+pub use dimension::Dimension;
+pub use parse::{UnitError, parse};
+
 use serde::{Deserialize, Serialize};
 
 /// Newtons in one pound-force, exact by the definition of the pound and of standard gravity.

@@ -3,7 +3,9 @@
 //! A [`Frame`] is always valid: it can only be made from [`FrameParts`] that pass every check. It knows no analysis.
 
 mod fault;
+pub mod file;
 mod names;
+pub mod sizes;
 
 pub use fault::{FrameFault, FrameWarning};
 pub use names::{bay_name, line_index, line_name};

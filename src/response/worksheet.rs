@@ -13,6 +13,10 @@ pub enum Amount {
     Force,
     /// N m.
     Moment,
+    /// m2.
+    Area,
+    /// 1/m.
+    PerLength,
 }
 
 /// One column of a step's table.

@@ -1,0 +1,11 @@
+//! Quick methods beside the exact answer of one frame: errors, flags, places and verdicts.
+//!
+//! Borrows responses, never alters them.
+
+pub mod errors;
+pub mod formulas;
+pub mod places;
+mod run;
+pub mod verdict;
+
+pub use run::{Comparison, ExactChoice, FootLine, Options, Quick, compare};

@@ -1,0 +1,142 @@
+//! Places: members that are judged together, by band up the height and class across the width.
+
+use crate::frame::Frame;
+use crate::response::Member;
+
+/// A band of storeys (for beams: of floors). In low frames ground wins, then roof, then second.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Band {
+    /// The lowest storey, or first floor.
+    Ground,
+    /// The second storey or floor.
+    Second,
+    /// All storeys between.
+    Middle,
+    /// The storey under the top one.
+    BelowRoof,
+    /// The top storey, or roof.
+    Roof,
+}
+
+/// Where a member stands across the width.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Class {
+    /// Columns on the outermost lines; beams of the outermost bays, a single bay included.
+    End,
+    /// The others.
+    Interior,
+    /// A whole storey.
+    Whole,
+}
+
+/// What kind of member a place holds.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Kind {
+    /// Columns.
+    Columns,
+    /// Beams.
+    Beams,
+    /// Whole storeys.
+    Storeys,
+}
+
+/// Members that are judged together.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub struct Place {
+    /// Columns, beams or storeys.
+    pub kind: Kind,
+    /// Band up the height.
+    pub band: Band,
+    /// Class across the width.
+    pub class: Class,
+}
+
+impl Band {
+    /// The band of a storey or floor, counted from 0, in a frame of `storeys` storeys.
+    pub fn of(storey: usize, storeys: usize) -> Self {
+        match storey {
+            0 => Self::Ground,
+            last if last + 1 == storeys => Self::Roof,
+            1 => Self::Second,
+            last if last + 2 == storeys => Self::BelowRoof,
+            _ => Self::Middle,
+        }
+    }
+
+    /// Name in files; beams are called by floor.
+    pub fn id(self, kind: Kind) -> &'static str {
+        match (self, kind) {
+            (Self::Ground, Kind::Beams) => "first",
+            (Self::Ground, _) => "ground",
+            (Self::Second, _) => "second",
+            (Self::Middle, _) => "middle",
+            (Self::BelowRoof, _) => "below-roof",
+            (Self::Roof, _) => "roof",
+        }
+    }
+
+    /// Name in sentences.
+    pub fn words(self, kind: Kind) -> &'static str {
+        match (self, kind) {
+            (Self::Ground, Kind::Beams) => "first floor",
+            (Self::Second, Kind::Beams) => "second floor",
+            (Self::Middle, Kind::Beams) => "middle floors",
+            (Self::BelowRoof, Kind::Beams) => "floor below the roof",
+            (Self::Roof, Kind::Beams) => "roof",
+            (Self::Ground, _) => "ground storey",
+            (Self::Second, _) => "second storey",
+            (Self::Middle, _) => "middle storeys",
+            (Self::BelowRoof, _) => "storey below the top one",
+            (Self::Roof, _) => "top storey",
+        }
+    }
+}
+
+impl Class {
+    /// Name in files, `-` for whole storeys.
+    pub fn id(self) -> &'static str {
+        match self {
+            Self::End => "end",
+            Self::Interior => "interior",
+            Self::Whole => "-",
+        }
+    }
+}
+
+impl Place {
+    /// The place a member belongs to.
+    pub fn of(frame: &Frame, member: Member) -> Self {
+        let class = |end: bool| if end { Class::End } else { Class::Interior };
+        let (kind, class) = match member {
+            Member::Column { line, .. } => (Kind::Columns, class(frame.is_end_line(line))),
+            Member::Beam { bay, .. } => (Kind::Beams, class(frame.is_end_bay(bay))),
+            Member::Storey { .. } => (Kind::Storeys, Class::Whole),
+        };
+        Self { kind, band: Band::of(member.storey(), frame.storeys()), class }
+    }
+
+    /// The place in words, such as `ground storey, end columns`.
+    pub fn words(self) -> String {
+        let band = self.band.words(self.kind);
+        match (self.kind, self.class) {
+            (Kind::Columns, class) => format!("{band}, {} columns", class.id()),
+            (Kind::Beams, class) => format!("{band}, beams of {} bays", class.id()),
+            (Kind::Storeys, _) => band.into(),
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::Band::{self, BelowRoof, Ground, Middle, Roof, Second};
+
+    #[test]
+    fn in_low_frames_ground_wins_then_roof_then_second() {
+        let bands = |storeys| (0..storeys).map(|storey| Band::of(storey, storeys)).collect::<Vec<_>>();
+        assert_eq!(bands(1), [Ground]);
+        assert_eq!(bands(2), [Ground, Roof]);
+        assert_eq!(bands(3), [Ground, Second, Roof]);
+        assert_eq!(bands(4), [Ground, Second, BelowRoof, Roof]);
+        assert_eq!(bands(6), [Ground, Second, Middle, Middle, BelowRoof, Roof]);
+    }
+}

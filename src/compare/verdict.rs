@@ -1,0 +1,174 @@
+//! Whether a quick method is good enough: verdicts by method, subject and place.
+
+use super::errors::ValueError;
+use super::places::{Kind, Place};
+use crate::response::{Member, Quantity};
+use std::collections::BTreeMap;
+
+/// What a verdict is about.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Subject {
+    /// The larger end moment of each column.
+    ColumnMoments,
+    /// The larger end moment of each beam.
+    BeamMoments,
+    /// The shear of each column.
+    ColumnShears,
+}
+
+impl Subject {
+    /// Every subject, in the order of reports.
+    pub const ALL: [Self; 3] = [Self::ColumnMoments, Self::BeamMoments, Self::ColumnShears];
+
+    /// The subject in words.
+    pub fn name(self) -> &'static str {
+        match self {
+            Self::ColumnMoments => "column design moments",
+            Self::BeamMoments => "beam design moments",
+            Self::ColumnShears => "column shears",
+        }
+    }
+
+    /// `column` or `beam`, as the files say.
+    pub fn member(self) -> &'static str {
+        match self {
+            Self::ColumnMoments | Self::ColumnShears => "column",
+            Self::BeamMoments => "beam",
+        }
+    }
+
+    /// The quantity that is judged.
+    pub fn quantity(self) -> Quantity {
+        match self {
+            Self::ColumnMoments | Self::BeamMoments => Quantity::DesignMoment,
+            Self::ColumnShears => Quantity::Shear,
+        }
+    }
+
+    fn covers(self, error: &ValueError) -> bool {
+        let kind = if self == Self::BeamMoments { Kind::Beams } else { Kind::Columns };
+        error.place.kind == kind && error.quantity == self.quantity()
+    }
+}
+
+/// How a method stands against the tolerance.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum State {
+    /// Nowhere short and nowhere over by more than the tolerance.
+    Suffices,
+    /// Nowhere short by more than the tolerance, somewhere over by more.
+    Generous,
+    /// Somewhere short by more than the tolerance.
+    Short,
+}
+
+impl State {
+    /// Name in files.
+    pub fn id(self) -> &'static str {
+        match self {
+            Self::Suffices => "suffices",
+            Self::Generous => "generous",
+            Self::Short => "short",
+        }
+    }
+
+    fn of(short: f64, over: f64, tolerance: f64) -> Self {
+        match (short < -tolerance, over > tolerance) {
+            (true, _) => Self::Short,
+            (false, true) => Self::Generous,
+            (false, false) => Self::Suffices,
+        }
+    }
+}
+
+/// The error of one member, as a verdict quotes it.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Extreme {
+    /// The member.
+    pub member: Member,
+    /// Its place.
+    pub place: Place,
+    /// Storey error, percent.
+    pub percent: f64,
+    /// Exact value, N or N m.
+    pub exact: f64,
+    /// Quick value, N or N m.
+    pub quick: f64,
+    /// |e| / |q|, where q is not zero.
+    pub factor: Option<f64>,
+}
+
+/// The verdict on one place.
+#[derive(Debug, Clone, PartialEq)]
+pub struct PlaceVerdict {
+    /// The place.
+    pub place: Place,
+    /// Number of members there.
+    pub members: usize,
+    /// The member that is shortest, or least over.
+    pub lowest: Extreme,
+    /// The member that is most over, or least short.
+    pub highest: Extreme,
+    /// The largest factor over the members; `None` where some quick value is zero.
+    pub factor: Option<f64>,
+    /// Against the tolerance.
+    pub state: State,
+}
+
+/// The verdict on one method for one subject.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Verdict {
+    /// Name of the method in files.
+    pub method: &'static str,
+    /// What is judged.
+    pub subject: Subject,
+    /// Against the tolerance, over all places.
+    pub state: State,
+    /// The shortest member of the frame.
+    pub lowest: Extreme,
+    /// The member most over.
+    pub highest: Extreme,
+    /// Every place, columns from the ground up, ends before interior.
+    pub places: Vec<PlaceVerdict>,
+}
+
+/// Judges one method's errors; `None` where it states nothing on `subject`.
+///
+/// # Formula
+/// By storey error: short where the lowest is under -tolerance, generous where the highest is over +tolerance.
+///
+/// # Units
+/// `tolerance` in percent.
+pub fn judge(method: &'static str, subject: Subject, errors: &[ValueError], tolerance: f64) -> Option<Verdict> {
+    let mut by_place: BTreeMap<Place, Vec<Extreme>> = BTreeMap::new();
+    for error in errors.iter().filter(|error| subject.covers(error)) {
+        by_place.entry(error.place).or_default().extend(extreme(error));
+    }
+    let judged = by_place.into_iter().map(|(place, members)| judge_place(place, &members, tolerance));
+    let places: Vec<_> = judged.collect::<Option<_>>()?;
+    let lowest = least(places.iter().map(|place| place.lowest))?;
+    let highest = most(places.iter().map(|place| place.highest))?;
+    let state = State::of(lowest.percent, highest.percent, tolerance);
+    Some(Verdict { method, subject, state, lowest, highest, places })
+}
+
+fn extreme(error: &ValueError) -> Option<Extreme> {
+    let percent = error.storey_error_percent.filter(|percent| percent.is_finite())?;
+    let ValueError { member, place, exact, quick, factor, .. } = *error;
+    Some(Extreme { member, place, percent, exact, quick, factor })
+}
+
+fn judge_place(place: Place, members: &[Extreme], tolerance: f64) -> Option<PlaceVerdict> {
+    let (lowest, highest) = (least(members.iter().copied())?, most(members.iter().copied())?);
+    let factor = members.iter().map(|member| member.factor).try_fold(0.0_f64, |a, b| Some(a.max(b?)));
+    let state = State::of(lowest.percent, highest.percent, tolerance);
+    Some(PlaceVerdict { place, members: members.len(), lowest, highest, factor, state })
+}
+
+fn least(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
+    members.min_by(|a, b| a.percent.total_cmp(&b.percent))
+}
+
+fn most(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
+    members.max_by(|a, b| a.percent.total_cmp(&b.percent))
+}

@@ -1,0 +1,77 @@
+//! The remedy for each mistake.
+
+use super::fault::{FaultKind, quoted};
+use crate::frame::FrameFault;
+
+/// What to write instead.
+pub(super) fn help(kind: &FaultKind) -> String {
+    match kind {
+        FaultKind::Syntax { hint, .. } => (*hint).into(),
+        FaultKind::Empty => "`swaybound new` writes a commented frame file to start from".into(),
+        FaultKind::UnknownKey { key, suggestion, known } => unknown_key(key, suggestion.as_deref(), known),
+        FaultKind::DuplicateKey { .. } => "keep one of the two".into(),
+        FaultKind::WrongForm { expected, .. } => wrong_form(expected),
+        FaultKind::Unit(error) => error.help(),
+        FaultKind::OutOfRange { .. } => "check the number, its sign and its unit".into(),
+        FaultKind::Missing { help, .. } | FaultKind::Conflict { help, .. } => (*help).into(),
+        FaultKind::NoBays => "give the bay widths from the left, for example bays = [\"7.2 m\", \"8.4 m\"]".into(),
+        FaultKind::NoStoreys => {
+            "give the storey heights from the ground up, for example storeys = [\"4.8 m\", \"3.9 m\"]".into()
+        }
+        FaultKind::TooMany { .. } => "check the count; a frame of that size is outside what this tool checks".into(),
+        FaultKind::ForceCount { .. } => {
+            "give one force for each floor from the lowest to the roof; a floor without force takes \"0 kN\"".into()
+        }
+        FaultKind::RangeLength { .. } => "write [low, high], or a single value to fix it".into(),
+        FaultKind::RangeReversed { low, high } => format!("write [{high}, {low}]"),
+        FaultKind::Select(error) => error.help(),
+        FaultKind::Unsized { members, .. } => format!(
+            "add a [[{members}]] table for it, or begin with one for \"all\" and let later tables replace parts of it"
+        ),
+        FaultKind::BeamArea => {
+            "leave it out: floors are taken as rigid in their own plane, so beams do not change length".into()
+        }
+        FaultKind::NoLoad => THREE_WAYS.into(),
+        FaultKind::StoreyShear { .. } => {
+            "the shear of a storey is the sum of the forces at its top floor and above, to the right; load from the other side follows by symmetry of signs".into()
+        }
+        FaultKind::Choice { typed, allowed } => choice(typed, allowed),
+        FaultKind::SpringNeedsInertia => {
+            "give sizes.end_column_inertia and material.modulus, or state the spring as sizes.foot_spring, a ratio to 4 E I_c/h of its column".into()
+        }
+        FaultKind::Frame(FrameFault::NoLoad) => THREE_WAYS.into(),
+        FaultKind::Frame(_) => "check the numbers of the frame and their units".into(),
+    }
+}
+
+/// The three forms of the table `[lateral]`.
+pub(super) const THREE_WAYS: &str = "write [lateral] with floors = [\"40 kN\", \"60 kN\"] from the lowest floor up, or base_shear = \"900 kN\" with shape = \"triangular\", or pressure = \"1.2 kPa\" with tributary = \"6 m\"";
+
+fn unknown_key(key: &str, suggestion: Option<&str>, known: &[String]) -> String {
+    match suggestion {
+        Some(place) if place.contains(' ') => format!("`{key}` belongs {place}"),
+        Some(better) => format!("did you mean `{better}`?"),
+        None => format!("the keys here are {}", known.join(", ")),
+    }
+}
+
+fn wrong_form(expected: &str) -> String {
+    if expected.contains("double brackets") {
+        return "each size is a table of its own, headed by the name in double brackets".into();
+    }
+    match expected {
+        "text in quotes" => "put the value in quotes".into(),
+        "a number without quotes" => "leave the quotes out; this value has no unit".into(),
+        "a whole number" => "write a whole number without quotes, such as 3".into(),
+        _ => format!("write {expected}"),
+    }
+}
+
+fn choice(typed: &str, allowed: &[&str]) -> String {
+    let typed = typed.trim().to_lowercase();
+    let near = allowed.iter().min_by_key(|word| strsim::damerau_levenshtein(word, &typed));
+    match near.filter(|word| strsim::damerau_levenshtein(word, &typed) <= 2) {
+        Some(word) => format!("did you mean \"{word}\"?"),
+        None => format!("write {}", quoted(allowed)),
+    }
+}

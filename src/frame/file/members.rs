@@ -1,0 +1,228 @@
+//! Known sizes: the tables `[[columns]]` and `[[beams]]`, the later replacing the earlier member by member.
+
+use super::fault::{FaultKind, FileFault};
+use super::scalar::Scalar;
+use super::select;
+use super::source::{Need, Source, require};
+use super::warning::{FileWarning, SIDE, WarningKind};
+use super::written::{BeamsWritten, ColumnsWritten, Maybe, RectangleWritten};
+use super::{Echo, grid::Grid};
+use crate::frame::{Section, bay_name, line_name};
+use crate::units::Dimension;
+use std::ops::Range;
+use toml::Spanned;
+
+/// Members of one kind, sized.
+#[derive(Debug)]
+pub(super) struct Members {
+    /// In the order of [`crate::frame::FrameParts`].
+    pub sections: Vec<Section>,
+    pub echo: Vec<Echo>,
+    pub warnings: Vec<FileWarning>,
+}
+
+/// One table as checked.
+struct Table {
+    levels: Vec<bool>,
+    places: Vec<bool>,
+    section: Section,
+    /// The factor as typed, where it is stated.
+    factor: Option<(f64, String)>,
+    span: Range<usize>,
+    echo: Echo,
+}
+
+/// Checks all `[[columns]]` tables.
+pub(super) fn columns(source: Source, tables: &[Spanned<ColumnsWritten>], grid: &Grid) -> Result<Members, FileFault> {
+    let lines = grid.bays.lengths.len() + 1;
+    let storeys = grid.storeys.lengths.len();
+    let mut warnings = Vec::new();
+    let mut checked = Vec::new();
+    for written in tables {
+        let table = written.get_ref();
+        let levels = selected(source, &table.storeys, |text| select::levels(text, storeys, "storey"))?;
+        let places = selected(source, &table.lines, |text| select::lines(text, lines))?;
+        let (mut section, mut typed) = column_size(source, table, written.span(), &mut warnings)?;
+        let factor = factor(source, &table.stiffness_factor, Need::Positive)?;
+        scale(&mut section, &mut typed, &factor);
+        let what = format!("columns, storeys {}, lines {}", levels.1, places.1);
+        let echo = Echo { what, typed };
+        checked.push(Table { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+    }
+    let name = |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
+    assign(checked, "columns", name, warnings)
+}
+
+/// Checks all `[[beams]]` tables.
+pub(super) fn beams(source: Source, tables: &[Spanned<BeamsWritten>], grid: &Grid) -> Result<Members, FileFault> {
+    let bays = grid.bays.lengths.len();
+    let floors = grid.storeys.lengths.len();
+    let mut warnings = Vec::new();
+    let mut checked = Vec::new();
+    for written in tables {
+        let table = written.get_ref();
+        if let Some(area) = &table.area {
+            return Err(FileFault::new(FaultKind::BeamArea, area.span()));
+        }
+        let levels = selected(source, &table.floors, |text| select::levels(text, floors, "floor"))?;
+        let places = selected(source, &table.bays, |text| select::bays(text, bays))?;
+        let (mut section, mut typed) = beam_size(source, table, written.span(), &mut warnings)?;
+        let factor = factor(source, &table.stiffness_factor, Need::ZeroOrMore)?;
+        scale(&mut section, &mut typed, &factor);
+        let what = format!("beams, floors {}, bays {}", levels.1, places.1);
+        let echo = Echo { what, typed };
+        checked.push(Table { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+    }
+    let name = |index: usize| format!("the beam of floor {} in bay {}", index / bays + 1, bay_name(index % bays));
+    assign(checked, "beams", name, warnings)
+}
+
+/// Flags of a selection and the words it was made with; everything where it is left out.
+fn selected(
+    source: Source,
+    written: &Maybe<Scalar>,
+    read: impl Fn(&str) -> Result<Vec<bool>, select::SelectError>,
+) -> Result<(Vec<bool>, String), FileFault> {
+    let (text, span) = match written {
+        Some(value) => (source.typed(value.span()), value.span()),
+        None => ("all".into(), 0..0),
+    };
+    read(&text).map(|flags| (flags, text)).map_err(|error| FileFault::new(error, span))
+}
+
+const SIZE_HELP: &str = "each table states the whole size of the members it selects: add inertia = \"9e-4 m4\" or rectangle = { width = \"400 mm\", depth = \"600 mm\" }";
+
+fn column_size(
+    source: Source,
+    table: &ColumnsWritten,
+    span: Range<usize>,
+    warnings: &mut Vec<FileWarning>,
+) -> Result<(Section, String), FileFault> {
+    let keep_one = |second: &Spanned<Scalar>, name| {
+        let first = table.rectangle.as_ref().map_or(0..0, Spanned::span);
+        conflict("rectangle", name, "a rectangle gives both inertia and area: keep it, or inertia with area", first, second.span())
+    };
+    match (&table.rectangle, &table.inertia, &table.area) {
+        (Some(_), Some(inertia), _) => Err(keep_one(inertia, "inertia")),
+        (Some(_), None, Some(area)) => Err(keep_one(area, "area")),
+        (Some(rectangle), None, None) => {
+            let ([width, depth], typed) = sides(source, rectangle, warnings)?;
+            Ok((Section { inertia: width * depth * depth * depth / 12.0, area: Some(width * depth) }, typed))
+        }
+        (None, inertia, area) => {
+            let inertia = require(inertia, span, "the size of these columns", SIZE_HELP)?;
+            let mut typed = format!("inertia {}", source.typed(inertia.span()));
+            let mut section = Section { inertia: source.positive(inertia, Dimension::Inertia)?, area: None };
+            if let Some(area) = area {
+                section.area = Some(source.positive(area, Dimension::Area)?);
+                typed += &format!(", area {}", source.typed(area.span()));
+            }
+            Ok((section, typed))
+        }
+    }
+}
+
+fn beam_size(
+    source: Source,
+    table: &BeamsWritten,
+    span: Range<usize>,
+    warnings: &mut Vec<FileWarning>,
+) -> Result<(Section, String), FileFault> {
+    match (&table.rectangle, &table.inertia) {
+        (Some(first), Some(second)) => {
+            Err(conflict("rectangle", "inertia", "a rectangle gives the inertia: keep one of the two", first.span(), second.span()))
+        }
+        (Some(rectangle), None) => {
+            let ([width, depth], typed) = sides(source, rectangle, warnings)?;
+            Ok((Section { inertia: width * depth * depth * depth / 12.0, area: None }, typed))
+        }
+        (None, inertia) => {
+            let inertia = require(inertia, span, "the size of these beams", SIZE_HELP)?;
+            if let Ok(0.0) = source.quantity(inertia, Dimension::Inertia) {
+                let needed = "an inertia must be more than 0; a beam that carries no moment takes stiffness_factor = 0";
+                return Err(source.out_of_range(inertia.span(), needed));
+            }
+            let typed = format!("inertia {}", source.typed(inertia.span()));
+            Ok((Section { inertia: source.positive(inertia, Dimension::Inertia)?, area: None }, typed))
+        }
+    }
+}
+
+fn conflict(first: &'static str, second: &'static str, help: &'static str, at: Range<usize>, span: Range<usize>) -> FileFault {
+    FileFault::new(FaultKind::Conflict { first, second, help }, span).beside(at, "given here")
+}
+
+/// Width and depth, m, and how they were typed.
+fn sides(
+    source: Source,
+    rectangle: &Spanned<RectangleWritten>,
+    warnings: &mut Vec<FileWarning>,
+) -> Result<([f64; 2], String), FileFault> {
+    let help = "write rectangle = { width = \"400 mm\", depth = \"600 mm\" }, the depth in the frame's plane";
+    let width = require(&rectangle.get_ref().width, rectangle.span(), "the width of the rectangle", help)?;
+    let depth = require(&rectangle.get_ref().depth, rectangle.span(), "the depth of the rectangle", help)?;
+    let mut lengths = [0.0; 2];
+    for (length, (side, name)) in lengths.iter_mut().zip([(width, "the width"), (depth, "the depth")]) {
+        *length = source.positive(side, Dimension::Length)?;
+        warnings.extend(SIDE.check(*length, &format!("{name} of the rectangle"), source, side.span()));
+    }
+    Ok((lengths, format!("rectangle {} x {}", source.typed(width.span()), source.typed(depth.span()))))
+}
+
+fn factor(source: Source, written: &Maybe<Scalar>, need: Need) -> Result<Option<(f64, String)>, FileFault> {
+    let read = |value: &Spanned<Scalar>| Ok((source.number(value, need)?, source.typed(value.span())));
+    written.as_ref().map(read).transpose()
+}
+
+fn scale(section: &mut Section, typed: &mut String, factor: &Option<(f64, String)>) {
+    if let Some((value, text)) = factor {
+        section.inertia *= value;
+        *typed += &format!(", stiffness factor {text}");
+    }
+}
+
+/// Gives every member the section of the last table that selects it.
+fn assign(
+    tables: Vec<Table>,
+    members: &'static str,
+    name: impl Fn(usize) -> String,
+    warnings: Vec<FileWarning>,
+) -> Result<Members, FileFault> {
+    let Some(last) = tables.last() else {
+        return Err(FileFault::new(FaultKind::Unsized { first: name(0), more: 0, members }, 0..0));
+    };
+    let (levels, places) = (last.levels.len(), last.places.len());
+    let mut owners: Vec<Option<usize>> = vec![None; levels * places];
+    let mut warnings = warnings;
+    for (number, table) in tables.iter().enumerate() {
+        let mut lost = None;
+        for index in 0..owners.len() {
+            if table.levels[index / places] && table.places[index % places] {
+                lost = lost.or(owners[index]);
+                owners[index] = Some(number);
+            }
+        }
+        warnings.extend(factor_lost(table, lost.map(|earlier| &tables[earlier])));
+    }
+    let without: Vec<usize> = (0..owners.len()).filter(|index| owners[*index].is_none()).collect();
+    if let Some(first) = without.first() {
+        let kind = FaultKind::Unsized { first: name(*first), more: without.len() - 1, members };
+        return Err(FileFault::new(kind, last.span.clone()));
+    }
+    let unused = |number: usize| !owners.contains(&Some(number));
+    warnings.extend(tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)));
+    let sections = owners.iter().flatten().map(|number| tables[*number].section).collect();
+    Ok(Members { sections, echo: tables.into_iter().map(|table| table.echo).collect(), warnings })
+}
+
+fn factor_lost(table: &Table, replaced: Option<&Table>) -> Option<FileWarning> {
+    let (value, typed) = replaced?.factor.as_ref()?;
+    let lost = table.factor.is_none() && *value != 1.0;
+    lost.then(|| FileWarning::new(WarningKind::FactorLost { earlier: typed.clone() }, table.span.clone()))
+}
+
+fn no_effect(table: &Table, members: &'static str) -> FileWarning {
+    let selects = table.levels.contains(&true) && table.places.contains(&true);
+    let kind = if selects { WarningKind::Overridden { members } } else { WarningKind::SelectsNothing };
+    FileWarning::new(kind, table.span.clone())
+}

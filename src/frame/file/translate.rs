@@ -1,0 +1,117 @@
+//! From the messages of the TOML reader to the faults of a frame file.
+
+use super::fault::{FaultKind, FileFault};
+use super::locate;
+use std::ops::Range;
+
+/// Tables of the file and their keys, to tell where a misplaced key belongs.
+const HOMES: &[(&str, &[&str])] = &[
+    ("before the first [table], at the top of the file", &["title", "report_units", "within"]),
+    ("in the table [grid]", &["storeys", "bays"]),
+    ("in the table [feet]", &["fixity"]),
+    ("in the table [material]", &["modulus"]),
+    ("in the table [lateral]", &["base_shear", "shape", "pressure", "tributary"]),
+    ("in a table [[columns]] or [[beams]]", &["inertia", "rectangle", "stiffness_factor"]),
+    (
+        "in the table [sizes]",
+        &["beam_to_column", "interior_to_end", "tier", "taper", "beam_taper", "roof_beam", "span_power", "scatter"],
+    ),
+    ("in the table [sizes]", &["foot_spring", "end_column_inertia", "area_per_inertia"]),
+    ("inside { spring = \"150 MN m/rad\" }, the value of fixity in the table [feet]", &["spring"]),
+];
+
+/// The fault that `error` speaks of.
+pub(super) fn translate(error: &toml::de::Error, text: &str) -> FileFault {
+    let span = clamp(error.span().unwrap_or(text.len()..text.len()), text);
+    let message = error.message();
+    if message == "duplicate key" {
+        return duplicate(text, span);
+    }
+    if message.contains("number overflowed") {
+        let typed = text[span.clone()].into();
+        return FileFault::new(crate::units::UnitError::Overflow { text: typed }, span);
+    }
+    if let Some(rest) = message.strip_prefix("unknown field ") {
+        return FileFault::new(unknown_key(rest), span);
+    }
+    if let Some((found, expected)) = message.strip_prefix("invalid type: ").and_then(|rest| rest.split_once(", expected ")) {
+        return FileFault::new(FaultKind::WrongForm { found: form(found), expected: due(expected) }, span);
+    }
+    syntax(message, text, span)
+}
+
+fn clamp(span: Range<usize>, text: &str) -> Range<usize> {
+    let floor = |mut at: usize| {
+        at = at.min(text.len());
+        while !text.is_char_boundary(at) {
+            at -= 1;
+        }
+        at
+    };
+    floor(span.start)..floor(span.end.max(span.start))
+}
+
+fn duplicate(text: &str, span: Range<usize>) -> FileFault {
+    let key = text[span.clone()].trim_matches(['"', '\'']).to_string();
+    let first = locate::earlier_key(text, &key, span.start);
+    let fault = FileFault::new(FaultKind::DuplicateKey { key }, span);
+    match first {
+        Some(first) => fault.beside(first, "given here first"),
+        None => fault,
+    }
+}
+
+/// Reads `` `key`, expected one of `a`, `b` `` as serde writes it.
+fn unknown_key(rest: &str) -> FaultKind {
+    let mut names = rest.split('`').skip(1).step_by(2).map(String::from);
+    let key = names.next().unwrap_or_default();
+    if key.starts_with("$__toml_private") {
+        return FaultKind::WrongForm { found: "a date".into(), expected: "a text in quotes or a table".into() };
+    }
+    let known: Vec<_> = names.filter(|name| name != "area" || !rest.contains("`floors`")).collect();
+    let near = known.iter().min_by_key(|name| distance(name, &key)).filter(|name| distance(name, &key) <= 2 + key.len() / 6);
+    let home = || HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| (*place).to_string());
+    let suggestion = home().or_else(|| near.cloned());
+    FaultKind::UnknownKey { key, suggestion, known }
+}
+
+fn distance(known: &str, typed: &str) -> usize {
+    let us = |word: &str| word.to_lowercase().replace('-', "_").replace("storie", "storey").replace("story", "storey");
+    strsim::damerau_levenshtein(&us(known), &us(typed))
+}
+
+fn form(found: &str) -> String {
+    let article = |name: &str| format!("the {name}");
+    match found {
+        "map" => "a table".into(),
+        "sequence" => "a list".into(),
+        _ if found.starts_with("boolean") => found.replacen("boolean ", "", 1),
+        _ if found.starts_with("string ") => article(&found.replacen("string", "text", 1)),
+        _ if found.starts_with("floating point") => article(&found.replacen("floating point", "number", 1)),
+        _ if found.starts_with("integer") => article(&found.replacen("integer", "number", 1)),
+        _ => found.into(),
+    }
+}
+
+fn due(expected: &str) -> String {
+    if expected == "a string" { "text in quotes".into() } else { expected.into() }
+}
+
+/// A text that is no TOML: the usual slips told apart.
+fn syntax(message: &str, text: &str, span: Range<usize>) -> FileFault {
+    let line_start = text[..span.start].rfind('\n').map_or(0, |at| at + 1);
+    let line = text[line_start..].lines().next().unwrap_or_default();
+    let kind = |message: String, hint| FaultKind::Syntax { message, hint };
+    let hint = if message.contains("quote") || message.contains("basic string") || message.contains("literal string") {
+        "a text begins and ends with a quote on the same line; inches inside it are written \\\" or in, as in \"12'-6\\\"\" or \"150 in\""
+    } else if message.contains("array") || message.contains("`]`") {
+        "a list is written [\"7.2 m\", \"8.4 m\"], with a comma between entries and a closing bracket"
+    } else if message.contains("table") || message.contains("`}`") {
+        "a table header is written [grid], a table in one line { count = 3, width = \"7.2 m\" }"
+    } else if line.contains('=') {
+        "a line reads key = value; a value with a unit stands in quotes, as in modulus = \"30 GPa\""
+    } else {
+        "a line is a [table], a key = value or a # comment"
+    };
+    FileFault::new(kind(format!("the file cannot be read: {message}"), hint), span)
+}

@@ -1,0 +1,5 @@
+//! Elimination: symmetric systems whose unknowns stand in levels, each coupled to its neighbours only.
+
+mod block_tridiagonal;
+
+pub use block_tridiagonal::{BlockTridiagonal, Singular, Solution};

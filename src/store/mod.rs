@@ -1,0 +1,9 @@
+//! The only access to the disk: reading with a size limit, and report folders that appear whole or not at all.
+
+mod fault;
+mod folder;
+mod read;
+
+pub use fault::StoreFault;
+pub use folder::ReportFolder;
+pub use read::{INPUT_LIMIT, read_text, write_new};
