@@ -1,8 +1,8 @@
 //! Scenes for the figure tests: frames of many shapes with forces that satisfy statics.
 
 use swaybound::report::figure::{
-    Cell, Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series,
-    Spread, SpreadRow, Svg, colour_limit,
+    Cell, Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, QUICK_METHODS,
+    Series, Spread, SpreadRow, Svg, colour_limit,
 };
 use swaybound::units::ReportUnits;
 
@@ -155,6 +155,59 @@ pub fn spread() -> Spread {
         measure: "Storey error of column design moments.".into(),
         rows: QUICK.iter().enumerate().map(row).collect(),
     }
+}
+
+/// Uneven bays and storeys, forces of both signs, feet and kip, long names, large and small numbers.
+pub fn hard() -> Vec<(&'static str, Svg)> {
+    let grid = Grid {
+        bays: vec![2.0, 12.3456, 3.048, 9.0],
+        storeys: vec![8.0, 2.2, 3.6576, 3.0, 6.0],
+        feet: FootKind::Sprung,
+        lateral: vec![0.0, -1.0e6, 2.0e9, 3.0, 45.6e3],
+        length: ReportUnits::Us.length(),
+        force: ReportUnits::Us.force(),
+    };
+    let title =
+        "A frame with a very long title that no engineer would write but somebody surely will, line 14 and line 15";
+    let mut bars = elevation(5, 4);
+    bars.grid = grid.clone();
+    bars.title = title.into();
+    bars.limit = 10.0;
+    let mut bending = diagram(5, 4);
+    bending.title = title.into();
+    bending.exact = exact(&grid);
+    bending.quick = None;
+    bending.grid = grid.clone();
+    bending.unit = ReportUnits::Us.moment();
+    let mut shares = profiles(5, 4);
+    shares.quantity = "share of storey shear, resisted by the columns of this line".into();
+    shares.unit = swaybound::units::Unit { symbol: "%", si: 0.01 };
+    shares.storeys = grid.storeys;
+    for (index, panel) in shares.panels.iter_mut().enumerate() {
+        for (series, method) in panel.series.iter_mut().zip(QUICK_METHODS) {
+            series.method = method.into();
+            series.name = format!("{method}, by a long and winding name");
+            series.values = (0..5).map(|storey| 0.31 - 0.1 * index as f64 + 0.01 * storey as f64).collect();
+        }
+    }
+    let mut all_methods = spread();
+    all_methods.title = title.into();
+    all_methods.rows = QUICK_METHODS
+        .iter()
+        .map(|method| SpreadRow {
+            method: (*method).into(),
+            name: format!("{method} method with tributary widths"),
+            low: -1234.5,
+            median: 0.0,
+            high: -1.0,
+        })
+        .collect();
+    vec![
+        ("hard elevation", bars.svg()),
+        ("hard moments", bending.svg()),
+        ("hard profiles", shares.svg()),
+        ("hard spread", all_methods.svg()),
+    ]
 }
 
 /// Every figure for a frame of this shape, by name.

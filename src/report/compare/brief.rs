@@ -12,7 +12,7 @@ const MOST_ROWS: usize = 20;
 /// Builds the terminal report.
 pub fn brief(findings: &Findings) -> Document {
     let (frame, comparison) = (findings.frame(), findings.comparison);
-    let mut report = Document::new(frame.title());
+    let mut report = Document::new(words::title(frame));
     report.subtitle(words::outline(frame));
     if let Some(notice) = words::size_notice(frame) {
         report.paragraph(notice);

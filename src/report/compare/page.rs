@@ -19,7 +19,7 @@ const SHEET_LIMIT: usize = 1000;
 /// Builds the page. `figures` stand in the order of [`super::charts`].
 pub fn page(findings: &Findings, record: &Record, figures: Vec<Figure>) -> Document {
     let frame = findings.frame();
-    let mut report = Document::new(frame.title());
+    let mut report = Document::new(words::title(frame));
     report.subtitle(words::outline(frame));
     if let Some(notice) = words::size_notice(frame) {
         report.paragraph(notice);

@@ -3,7 +3,7 @@
 use crate::compare::Comparison;
 use crate::compare::places::{Class, Kind, Place};
 use crate::compare::verdict::{Extreme, State as Standing, Subject, Verdict};
-use crate::exact::{slope_deflection, stiffness};
+use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame, SizeSource};
 use crate::report::number::{percent, quantity};
 use crate::report::{Sentence, State, say};
@@ -57,7 +57,15 @@ pub(super) fn places(places: &[Place]) -> String {
     places.iter().filter_map(words).collect::<Vec<_>>().join("; ")
 }
 
-/// The first line of a report on assumed sizes.
+/// Title of a report: it says at once where sizes are only assumed.
+pub(super) fn title(frame: &Frame) -> String {
+    match frame.size_source() {
+        SizeSource::Stated => frame.title().into(),
+        _ => format!("{}: member sizes assumed", frame.title()),
+    }
+}
+
+/// What assumed sizes mean for the report.
 pub(super) fn size_notice(frame: &Frame) -> Option<Sentence> {
     let rest = match frame.size_source() {
         SizeSource::Stated => return None,
@@ -96,18 +104,23 @@ pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
         ", in percent of the largest exact value of the same storey (at least 5 % of the frame's largest). \
          Negative is short: the unsafe side for strength.",
     );
-    if comparison.axial_strain_missing {
-        sentence = sentence.then(format!(
-            " This frame is tall (height over width {:.1}, {} storeys), and column axial strain is left out of the \
-             measure: give column areas for a better one.",
-            frame.height() / frame.width(),
-            frame.storeys()
-        ));
+    if let Some(reason) = &comparison.no_stiffness {
+        sentence = sentence.then(format!(" The stiffness analysis was not run: {reason}."));
     }
-    match &comparison.no_stiffness {
-        Some(reason) => sentence.then(format!(" The stiffness analysis was not run: {reason}.")),
-        None => sentence,
+    if !comparison.axial_strain_missing {
+        return sentence;
     }
+    let remedy = match &comparison.no_stiffness {
+        Some(Unsolvable::RelativeSizes) => "give end_column_inertia in [sizes]",
+        Some(_) => "give every column an area",
+        None => "leave --exact at auto",
+    };
+    sentence.then(format!(
+        " This frame is tall or slender ({} storeys, height over width {:.1}), and the measure leaves out column axial \
+         strain: for a better one, {remedy}.",
+        frame.storeys(),
+        frame.height() / frame.width()
+    ))
 }
 
 /// The finding on one subject in one sentence: the best method and how it stands.

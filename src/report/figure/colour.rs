@@ -20,7 +20,7 @@ pub(super) const PALE: Colour = Colour(0xF2, 0xF2, 0xF2);
 /// Colours of series: blue, vermillion, bluish green, reddish purple, black.
 ///
 /// # References
-/// Okabe and Ito, Color Universal Design, 2008: the colours of their set that reach 3:1 on white or come closest.
+/// Okabe and Ito, Color Universal Design, 2008: those of their eight colours that reach a contrast of 3:1 on white.
 pub const SERIES: [Colour; 5] = [
     Colour(0x00, 0x72, 0xB2),
     Colour(0xD5, 0x5E, 0x00),

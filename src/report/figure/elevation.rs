@@ -6,7 +6,7 @@ use super::colour_bar::colour_bar;
 use super::font::text_width;
 use super::grid::Grid;
 use super::number::percent;
-use super::panel::{heading, heading_height, paragraph};
+use super::panel::{heading, paragraph};
 use super::plan::{MARGIN, Plan, Room};
 use super::plan_marks::surroundings;
 use super::svg::finish;
@@ -60,17 +60,16 @@ pub fn colour_limit(errors: impl IntoIterator<Item = f64>) -> f64 {
 
 impl Figure for Elevation {
     fn svg(&self) -> Svg {
-        let draft = Plan::new(&self.grid, Room { top: 0.0, side: (0.0, 0.0), above: 0.0 });
-        let bars = Bars::of(&draft);
-        let top = heading_height(&self.title, draft.width);
-        let room = Room { top, side: (0.0, bars.column / 2.0 + 4.0), above: bars.beam / 2.0 };
-        let plan = Plan::new(&self.grid, room);
+        let bars = Bars::of(&Plan::new(&self.grid, Room::default()));
+        let side = bars.column / 2.0 + 4.0;
+        let plan = Plan::new(&self.grid, Room { sides: (side, side), above: bars.beam / 2.0 });
         let mut canvas = Canvas::default();
-        heading(&mut canvas, &self.title, draft.width);
+        let top = heading(&mut canvas, &self.title, plan.width);
+        let plan = plan.lowered(top);
         let half = if plan.bay < 14.0 { 0.0 } else { bars.column / 2.0 + 2.5 };
         let below = surroundings(&mut canvas, &self.grid, &plan, half);
-        self.draw_columns(&mut canvas, &plan, bars);
         self.draw_beams(&mut canvas, &plan, bars);
+        self.draw_columns(&mut canvas, &plan, bars);
         draw_joints(&mut canvas, &plan, bars);
         let bottom = self.key(&mut canvas, &plan, below + 8.0);
         self.note_missing(&mut canvas);
@@ -88,7 +87,7 @@ struct Bars {
 
 impl Bars {
     fn of(plan: &Plan) -> Self {
-        let column = (0.42 * plan.bay).min(0.9 * plan.storey).clamp(1.5, 30.0);
+        let column = (0.48 * plan.bay).min(0.9 * plan.storey).clamp(1.5, 30.0);
         let beam = (0.42 * plan.storey).clamp(1.0, 16.0);
         Self { column, beam, outlined: column >= 5.0 && beam >= 4.0 }
     }
@@ -129,11 +128,12 @@ impl Elevation {
 
     fn draw_columns(&self, canvas: &mut Canvas, plan: &Plan, bars: Bars) {
         let left = bars.column / 2.0;
+        let joint = if bars.outlined { bars.beam / 2.0 } else { 0.0 };
         for (line, x) in plan.x.iter().enumerate() {
             let cells: Vec<Cell> = (0..self.grid.storeys.len()).map(|storey| self.column(storey, line)).collect();
             for (first, last, paint) in self.runs(&cells) {
-                let foot = if first == 0 { plan.ground() } else { plan.y[first] - bars.beam / 2.0 };
-                let head = plan.y[last + 1] + bars.beam / 2.0;
+                let foot = if first == 0 { plan.ground() } else { plan.y[first] - joint };
+                let head = plan.y[last + 1] + joint;
                 draw_bar(canvas, (x - left, head), (bars.column, foot - head), paint, bars);
                 if first == last {
                     label(canvas, (x - left, head), (bars.column, foot - head), cells[first], paint);

@@ -103,6 +103,12 @@ mod tests {
     #[test]
     fn wrapped_lines_fit() {
         let lines = wrap("one two three four Pneumonoultramicroscopic", 12.0, false, 70.0);
-        assert!(lines.len() >= 4 && lines.iter().all(|line| text_width(line, 12.0, false) <= 70.0), "{lines:?}");
+        assert_eq!(lines[..2], ["one two", "three four"]);
+        assert!(
+            lines.len() == 3
+                && lines[2].ends_with('…')
+                && lines.iter().all(|line| text_width(line, 12.0, false) <= 70.0),
+            "{lines:?}"
+        );
     }
 }

@@ -5,8 +5,8 @@ use super::colour::{Colour, INK};
 use super::grid::Grid;
 use super::legend::legend;
 use super::look::{Look, look};
-use super::number::three_figures;
-use super::panel::{heading, heading_height, paragraph};
+use super::number::{rounded, three_figures};
+use super::panel::{heading, paragraph};
 use super::place::Taken;
 use super::plan::{LINE, MARGIN, Plan, Room};
 use super::plan_marks::surroundings;
@@ -16,10 +16,18 @@ use crate::units::Unit;
 
 /// Light fill of the exact diagram.
 const EXACT_FILL: Colour = Colour(0xD9, 0xD9, 0xD9);
-/// Largest ordinate over the mean bay width (columns) and over the lowest storey height (beams).
-const REACH: f64 = 0.40;
-/// Labels besides the largest ones are tried for this many members at most.
-const LABELLED: usize = 120;
+/// Largest ordinate of a column over the narrowest bay.
+const COLUMN_REACH: f64 = 0.42;
+/// Largest ordinate of a beam over the lowest storey.
+const BEAM_REACH: f64 = 0.48;
+/// In frames with up to this many members both ends are labelled, in larger ones the end that governs.
+const BOTH_LABELLED: usize = 30;
+/// Frames with more members get the two largest labels only.
+const MOST_LABELLED: usize = 400;
+/// Moments below this share of the largest get no label.
+const LEAST_LABELLED: f64 = 0.02;
+/// Frames with more members get one outline for each line and floor, not for each member.
+const MANY_MEMBERS: usize = 3000;
 
 /// The moments at the two ends of each member of a frame.
 ///
@@ -77,12 +85,25 @@ struct Span {
     towards: [Point; 2],
 }
 
+/// Members in one line, end to end.
+type Chain = Vec<Span>;
+
 impl Span {
     fn tips(&self, scale: f64) -> [Point; 2] {
         [0, 1].map(|end| {
             let reach = scale * self.moments[end];
             (self.ends[end].0 + reach * self.towards[end].0, self.ends[end].1 + reach * self.towards[end].1)
         })
+    }
+
+    fn is_beam(&self) -> bool {
+        self.towards[0].0 == 0.0
+    }
+
+    /// Both moments without sign. Moments that differ only by rounding count as equal, so that the order of labels is
+    /// that of the members.
+    fn sizes(&self) -> [f64; 2] {
+        self.moments.map(|moment| format!("{:.6e}", moment.abs()).parse().unwrap_or(0.0))
     }
 
     fn largest(&self) -> f64 {
@@ -93,20 +114,18 @@ impl Span {
 impl Figure for MomentDiagram {
     fn svg(&self) -> Svg {
         let mut canvas = Canvas::default();
-        let draft = Plan::new(&self.grid, Room { top: 0.0, side: (0.0, 0.0), above: 0.0 });
-        let top = heading_height(&self.title, draft.width);
-        let above = REACH * draft.storey + LINE;
-        let plan = Plan::new(&self.grid, Room { top, side: (0.0, REACH * draft.bay + 34.0), above });
-        heading(&mut canvas, &self.title, draft.width);
+        let draft = Plan::new(&self.grid, Room::default());
+        let scale = self.scale(&draft);
+        let plan = Plan::new(&self.grid, self.room(&draft, scale));
+        let top = heading(&mut canvas, &self.title, plan.width);
+        let plan = plan.lowered(top);
         let half = (0.3 * plan.bay).min(9.0);
         let below = surroundings(&mut canvas, &self.grid, &plan, if half < 4.0 { 0.0 } else { half });
-        let exact = self.spans(&self.exact, &plan);
-        let quick = self.quick.as_ref().map(|quick| self.spans(&quick.moments, &plan)).unwrap_or_default();
-        let largest = exact.iter().chain(&quick).map(Span::largest).fold(0.0, f64::max);
-        let scale = if largest > 0.0 { REACH * plan.bay.min(plan.storey * 1.6) / largest } else { 0.0 };
+        let exact = self.chains(&self.exact, &plan);
+        let quick = self.quick.as_ref().map(|quick| self.chains(&quick.moments, &plan)).unwrap_or_default();
         self.draw(&mut canvas, &exact, &quick, scale);
-        let labels = Labels { canvas: &mut canvas, taken: Taken::default(), unit: self.unit, scale };
-        labels.print(&exact, &quick, &plan);
+        let (exact, quick) = (exact.concat(), quick.concat());
+        Labels { canvas: &mut canvas, taken: Taken::default(), unit: self.unit, scale }.print(&exact, &quick, &plan);
         self.note_missing(&mut canvas, exact.len());
         let bottom = self.key(&mut canvas, &plan, below + 6.0, scale);
         finish(canvas, &self.title, &self.description, plan.width, bottom + MARGIN)
@@ -114,45 +133,81 @@ impl Figure for MomentDiagram {
 }
 
 impl MomentDiagram {
-    /// Every member whose moments are finite.
-    fn spans(&self, moments: &EndMoments, plan: &Plan) -> Vec<Span> {
-        let (lines, bays) = (self.grid.lines(), self.grid.bays.len());
-        let column = |(at, moments): (usize, &[f64; 2])| {
-            let (storey, line) = (at / lines, at % lines);
+    fn all_chains(&self, plan: &Plan) -> Vec<Chain> {
+        let mut chains = self.chains(&self.exact, plan);
+        chains.extend(self.quick.iter().flat_map(|quick| self.chains(&quick.moments, plan)));
+        chains
+    }
+
+    /// CSS px per N m, so that no ordinate outgrows its bay or storey.
+    fn scale(&self, plan: &Plan) -> f64 {
+        let spans = self.all_chains(plan).concat();
+        let largest =
+            |beams| spans.iter().filter(|span| span.is_beam() == beams).map(Span::largest).fold(0.0, f64::max);
+        let fit = |room: f64, moment: f64| if moment > 0.0 { room / moment } else { f64::INFINITY };
+        let scale = fit(COLUMN_REACH * plan.bay, largest(false)).min(fit(BEAM_REACH * plan.storey, largest(true)));
+        if scale.is_finite() { scale } else { 0.0 }
+    }
+
+    /// Room for the diagrams that stand out beyond the end lines and above the roof, and for their labels.
+    fn room(&self, plan: &Plan, scale: f64) -> Room {
+        let (first, last) = (plan.x[0], plan.x[plan.x.len() - 1]);
+        let roof = plan.y[plan.y.len() - 1];
+        let mut room = Room::default();
+        for span in self.all_chains(plan).concat() {
+            for (x, y) in span.tips(scale) {
+                room.sides = (room.sides.0.max(first - x), room.sides.1.max(x - last));
+                room.above = room.above.max(roof - y);
+            }
+        }
+        Room { sides: (room.sides.0 + 20.0, room.sides.1 + 20.0), above: room.above + LINE }
+    }
+
+    /// The columns of each line from the ground, and the beams of each floor from the left; a member whose moments are
+    /// not finite breaks its chain.
+    fn chains(&self, moments: &EndMoments, plan: &Plan) -> Vec<Chain> {
+        let (storeys, lines, bays) = (self.grid.storeys.len(), self.grid.lines(), self.grid.bays.len());
+        let column = |storey: usize, line: usize| {
             let x = plan.x[line];
             let ends = [(x, plan.y[storey]), (x, plan.y[storey + 1])];
-            Span { ends, moments: *moments, towards: [(1.0, 0.0), (-1.0, 0.0)] }
+            let moments = *moments.columns.get(storey * lines + line)?;
+            Some(Span { ends, moments, towards: [(1.0, 0.0), (-1.0, 0.0)] })
         };
-        let beam = |(at, moments): (usize, &[f64; 2])| {
-            let (floor, bay) = (at / bays, at % bays);
+        let beam = |floor: usize, bay: usize| {
             let y = plan.y[floor + 1];
             let ends = [(plan.x[bay], y), (plan.x[bay + 1], y)];
-            Span { ends, moments: *moments, towards: [(0.0, 1.0), (0.0, -1.0)] }
+            let moments = *moments.beams.get(floor * bays + bay)?;
+            Some(Span { ends, moments, towards: [(0.0, 1.0), (0.0, -1.0)] })
         };
-        let storeys = self.grid.storeys.len();
-        let columns = moments.columns.iter().take(storeys * lines).enumerate().map(column);
-        let beams = moments.beams.iter().take(storeys * bays).enumerate().map(beam);
-        columns.chain(beams).filter(|span| span.moments.iter().all(|moment| moment.is_finite())).collect()
+        let columns = (0..lines).map(|line| (0..storeys).map(|storey| column(storey, line)).collect());
+        let beams = (0..storeys).map(|floor| (0..bays).map(|bay| beam(floor, bay)).collect());
+        columns.chain(beams).flat_map(|members: Vec<Option<Span>>| unbroken(&members)).collect()
     }
 
     fn look(&self) -> Option<Look> {
         self.quick.as_ref().map(|quick| look(&quick.method))
     }
 
-    fn draw(&self, canvas: &mut Canvas, exact: &[Span], quick: &[Span], scale: f64) {
-        for span in exact {
-            let [first, second] = span.tips(scale);
-            let corners = vec![span.ends[0], first, second, span.ends[1]];
-            canvas.area(corners, Fill::outlined(EXACT_FILL, INK, 0.9));
+    fn draw(&self, canvas: &mut Canvas, exact: &[Chain], quick: &[Chain], scale: f64) {
+        let ends = |chain: &Chain| chain.first().zip(chain.last()).map(|(first, last)| (first.ends[0], last.ends[1]));
+        let tips = |chain: &Chain| chain.iter().flat_map(|span| span.tips(scale)).collect::<Vec<_>>();
+        for chain in exact {
+            if let Some((start, end)) = ends(chain) {
+                let corners = [vec![start], tips(chain), vec![end]].concat();
+                canvas.area(corners, Fill::outlined(EXACT_FILL, INK, 0.9));
+            }
         }
-        for span in exact {
-            canvas.line(span.ends[0], span.ends[1], Stroke::solid(INK, 1.8));
+        for (start, end) in exact.iter().filter_map(ends) {
+            canvas.line(start, end, Stroke::solid(INK, 1.8));
         }
-        if let Some(look) = self.look() {
-            for span in quick {
-                let [first, second] = span.tips(scale);
-                let outline = vec![span.ends[0], first, second, span.ends[1]];
-                canvas.path(outline, Stroke { width: 1.4, ..Stroke::of(look) });
+        let Some(look) = self.look() else { return };
+        let stroke = Stroke { width: 1.4, ..Stroke::of(look) };
+        let many = self.grid.members() > MANY_MEMBERS;
+        for chain in quick {
+            if many {
+                canvas.path(tips(chain), stroke);
+            } else {
+                chain.iter().for_each(|span| canvas.path(span.tips(scale).to_vec(), stroke));
             }
         }
     }
@@ -177,7 +232,7 @@ impl MomentDiagram {
             for x in [MARGIN, MARGIN + long] {
                 canvas.line((x, middle - 4.0), (x, middle + 4.0), Stroke::solid(INK, 1.2));
             }
-            let words = format!("{} {}", three_figures(moment), self.unit.symbol);
+            let words = format!("{} {}", rounded(moment, 3), self.unit.symbol);
             canvas.words(Words::new(words, (MARGIN + long + 8.0, middle), Anchor::Start));
             y += LINE + 4.0;
         }
@@ -203,58 +258,73 @@ struct Labels<'a> {
 
 impl Labels<'_> {
     fn print(mut self, exact: &[Span], quick: &[Span], plan: &Plan) {
-        for span in exact.iter().chain(quick) {
-            let [first, second] = span.tips(self.scale);
-            self.taken.line(span.ends[0], span.ends[1]);
-            self.taken.line(first, second);
-            self.taken.line(span.ends[0], first);
-            self.taken.line(span.ends[1], second);
-        }
+        let sizes: Vec<[f64; 2]> = exact.iter().map(Span::sizes).collect();
+        let size = |(span, end): (usize, usize)| sizes[span][end];
         let mut ends: Vec<(usize, usize)> = (0..exact.len()).flat_map(|span| [(span, 0), (span, 1)]).collect();
-        ends.sort_by(|a, b| size(exact, *b).total_cmp(&size(exact, *a)));
-        let is_beam = |end: &&(usize, usize)| exact[end.0].towards[0].0 == 0.0;
-        let largest_beam = ends.iter().find(is_beam).copied();
-        let largest_column = ends.iter().find(|end| !is_beam(end)).copied();
-        let most = if plan.storey < 24.0 || plan.bay < 40.0 { 0 } else { 2 * LABELLED };
-        for end in [largest_column, largest_beam].into_iter().flatten() {
-            let _ = self.label(exact, end, false) || self.label(exact, end, true);
-        }
-        for end in ends.into_iter().take(most) {
-            if Some(end) != largest_beam && Some(end) != largest_column {
-                self.label(exact, end, false);
+        ends.sort_by(|a, b| size(*b).total_cmp(&size(*a)));
+        let of_beam = |end: &&(usize, usize)| exact[end.0].is_beam();
+        let first = [ends.iter().find(|end| !of_beam(end)), ends.iter().find(of_beam)];
+        let first: Vec<_> = first.into_iter().flatten().copied().collect();
+        let roomy = plan.storey >= 30.0 && plan.bay >= 44.0 && exact.len() <= MOST_LABELLED;
+        if roomy {
+            for span in exact.iter().chain(quick) {
+                self.taken.band(span.ends, span.tips(self.scale));
             }
+        }
+        for end in &first {
+            let _ = self.label(exact, *end, false) || self.label(exact, *end, true);
+        }
+        let least = LEAST_LABELLED * first.iter().map(|end| size(*end)).fold(0.0, f64::max);
+        let both = exact.len() <= BOTH_LABELLED;
+        let others = ends.into_iter().filter(|end| !first.contains(end));
+        let wanted = |end: &(usize, usize)| size(*end) > least && (both || governs(sizes[end.0], end.1));
+        for end in others.filter(|end| roomy && wanted(end)) {
+            self.label(exact, end, false);
         }
     }
 
-    /// Tries the places around one end's tip; `over_lines` allows lines beneath.
+    /// Tries the places around one end's tip, then across the axis; `over_lines` allows lines beneath.
+    ///
+    /// Columns' labels read upwards and stay in the column's storey, beams' labels lie and stay in the bay.
     fn label(&mut self, spans: &[Span], (span, end): (usize, usize), over_lines: bool) -> bool {
         let span = &spans[span];
-        let tip = span.tips(self.scale)[end];
-        let along = if end == 0 { 1.0 } else { -1.0 };
+        let (tip, axis) = (span.tips(self.scale)[end], span.ends[end]);
+        let inwards = if end == 0 { 1.0 } else { -1.0 };
         let sign = if span.moments[end] < 0.0 { -1.0 } else { 1.0 };
         let (right, down) = (sign * span.towards[end].0, sign * span.towards[end].1);
         let text = three_figures(self.unit.from_si(span.moments[end].abs()));
-        let column = down == 0.0;
-        for step in [4.0, 9.0, 14.0, 20.0, 0.0, -8.0] {
-            let (at, anchor) = if column {
-                let anchor = if right > 0.0 { Anchor::Start } else { Anchor::End };
-                ((tip.0 + 4.0 * right, tip.1 - along * step), anchor)
-            } else {
-                let anchor = if along > 0.0 { Anchor::Start } else { Anchor::End };
-                ((tip.0 + along * step, tip.1 + 8.0 * down), anchor)
-            };
-            let words = Words::new(text.clone(), at, anchor).halo();
-            if self.taken.claim(&words, over_lines) {
-                self.canvas.words(words);
-                return true;
+        let anchor = if end == 0 { Anchor::Start } else { Anchor::End };
+        let beside = [(tip, 8.0), (axis, -8.0)];
+        for (from, away) in beside {
+            for step in [3.0, 7.0, 12.0, 18.0, 25.0] {
+                let words = if span.is_beam() {
+                    Words::new(text.clone(), (from.0 + inwards * step, from.1 + away * down), anchor)
+                } else {
+                    Words::new(text.clone(), (from.0 + away * right, from.1 - inwards * step), anchor).upright()
+                };
+                let words = words.halo();
+                if self.taken.claim(&words, over_lines) {
+                    self.canvas.words(words);
+                    return true;
+                }
             }
         }
         false
     }
 }
 
-fn size(spans: &[Span], (span, end): (usize, usize)) -> f64 {
-    // Ends that differ only by rounding count as equal, so that the order is that of the members.
-    let moment = spans[span].moments[end].abs();
-    format!("{moment:.6e}").parse().unwrap_or(moment)
+/// Whether this end has the larger moment of its member.
+fn governs(sizes: [f64; 2], end: usize) -> bool {
+    sizes[end] > sizes[1 - end] || (sizes[0] == sizes[1] && end == 0)
+}
+
+/// The runs of members that have moments.
+fn unbroken(members: &[Option<Span>]) -> Vec<Chain> {
+    let fine = |span: &Span| span.moments.iter().all(|moment| moment.is_finite());
+    let known: Vec<Option<Span>> = members.iter().map(|span| span.filter(fine)).collect();
+    known
+        .split(Option::is_none)
+        .map(|run| run.iter().flatten().copied().collect())
+        .filter(|run: &Chain| !run.is_empty())
+        .collect()
 }

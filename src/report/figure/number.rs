@@ -5,11 +5,11 @@ const MINUS: char = '\u{2212}';
 /// A space that does not break, between groups of three digits.
 const GROUP: char = '\u{a0}';
 
-/// `value` to three significant figures, such as `0.0214`, `7.2`, `25`, `1230`, `12 300`; trailing zeros are dropped.
+/// `value` to three significant figures, such as `0.0214`, `7.20`, `25.0`, `1230`, `12 300`.
 ///
-/// A number that is not finite gives an empty text.
+/// Zero gives `0`, a number that is not finite an empty text.
 pub fn three_figures(value: f64) -> String {
-    rounded(value, 3)
+    grouped(&signed(figures(value, 3)))
 }
 
 /// `value` as a whole percent with its sign, such as `+12`, `−7`, `0`.
@@ -23,18 +23,31 @@ pub fn percent(value: f64) -> String {
     if value > 0.0 && whole != "0" { format!("+{whole}") } else { whole }
 }
 
-/// `value` to `figures` significant figures, without trailing zeros after the point.
-pub(super) fn rounded(value: f64, figures: usize) -> String {
+/// `value` to `count` significant figures, without trailing zeros after the point.
+pub(super) fn rounded(value: f64, count: usize) -> String {
+    let text = figures(value, count);
+    let text = if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.').to_owned() } else { text };
+    grouped(&signed(text))
+}
+
+/// As [`rounded`], with a plus sign before positive numbers.
+pub(super) fn rounded_signed(value: f64, count: usize) -> String {
+    let text = rounded(value, count);
+    if value > 0.0 && text != "0" { format!("+{text}") } else { text }
+}
+
+fn figures(value: f64, count: usize) -> String {
     if !value.is_finite() {
         return String::new();
     }
-    let scientific = format!("{:.*e}", figures - 1, value);
+    if value == 0.0 {
+        return "0".to_owned();
+    }
+    let scientific = format!("{:.*e}", count - 1, value);
     let exponent = scientific.split_once('e').and_then(|(_, power)| power.parse::<i32>().ok()).unwrap_or(0);
-    let decimals = (figures as i32 - 1 - exponent).clamp(0, 12) as usize;
+    let decimals = (count as i32 - 1 - exponent).clamp(0, 12) as usize;
     let value = scientific.parse::<f64>().unwrap_or(value);
-    let text = format!("{value:.decimals$}");
-    let text = if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.').to_owned() } else { text };
-    grouped(&signed(text))
+    format!("{value:.decimals$}")
 }
 
 fn signed(text: String) -> String {
@@ -75,20 +88,22 @@ mod tests {
         let cases = [
             (0.0, "0"),
             (-0.0, "0"),
-            (7.2, "7.2"),
-            (25.04, "25"),
+            (7.2, "7.20"),
+            (25.04, "25.0"),
             (-12.34, "−12.3"),
             (999.6, "1000"),
             (1234.0, "1230"),
             (-12_345.0, "−12\u{a0}300"),
             (1.234e6, "1\u{a0}230\u{a0}000"),
             (0.021_37, "0.0214"),
-            (0.099_96, "0.1"),
+            (0.099_96, "0.100"),
         ];
         for (value, text) in cases {
             assert_eq!(three_figures(value), text);
         }
         assert_eq!(three_figures(f64::NAN), "");
+        assert_eq!([7.2, 25.0, -0.5, 0.0, 100.0].map(|value| rounded(value, 3)), ["7.2", "25", "−0.5", "0", "100"]);
+        assert_eq!([2.5, -2.5, 0.0].map(|value| rounded_signed(value, 3)), ["+2.5", "−2.5", "0"]);
     }
 
     #[test]

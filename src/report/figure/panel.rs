@@ -10,17 +10,15 @@ const HEADING_LINE: f64 = 18.0;
 /// Height of a line of a paragraph, CSS px.
 const PARAGRAPH_LINE: f64 = 15.0;
 
-/// Height that `title` takes as a heading on a figure of `width`, CSS px.
-pub(super) fn heading_height(title: &str, width: f64) -> f64 {
-    MARGIN + HEADING_LINE * wrap(title, HEADING, true, width - 2.0 * MARGIN).len() as f64
-}
-
-/// Draws `title` at the top left.
-pub(super) fn heading(canvas: &mut Canvas, title: &str, width: f64) {
-    for (index, line) in wrap(title, HEADING, true, width - 2.0 * MARGIN).into_iter().enumerate() {
+/// Draws `title` at the top left of a figure of `width`; returns the y below.
+pub(super) fn heading(canvas: &mut Canvas, title: &str, width: f64) -> f64 {
+    let lines = wrap(title, HEADING, true, width - 2.0 * MARGIN);
+    let below = MARGIN + HEADING_LINE * lines.len() as f64;
+    for (index, line) in lines.into_iter().enumerate() {
         let at = (MARGIN, MARGIN + HEADING_LINE * (index as f64 + 0.4));
         canvas.words(Words::new(line, at, Anchor::Start).size(HEADING).bold());
     }
+    below
 }
 
 /// Draws quiet words from `(x, y)` (top left corner), no wider than `width`; returns the y below.

@@ -58,6 +58,19 @@ impl Taken {
         self.points.extend((0..=steps).map(at));
     }
 
+    /// Keeps labels off the area between the lines from `from` to `to` at their beginnings and at their ends.
+    pub fn band(&mut self, from: [Point; 2], to: [Point; 2]) {
+        let along = |ends: [Point; 2], share: f64| {
+            (ends[0].0 + share * (ends[1].0 - ends[0].0), ends[0].1 + share * (ends[1].1 - ends[0].1))
+        };
+        let long = f64::max((from[1].0 - from[0].0).abs(), (from[1].1 - from[0].1).abs());
+        let steps = (long / 5.0).ceil().clamp(1.0, 200.0);
+        for step in 0..=steps as usize {
+            let share = step as f64 / steps;
+            self.line(along(from, share), along(to, share));
+        }
+    }
+
     /// Takes the room of `words` if it is free; `over_lines` allows lines beneath, never other labels.
     pub fn claim(&mut self, words: &Words, over_lines: bool) -> bool {
         let rect = Rect::of(words);

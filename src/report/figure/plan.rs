@@ -15,12 +15,10 @@ pub(super) const ARROW: f64 = 30.0;
 pub(super) const LINE: f64 = 15.0;
 
 /// What a figure needs around the frame, CSS px.
-#[derive(Debug, Clone, Copy)]
+#[derive(Debug, Clone, Copy, Default)]
 pub(super) struct Room {
-    /// Below the figure's top edge (the heading's height).
-    pub top: f64,
-    /// Beside the end columns' axes, over the mean bay width, and besides in CSS px.
-    pub side: (f64, f64),
+    /// Left of line A and right of the last line, CSS px.
+    pub sides: (f64, f64),
     /// Above the roof beam's axis, CSS px.
     pub above: f64,
 }
@@ -49,34 +47,40 @@ pub(super) struct Plan {
 }
 
 impl Plan {
-    /// Lays out `grid`.
+    /// Lays out `grid` from the figure's top edge.
     pub fn new(grid: &Grid, room: Room) -> Self {
         let bays = usable(&grid.bays);
         let storeys = usable(&grid.storeys);
         let (across, up) = scales(&bays, &storeys);
         let bays: Vec<f64> = bays.iter().map(|width| width * across).collect();
         let storeys: Vec<f64> = storeys.iter().map(|height| height * up).collect();
-        let side = room.side.0 * mean(&bays) + room.side.1;
         let forces = if grid.lateral.is_empty() { 0.0 } else { ARROW + 6.0 + forces_width(grid) };
         let right_side = storeys_width(grid);
         let frame: f64 = bays.iter().sum();
-        let natural = 2.0 * MARGIN + forces + frame + 2.0 * side + right_side;
+        let natural = 2.0 * MARGIN + forces + room.sides.0 + frame + room.sides.1 + right_side;
         let spare = (LEAST_WIDTH - natural).max(0.0) / 2.0;
         let left = MARGIN + forces + spare;
-        let heads = room.top + 7.0;
+        let heads = 7.0;
         let roof = heads + LINE + room.above;
         let ground = roof + storeys.iter().sum::<f64>();
         Self {
-            x: running(left + side, &bays, 1.0),
+            x: running(left + room.sides.0, &bays, 1.0),
             y: running(ground, &storeys, -1.0),
             left,
-            right: left + frame + 2.0 * side,
+            right: left + room.sides.0 + frame + room.sides.1,
             heads,
             width: natural.max(LEAST_WIDTH),
             bay: least(&bays),
             storey: least(&storeys),
             to_scale: (across / up - 1.0).abs() < 0.01,
         }
+    }
+
+    /// The same below a heading of height `by`.
+    pub fn lowered(mut self, by: f64) -> Self {
+        self.y.iter_mut().for_each(|y| *y += by);
+        self.heads += by;
+        self
     }
 
     /// The ground's y.
@@ -124,7 +128,7 @@ fn usable(lengths: &[f64]) -> Vec<f64> {
 /// CSS px per metre across and up: the same where that leaves both directions readable.
 fn scales(bays: &[f64], storeys: &[f64]) -> (f64, f64) {
     let least_bay = (620.0 / bays.len() as f64).clamp(12.0, 58.0);
-    let least_storey = (1400.0 / storeys.len() as f64).clamp(4.0, 32.0);
+    let least_storey = if storeys.len() > 20 { (1400.0 / storeys.len() as f64).clamp(4.0, 32.0) } else { 46.0 };
     let across = (760.0 / bays.len() as f64).clamp(12.0, 110.0) / mean(bays);
     let up = (640.0 / storeys.len() as f64).clamp(least_storey, 76.0) / mean(storeys);
     if across > up {

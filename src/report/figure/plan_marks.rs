@@ -8,17 +8,22 @@ use super::number::{rounded, three_figures};
 use super::plan::{ARROW, LINE, MARGIN, Plan, force_head, height_head, numbers_width, thinned};
 use crate::frame::line_name;
 
-/// Radius of the circle around a line's name, CSS px.
-const NAME_RADIUS: f64 = 9.5;
+/// Radius of the circle around a line's name of one letter, and of more, CSS px.
+const NAME_RADII: (f64, f64) = (9.5, 12.5);
 
 /// Draws everything around the frame; `half` is half the width of a foot's symbol. Returns the y below it all.
 pub(super) fn surroundings(canvas: &mut Canvas, grid: &Grid, plan: &Plan, half: f64) -> f64 {
+    if grid.bays.iter().chain(&grid.storeys).any(|length| !length.is_finite() || *length <= 0.0) {
+        canvas.note("A bay width or storey height that is not a positive number is drawn as 1 m.".to_owned());
+    }
     forces(canvas, grid, plan);
     storeys(canvas, grid, plan);
     feet(canvas, grid, plan, half);
-    let names = plan.ground() + foot_depth(half) + 6.0 + NAME_RADIUS;
-    line_names(canvas, plan, names);
-    let bottom = dimensions(canvas, grid, plan, names + NAME_RADIUS + 18.0);
+    let last = line_name(plan.x.len() - 1);
+    let radius = if last.len() > 1 { NAME_RADII.1 } else { NAME_RADII.0 };
+    let names = plan.ground() + foot_depth(half) + 6.0 + radius;
+    line_names(canvas, plan, names, radius);
+    let bottom = dimensions(canvas, grid, plan, names + radius + 18.0);
     remarks(canvas, grid, plan, bottom + 8.0)
 }
 
@@ -130,14 +135,14 @@ fn spiral(canvas: &mut Canvas, centre: Point, radius: f64) {
     canvas.path(points.collect(), Stroke::solid(INK, 1.2));
 }
 
-fn line_names(canvas: &mut Canvas, plan: &Plan, y: f64) {
-    for line in thinned(&plan.x, 2.0 * NAME_RADIUS + 3.0, 0) {
-        canvas.disc((plan.x[line], y), NAME_RADIUS, Fill::outlined(WHITE, RULE, 1.0));
+fn line_names(canvas: &mut Canvas, plan: &Plan, y: f64, radius: f64) {
+    for line in thinned(&plan.x, 2.0 * radius + 3.0, 0) {
+        canvas.disc((plan.x[line], y), radius, Fill::outlined(WHITE, RULE, 1.0));
         canvas.words(Words::new(line_name(line), (plan.x[line], y), Anchor::Middle).bold());
     }
 }
 
-/// Bay widths where they fit, and the whole width. Returns the y below.
+/// Bay widths where they fit (none where most do not), and the whole width. Returns the y below.
 fn dimensions(canvas: &mut Canvas, grid: &Grid, plan: &Plan, mut y: f64) -> f64 {
     let number = |length: f64| rounded(grid.length.from_si(length), 4);
     let symbol = grid.length.symbol;
@@ -148,9 +153,11 @@ fn dimensions(canvas: &mut Canvas, grid: &Grid, plan: &Plan, mut y: f64) -> f64 
         dimension(canvas, (first, last), y, format!("{total} {symbol}"));
         return y + 6.0;
     }
-    if grid.bays.iter().zip(plan.x.windows(2)).all(fits) {
-        for (bay, ends) in grid.bays.iter().zip(plan.x.windows(2)) {
-            dimension(canvas, (ends[0], ends[1]), y, number(*bay));
+    let pairs: Vec<(&f64, &[f64])> = grid.bays.iter().zip(plan.x.windows(2)).collect();
+    if 2 * pairs.iter().filter(|pair| fits(**pair)).count() >= pairs.len() {
+        for (bay, ends) in pairs {
+            let words = if fits((bay, ends)) { number(*bay) } else { String::new() };
+            dimension(canvas, (ends[0], ends[1]), y, words);
         }
         y += 20.0;
     }

@@ -3,11 +3,11 @@
 use super::axis::round_ticks;
 use super::canvas::{Anchor, Canvas, Point, SMALL, Stroke, Words};
 use super::colour::{GRID, INK, QUIET, RULE};
-use super::font::text_width;
+use super::font::{text_width, wrap};
 use super::legend::legend;
 use super::look::{EXACT_METHODS, look};
 use super::number::rounded;
-use super::panel::{heading, heading_height};
+use super::panel::heading;
 use super::plan::{LEAST_WIDTH, LINE, MARGIN, thinned};
 use super::svg::finish;
 use super::{Figure, Svg};
@@ -19,9 +19,11 @@ const ACROSS: usize = 4;
 const PLOT: f64 = 188.0;
 /// Room for storey numbers left of each row, CSS px.
 const NUMBERS: f64 = 46.0;
-/// Room above a plot for its name, and below it for the axis, CSS px.
+/// Room above a plot for its name, CSS px.
 const NAME: f64 = 22.0;
-const AXIS: f64 = 40.0;
+/// Room below a plot for its ticks, and below a row of panels, CSS px.
+const TICKS: f64 = 20.0;
+const ROW_GAP: f64 = 6.0;
 
 /// One method's values in a panel.
 #[derive(Debug, Clone, PartialEq)]
@@ -64,8 +66,7 @@ impl Figure for Profiles {
     fn svg(&self) -> Svg {
         let mut canvas = Canvas::default();
         let frame = self.arrange();
-        heading(&mut canvas, &self.title, frame.width);
-        let top = heading_height(&self.title, frame.width) + 4.0;
+        let top = heading(&mut canvas, &self.title, frame.width) + 4.0;
         let entries = self.entries();
         let marked: Vec<_> = entries.iter().map(|(id, name)| (look(id), true, name.clone())).collect();
         let mut y = legend(&mut canvas, &marked, (MARGIN, top), frame.width - 2.0 * MARGIN) + 6.0;
@@ -75,7 +76,7 @@ impl Figure for Profiles {
                 let left = frame.left + index as f64 * (PLOT + frame.gap);
                 self.panel(&mut canvas, &frame, panel, (left, y + NAME));
             }
-            y += NAME + frame.height + AXIS;
+            y += NAME + frame.height + TICKS + LINE * self.axis_name().len() as f64 + ROW_GAP;
         }
         finish(canvas, &self.title, &self.description, frame.width, y + MARGIN - 4.0)
     }
@@ -154,7 +155,10 @@ impl Profiles {
             let x = frame.x(left, *tick);
             canvas.words(Words::new(rounded(*tick, 4), (x, bottom + 11.0), Anchor::Middle));
         }
-        canvas.words(Words::new(self.axis_name(), (middle, bottom + 27.0), Anchor::Middle).colour(QUIET));
+        for (index, line) in self.axis_name().into_iter().enumerate() {
+            let at = (middle, bottom + TICKS + LINE * (index as f64 + 0.5));
+            canvas.words(Words::new(line, at, Anchor::Middle).colour(QUIET));
+        }
         let exact = |series: &&Series| EXACT_METHODS.contains(&&*series.method);
         let (beneath, above): (Vec<_>, Vec<_>) = panel.series.iter().partition(exact);
         let count = panel.series.len();
@@ -165,9 +169,8 @@ impl Profiles {
         }
     }
 
-    fn axis_name(&self) -> String {
-        let whole = format!("{}, {}", self.quantity, self.unit.symbol);
-        if text_width(&whole, SMALL, false) <= PLOT { whole } else { self.unit.symbol.to_owned() }
+    fn axis_name(&self) -> Vec<String> {
+        wrap(&format!("{}, {}", self.quantity, self.unit.symbol), SMALL, false, PLOT)
     }
 
     fn grid(&self, canvas: &mut Canvas, frame: &Arrangement, (left, top): Point) {
@@ -200,9 +203,9 @@ impl Profiles {
             markers.push((x, bottom - ends[0] - share * (ends[1] - ends[0])));
         }
         canvas.path(run, Stroke::of(look));
-        let heights: Vec<f64> = markers.iter().map(|marker| marker.1).collect();
-        for at in thinned(&heights, 20.0, (10.0 * share) as usize) {
-            canvas.marker(markers[at], look);
+        let step = (24.0 * self.storeys.len() as f64 / frame.height).ceil().max(1.0);
+        for marker in markers.iter().skip((share * step) as usize).step_by(step as usize) {
+            canvas.marker(*marker, look);
         }
     }
 

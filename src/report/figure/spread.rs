@@ -3,10 +3,10 @@
 use super::axis::round_ticks;
 use super::canvas::{Anchor, Canvas, Fill, SMALL, Stroke, Words};
 use super::colour::{GRID, INK, QUIET, WHITE, signed_colour};
-use super::font::{text_width, wrap};
+use super::font::{shorten, text_width, wrap};
 use super::look::look;
-use super::number::percent;
-use super::panel::{heading, heading_height, paragraph};
+use super::number::{percent, rounded_signed};
+use super::panel::{heading, paragraph};
 use super::plan::MARGIN;
 use super::svg::finish;
 use super::{Figure, Svg};
@@ -14,6 +14,8 @@ use super::{Figure, Svg};
 const PLOT: f64 = 330.0;
 const ROW: f64 = 34.0;
 const NAMES: f64 = 130.0;
+/// Room beside the plot for numbers and for the word above its edge, CSS px.
+const LEAST_SIDE: f64 = 62.0;
 
 /// One method's errors.
 #[derive(Debug, Clone, PartialEq)]
@@ -52,11 +54,10 @@ impl Figure for Spread {
         }
         let ticks = ticks(&rows);
         let label = |value: f64| text_width(&percent(value), SMALL, true) + 10.0;
-        let side = rows.iter().flat_map(|row| [label(row.low), label(row.high)]).fold(20.0, f64::max);
+        let side = rows.iter().flat_map(|row| [label(row.low), label(row.high)]).fold(LEAST_SIDE, f64::max);
         let left = 2.0 * MARGIN + NAMES + side;
         let width = left + PLOT + side + MARGIN;
-        heading(&mut canvas, &self.title, width);
-        let top = heading_height(&self.title, width) + 24.0;
+        let top = heading(&mut canvas, &self.title, width) + 24.0;
         let bottom = top + ROW * rows.len() as f64;
         let (first, last) = (ticks[0], ticks[ticks.len() - 1]);
         let x = |value: f64| left + PLOT * (value - first) / (last - first);
@@ -81,7 +82,7 @@ fn axes(canvas: &mut Canvas, ticks: &[f64], x: &impl Fn(f64) -> f64, (top, botto
     for tick in ticks {
         let stroke = if *tick == 0.0 { Stroke::solid(INK, 1.2) } else { Stroke::solid(GRID, 0.8) };
         canvas.line((x(*tick), top), (x(*tick), bottom + 3.0), stroke);
-        canvas.words(Words::new(format!("{} %", percent(*tick)), (x(*tick), bottom + 13.0), Anchor::Middle));
+        canvas.words(Words::new(format!("{} %", rounded_signed(*tick, 3)), (x(*tick), bottom + 13.0), Anchor::Middle));
     }
     let zero = x(0.0);
     canvas.words(Words::new("short (unsafe side)", (zero - 6.0, top - 10.0), Anchor::End).colour(QUIET));
@@ -94,10 +95,14 @@ impl SpreadRow {
     }
 
     fn draw(&self, canvas: &mut Canvas, x: &impl Fn(f64) -> f64, y: f64) {
-        let lines = wrap(&self.name, SMALL, false, NAMES);
-        let shown = lines.len().min(2);
-        for (index, line) in lines.into_iter().take(2).enumerate() {
-            let at = (2.0 * MARGIN, y + 13.0 * (index as f64 - (shown as f64 - 1.0) / 2.0));
+        let mut lines = wrap(&self.name, SMALL, false, NAMES);
+        if lines.len() > 2 {
+            let rest = lines.split_off(1).join(" ");
+            lines.push(shorten(&rest, SMALL, false, NAMES));
+        }
+        let first = y - 6.5 * (lines.len() as f64 - 1.0);
+        for (index, line) in lines.into_iter().enumerate() {
+            let at = (2.0 * MARGIN, first + 13.0 * index as f64);
             canvas.words(Words::new(line, at, Anchor::Start));
         }
         let (low, high) = (x(self.low), x(self.high));

@@ -187,7 +187,8 @@ fn open_tag(line: &str, dropped: &[&str], extra: &str, out: &mut String) {
     let mut parts = attributes.split('"');
     while let (Some(key), Some(value)) = (parts.next(), parts.next()) {
         let key = key.trim().trim_end_matches('=');
-        if !dropped.contains(&key) && !(key == "text-anchor" && value == "start") {
+        let default = key == "text-anchor" && value == "start";
+        if !default && !dropped.contains(&key) {
             let _ = write!(out, " {key}=\"{}\"", value.trim_end());
         }
     }
