@@ -24,7 +24,12 @@ pub fn render_warning(warning: &FileWarning, path: &str, text: &str, styled: boo
     finish(title.element(snippet).element(Level::HELP.message(warning.help())), styled)
 }
 
-fn at<'a>(text: &'a str, path: &'a str, span: &Range<usize>, key: &'a str) -> Snippet<'a, annotate_snippets::Annotation<'a>> {
+fn at<'a>(
+    text: &'a str,
+    path: &'a str,
+    span: &Range<usize>,
+    key: &'a str,
+) -> Snippet<'a, annotate_snippets::Annotation<'a>> {
     let primary = AnnotationKind::Primary.span(first_line(text, span));
     let primary = if key.is_empty() { primary } else { primary.label(key) };
     Snippet::source(text).path(path).annotation(primary)

@@ -4,6 +4,7 @@ use super::fault::{FaultKind, FileFault};
 use super::feet::CheckedFeet;
 use super::grid::Grid;
 use super::lateral::Lateral;
+use super::scalar::Table;
 use super::source::{Source, require};
 use super::warning::{self, FileWarning};
 use super::written::{SizesWritten, Written};
@@ -30,7 +31,12 @@ struct Sized {
 pub(super) fn assemble(source: Source, written: &Written) -> Result<FrameFile, FileFault> {
     let end = || source.0.trim_end().len()..source.0.trim_end().len();
     let report_units = report_units(source, written)?;
-    let table = require(&written.grid, end(), "the table [grid]", "add [grid] with bays = [\"7.2 m\", \"8.4 m\"] and storeys = [\"4.8 m\", \"3.9 m\"]")?;
+    let table = require(
+        &written.grid,
+        end(),
+        "the table [grid]",
+        "add [grid] with bays = [\"7.2 m\", \"8.4 m\"] and storeys = [\"4.8 m\", \"3.9 m\"]",
+    )?;
     let grid = grid::grid(source, table)?;
     let feet = feet::feet(source, &written.feet, grid.bays.lengths.len() + 1)?;
     let modulus = modulus(source, written)?;
@@ -72,7 +78,7 @@ fn title(written: &Written) -> String {
 
 fn report_units(source: Source, written: &Written) -> Result<ReportUnits, FileFault> {
     let Some(word) = &written.report_units else { return Ok(ReportUnits::default()) };
-    match source.choice(word.get_ref(), word.span(), &["metric", "us"])? {
+    match source.choice(word.get_ref(), word.span(), &["metric", "us"], None)? {
         0 => Ok(ReportUnits::Metric),
         _ => Ok(ReportUnits::Us),
     }
@@ -111,7 +117,9 @@ fn known_sizes(
     let within = model::within(source, &written.within)?;
     let mut echo = made.echo;
     echo.extend(made_beams.echo);
-    echo.extend(written.within.as_ref().map(|table| Echo { what: "sizes within".into(), typed: source.typed(table.span()) }));
+    echo.extend(
+        written.within.as_ref().map(|table| Echo { what: "sizes within".into(), typed: source.typed(table.span()) }),
+    );
     Ok(Sized {
         columns: made.sections,
         beams: made_beams.sections,
@@ -127,7 +135,7 @@ fn known_sizes(
 fn unknown_sizes(
     source: Source,
     written: &Written,
-    sizes: &Spanned<SizesWritten>,
+    sizes: &Spanned<Table<SizesWritten>>,
     grid: &Grid,
     feet: &CheckedFeet,
     modulus: Option<f64>,
@@ -141,7 +149,10 @@ fn unknown_sizes(
     let model = model::model(source, table, grid.storeys.lengths.len())?;
     let real = model.end_column_inertia.is_some();
     if let (Some(inertia), false) = (&table.end_column_inertia, modulus.is_some()) {
-        let kind = FaultKind::Missing { what: "the modulus of elasticity, which a real inertia needs beside it,", help: MODULUS };
+        let kind = FaultKind::Missing {
+            what: "the modulus of elasticity, which a real inertia needs beside it,",
+            help: MODULUS,
+        };
         return Err(FileFault::new(kind, inertia.span()));
     }
     if let (Some(spring), false) = (feet.spring(), real) {
@@ -163,9 +174,13 @@ fn unknown_sizes(
     })
 }
 
-fn no_known_sizes(written: &Written, sizes: &Spanned<SizesWritten>) -> Result<(), FileFault> {
-    let columns = written.columns.as_ref().and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[columns]]")));
-    let beams = written.beams.as_ref().and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[beams]]")));
+fn no_known_sizes(written: &Written, sizes: &Spanned<Table<SizesWritten>>) -> Result<(), FileFault> {
+    let columns = written
+        .columns
+        .as_ref()
+        .and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[columns]]")));
+    let beams =
+        written.beams.as_ref().and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[beams]]")));
     let Some((span, second)) = columns.or(beams) else { return Ok(()) };
     let kind = FaultKind::Conflict {
         first: "[sizes]",

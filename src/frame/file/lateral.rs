@@ -8,7 +8,7 @@
 use super::fault::{FaultKind, FileFault};
 use super::grid::runs;
 use super::help::THREE_WAYS;
-use super::scalar::{Repeated, Scalar, TextOr};
+use super::scalar::{Repeated, Scalar, Table, TextOr};
 use super::source::{Need, Source, require};
 use super::written::{LateralWritten, PowerWritten};
 use crate::units::Dimension;
@@ -29,7 +29,11 @@ pub(super) struct Lateral {
 }
 
 /// Checks `[lateral]` for a frame with these storey heights.
-pub(super) fn lateral(source: Source, written: &Spanned<LateralWritten>, heights: &[f64]) -> Result<Lateral, FileFault> {
+pub(super) fn lateral(
+    source: Source,
+    written: &Spanned<Table<LateralWritten>>,
+    heights: &[f64],
+) -> Result<Lateral, FileFault> {
     let table = written.get_ref();
     no_conflict(table)?;
     if let Some(floors) = &table.floors {
@@ -43,7 +47,9 @@ pub(super) fn lateral(source: Source, written: &Spanned<LateralWritten>, heights
     }
     let missed = |span, what, help| Err(FileFault::new(FaultKind::Missing { what, help }, span));
     match (&table.shape, &table.tributary) {
-        (Some(shape), _) => missed(shape.span(), "the base_shear that this shape shares out", "add base_shear = \"900 kN\""),
+        (Some(shape), _) => {
+            missed(shape.span(), "the base_shear that this shape shares out", "add base_shear = \"900 kN\"")
+        }
         (_, Some(width)) => missed(width.span(), "the pressure on this tributary width", "add pressure = \"1.2 kPa\""),
         _ => Err(FileFault::new(FaultKind::NoLoad, written.span())),
     }
@@ -72,7 +78,8 @@ fn by_floor(source: Source, floors: &Spanned<Repeated<Scalar>>, storeys: usize) 
     if list.is_empty() {
         return Err(FileFault::new(FaultKind::NoLoad, floors.span()));
     }
-    let forces: Vec<f64> = list.iter().map(|entry| source.quantity(entry, Dimension::Force)).collect::<Result<_, _>>()?;
+    let forces: Vec<f64> =
+        list.iter().map(|entry| source.quantity(entry, Dimension::Force)).collect::<Result<_, _>>()?;
     if list.len() != storeys {
         return Err(FileFault::new(FaultKind::ForceCount { found: list.len(), needed: storeys }, floors.span()));
     }
@@ -103,7 +110,7 @@ fn by_base_shear(
 fn power(source: Source, shape: &Spanned<TextOr<PowerWritten>>) -> Result<(f64, String), FileFault> {
     match shape.get_ref() {
         TextOr::Text(word) => {
-            let index = source.choice(word, shape.span(), &["uniform", "triangular"])?;
+            let index = source.choice(word, shape.span(), &["uniform", "triangular"], Some("{ power = 1.5 }"))?;
             Ok((index as f64, word.clone()))
         }
         TextOr::Table(table) => {
@@ -141,5 +148,8 @@ fn floor_heights(heights: &[f64]) -> Vec<f64> {
 
 /// The fault of a file without `[lateral]`.
 pub(super) fn missing(end: Range<usize>) -> FileFault {
-    FileFault::new(FaultKind::Missing { what: "the table [lateral], and with it any lateral load,", help: THREE_WAYS }, end)
+    FileFault::new(
+        FaultKind::Missing { what: "the table [lateral], and with it any lateral load,", help: THREE_WAYS },
+        end,
+    )
 }

@@ -57,7 +57,9 @@ fn in_value(value: &DeValue<'_>, span: &Range<usize>, path: &str) -> Option<Stri
             let kind = if matches!(entry.get_ref(), DeValue::Table(_)) { "table" } else { "entry" };
             let name = format!("{path}, {kind} {}", index + 1);
             let inside = match entry.get_ref() {
-                DeValue::Table(table) => in_table(table, span, &format!("{name}, ")).map(|path| path.replace(", .", ", ")),
+                DeValue::Table(table) => {
+                    in_table(table, span, &format!("{name}, ")).map(|path| path.replace(", .", ", "))
+                }
                 other => in_value(other, span, &name),
             };
             inside.or_else(|| holds(&entry.span(), span).then_some(name))

@@ -1,11 +1,11 @@
 //! Unknown sizes: the table `[sizes]` becomes a size model.
 
+use super::Echo;
 use super::fault::{FaultKind, FileFault};
-use super::scalar::{Scalar, Spread};
-use super::source::{Need, Source};
+use super::scalar::{Scalar, Spread, Table};
+use super::source::{Need, Source, WHOLE};
 use super::warning::{FileWarning, WarningKind};
 use super::written::{Maybe, SizesWritten, WithinWritten};
-use super::Echo;
 use crate::frame::MAX_STOREYS;
 use crate::frame::sizes::{Range, SizeModel, Within};
 use crate::units::Dimension;
@@ -17,7 +17,9 @@ const LARGEST_CHANGE: f64 = 1e60;
 /// Checks `[sizes]` for a frame of so many storeys.
 pub(super) fn model(source: Source, written: &SizesWritten, storeys: usize) -> Result<SizeModel, FileFault> {
     let default = SizeModel::default();
-    let ratio = |value: &Maybe<Spread>, default| read(source, value, Need::Positive, None).map(|range| range.unwrap_or(default));
+    let ratio = |value: &Maybe<Spread>, default| {
+        read(source, value, Need::Positive, None).map(|range| range.unwrap_or(default))
+    };
     let model = SizeModel {
         beam_to_column: ratio(&written.beam_to_column, default.beam_to_column)?,
         interior_to_end: ratio(&written.interior_to_end, default.interior_to_end)?,
@@ -37,14 +39,19 @@ pub(super) fn model(source: Source, written: &SizesWritten, storeys: usize) -> R
     Ok(model)
 }
 
-fn read(source: Source, value: &Maybe<Spread>, need: Need, unit: Option<Dimension>) -> Result<Option<Range>, FileFault> {
+fn read(
+    source: Source,
+    value: &Maybe<Spread>,
+    need: Need,
+    unit: Option<Dimension>,
+) -> Result<Option<Range>, FileFault> {
     value.as_ref().map(|value| source.spread(value, need, unit)).transpose()
 }
 
 fn tier(source: Source, value: &Maybe<Scalar>) -> Result<Option<usize>, FileFault> {
     let Some(value) = value else { return Ok(None) };
     match source.count(value)? {
-        0 => Err(source.out_of_range(value.span(), "it must be a whole number, 1 or more")),
+        0 => Err(source.out_of_range(value.span(), WHOLE, "write tier = 1 for a change of size at every storey")),
         count => Ok(Some(count.min(MAX_STOREYS))),
     }
 }
@@ -56,7 +63,7 @@ fn ordinary(source: Source, value: &Maybe<Spread>, range: Range, tiers: usize) -
         return Ok(());
     };
     let needed = format!("over the {tiers} changes of size of this frame that leaves no ordinary inertia at the roof");
-    Err(source.out_of_range(value.span(), &needed))
+    Err(source.out_of_range(value.span(), &needed, "bring the ratio nearer to 1, or put more storeys into a tier"))
 }
 
 fn spread_factor(source: Source, value: &Maybe<Scalar>) -> Result<Option<f64>, FileFault> {
@@ -64,7 +71,7 @@ fn spread_factor(source: Source, value: &Maybe<Scalar>) -> Result<Option<f64>, F
 }
 
 /// Checks `within`.
-pub(super) fn within(source: Source, written: &Maybe<WithinWritten>) -> Result<Option<Within>, FileFault> {
+pub(super) fn within(source: Source, written: &Maybe<Table<WithinWritten>>) -> Result<Option<Within>, FileFault> {
     let Some(table) = written else { return Ok(None) };
     let factor = |value| spread_factor(source, value).map(|factor| factor.unwrap_or(1.0));
     let table = table.get_ref();
@@ -72,7 +79,10 @@ pub(super) fn within(source: Source, written: &Maybe<WithinWritten>) -> Result<O
 }
 
 /// Refuses `within` beside `[sizes]`: both say how far sizes may vary.
-pub(super) fn one_statement(within: &Maybe<WithinWritten>, sizes: &Spanned<SizesWritten>) -> Result<(), FileFault> {
+pub(super) fn one_statement(
+    within: &Maybe<Table<WithinWritten>>,
+    sizes: &Spanned<Table<SizesWritten>>,
+) -> Result<(), FileFault> {
     let Some(within) = within else { return Ok(()) };
     let kind = FaultKind::Conflict {
         first: "[sizes]",
@@ -86,7 +96,10 @@ pub(super) fn one_statement(within: &Maybe<WithinWritten>, sizes: &Spanned<Sizes
 pub(super) fn growing(written: &SizesWritten, model: &SizeModel) -> Vec<FileWarning> {
     let tapers = [(&written.taper, model.taper), (&written.beam_taper, model.beam_taper)];
     let grown = tapers.into_iter().filter(|(_, range)| range.ends().1 > 1.0);
-    grown.filter_map(|(value, _)| value.as_ref()).map(|value| FileWarning::new(WarningKind::Growing, value.span())).collect()
+    grown
+        .filter_map(|(value, _)| value.as_ref())
+        .map(|value| FileWarning::new(WarningKind::Growing, value.span()))
+        .collect()
 }
 
 /// What the user typed in `[sizes]`, the defaults told as such.

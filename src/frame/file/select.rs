@@ -81,9 +81,11 @@ impl SelectError {
     }
 }
 
-const LINES: &str = "\"all\", \"end\", \"interior\", a line such as \"A\", a list such as \"A,D\" or a range such as \"B-C\"";
+const LINES: &str =
+    "\"all\", \"end\", \"interior\", a line such as \"A\", a list such as \"A,D\" or a range such as \"B-C\"";
 const BAYS: &str = "\"all\", \"end\", \"interior\", a bay such as \"A-B\", or \"A-D\" for the bays between";
-const LEVELS: &str = "\"all\", a number such as \"2\", \"roof\", a range such as \"1-3\" or \"4-roof\", or a list such as \"1,3-5\"";
+const LEVELS: &str =
+    "\"all\", a number such as \"2\", \"roof\", a range such as \"1-3\" or \"4-roof\", or a list such as \"1,3-5\"";
 
 /// Levels chosen by `text`, one flag each; `what` is `storey` or `floor`.
 pub(super) fn levels(text: &str, count: usize, what: &'static str) -> Result<Vec<bool>, SelectError> {
@@ -218,13 +220,25 @@ mod tests {
 
     #[test]
     fn lines_and_bays_are_letters_and_classes() {
-        let line_cases: [(&str, &[usize]); 6] =
-            [("all", &[0, 1, 2, 3, 4]), ("end", &[0, 4]), ("interior", &[1, 2, 3]), ("A", &[0]), ("A,D", &[0, 3]), ("B-C", &[1, 2])];
+        let line_cases: [(&str, &[usize]); 6] = [
+            ("all", &[0, 1, 2, 3, 4]),
+            ("end", &[0, 4]),
+            ("interior", &[1, 2, 3]),
+            ("A", &[0]),
+            ("A,D", &[0, 3]),
+            ("B-C", &[1, 2]),
+        ];
         for (text, expected) in line_cases {
             assert_eq!(picked(lines(text, 5).unwrap()), expected, "{text}");
         }
-        let bay_cases: [(&str, &[usize]); 6] =
-            [("all", &[0, 1, 2, 3]), ("end", &[0, 3]), ("interior", &[1, 2]), ("A-B", &[0]), ("A-D", &[0, 1, 2]), ("A-B,D-E", &[0, 3])];
+        let bay_cases: [(&str, &[usize]); 6] = [
+            ("all", &[0, 1, 2, 3]),
+            ("end", &[0, 3]),
+            ("interior", &[1, 2]),
+            ("A-B", &[0]),
+            ("A-D", &[0, 1, 2]),
+            ("A-B,D-E", &[0, 3]),
+        ];
         for (text, expected) in bay_cases {
             assert_eq!(picked(bays(text, 4).unwrap()), expected, "{text}");
         }
