@@ -52,6 +52,15 @@ impl Dimension {
         }
     }
 
+    /// A metric and a US unit in which a bare `number` may have been meant.
+    pub(super) fn units_for(self, number: f64) -> [&'static str; 2] {
+        match self {
+            Self::Modulus if number >= 1e6 => ["Pa", "psi"],
+            Self::Modulus if number >= 1e3 => ["MPa", "ksi"],
+            _ => self.usual_units(),
+        }
+    }
+
     /// A metric and a US example, as they are typed.
     pub fn examples(self) -> [&'static str; 2] {
         match self {

@@ -107,7 +107,7 @@ impl UnitError {
                 format!("digits are not grouped and a list has one text for each entry; {}", write_example(*wanted))
             }
             Self::NoUnit { number, wanted } => {
-                let [metric, us] = wanted.usual_units();
+                let [metric, us] = wanted.units_for(number.parse().unwrap_or(0.0));
                 format!("write the unit inside the quotes, for example \"{number} {metric}\" or \"{number} {us}\"")
             }
             Self::UnknownUnit { suggestion: Some(unit), .. } => format!("did you mean `{unit}`?"),

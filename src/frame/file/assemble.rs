@@ -4,6 +4,7 @@ use super::fault::{FaultKind, FileFault};
 use super::feet::CheckedFeet;
 use super::grid::Grid;
 use super::lateral::Lateral;
+use super::scalar::Table;
 use super::source::{Source, require};
 use super::warning::{self, FileWarning};
 use super::written::{SizesWritten, Written};
@@ -77,7 +78,7 @@ fn title(written: &Written) -> String {
 
 fn report_units(source: Source, written: &Written) -> Result<ReportUnits, FileFault> {
     let Some(word) = &written.report_units else { return Ok(ReportUnits::default()) };
-    match source.choice(word.get_ref(), word.span(), &["metric", "us"])? {
+    match source.choice(word.get_ref(), word.span(), &["metric", "us"], None)? {
         0 => Ok(ReportUnits::Metric),
         _ => Ok(ReportUnits::Us),
     }
@@ -134,7 +135,7 @@ fn known_sizes(
 fn unknown_sizes(
     source: Source,
     written: &Written,
-    sizes: &Spanned<SizesWritten>,
+    sizes: &Spanned<Table<SizesWritten>>,
     grid: &Grid,
     feet: &CheckedFeet,
     modulus: Option<f64>,
@@ -173,7 +174,7 @@ fn unknown_sizes(
     })
 }
 
-fn no_known_sizes(written: &Written, sizes: &Spanned<SizesWritten>) -> Result<(), FileFault> {
+fn no_known_sizes(written: &Written, sizes: &Spanned<Table<SizesWritten>>) -> Result<(), FileFault> {
     let columns = written
         .columns
         .as_ref()

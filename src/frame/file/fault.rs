@@ -85,6 +85,8 @@ pub enum FaultKind {
         typed: String,
         /// What the value must be, such as `a length must be more than 0`.
         needed: String,
+        /// What to write.
+        help: String,
     },
     /// A key or table that must be there is not.
     #[error("{what} is missing")]
@@ -172,12 +174,14 @@ pub enum FaultKind {
         unit: &'static str,
     },
     /// A word that is none of those allowed.
-    #[error("`{typed}` is not one of {}", quoted(allowed))]
+    #[error("`{typed}` is given where {} is due", quoted(allowed))]
     Choice {
         /// What was typed.
         typed: String,
         /// What may be typed.
         allowed: &'static [&'static str],
+        /// A table that may stand in its place.
+        table: Option<&'static str>,
     },
     /// A foot spring in N m/rad on a frame whose inertias are relative.
     #[error("a foot spring in units needs real column inertias, and [sizes] gives relative ones")]

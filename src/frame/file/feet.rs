@@ -1,7 +1,7 @@
 //! The feet as checked.
 
 use super::fault::{FaultKind, FileFault};
-use super::scalar::TextOr;
+use super::scalar::{Table, TextOr};
 use super::source::{Source, require};
 use super::written::{FeetWritten, Maybe};
 use crate::frame::Feet;
@@ -27,15 +27,21 @@ impl CheckedFeet {
     }
 }
 
+const SPRING: Option<&str> = Some("{ spring = \"150 MN m/rad\" }");
+
 /// Checks `[feet]`; without it the feet are fixed.
-pub(super) fn feet(source: Source, written: &Maybe<FeetWritten>, lines: usize) -> Result<CheckedFeet, FileFault> {
+pub(super) fn feet(
+    source: Source,
+    written: &Maybe<Table<FeetWritten>>,
+    lines: usize,
+) -> Result<CheckedFeet, FileFault> {
     let Some(table) = written else { return Ok(CheckedFeet::new(Feet::Fixed, "fixed (default)", None)) };
     let help = "write fixity = \"fixed\", fixity = \"pinned\" or fixity = { spring = \"150 MN m/rad\" }";
     let fixity = require(&table.get_ref().fixity, table.span(), "the fixity of the feet", help)?;
     let span = Some(fixity.span());
     match fixity.get_ref() {
         TextOr::Text(word) => {
-            let feet = match source.choice(word, fixity.span(), &["fixed", "pinned"])? {
+            let feet = match source.choice(word, fixity.span(), &["fixed", "pinned"], SPRING)? {
                 0 => Feet::Fixed,
                 _ => Feet::Pinned,
             };
@@ -45,8 +51,8 @@ pub(super) fn feet(source: Source, written: &Maybe<FeetWritten>, lines: usize) -
             let spring = require(&table.spring, fixity.span(), "the spring", help)?;
             let stiffness = source.quantity(spring, Dimension::RotationalStiffness)?;
             if stiffness <= 0.0 {
-                let needed = "a foot spring must be more than 0; a foot without any takes fixity = \"pinned\"";
-                return Err(source.out_of_range(spring.span(), needed));
+                let help = "a foot that turns freely takes fixity = \"pinned\"";
+                return Err(source.out_of_range(spring.span(), "a foot spring must be more than 0", help));
             }
             let typed = format!("spring {} under each column", source.typed(spring.span()));
             Ok(CheckedFeet::new(Feet::Springs(vec![stiffness; lines]), typed, span))

@@ -1,7 +1,7 @@
 //! Bays and storeys as checked.
 
 use super::fault::{FaultKind, FileFault};
-use super::scalar::{ListOr, Scalar};
+use super::scalar::{ListOr, Scalar, Table};
 use super::source::{Source, require};
 use super::written::{EqualBays, EqualStoreys, GridWritten};
 use crate::frame::{MAX_BAYS, MAX_STOREYS};
@@ -35,7 +35,7 @@ struct Kind {
 }
 
 /// Checks `[grid]`.
-pub(super) fn grid(source: Source, written: &Spanned<GridWritten>) -> Result<Grid, FileFault> {
+pub(super) fn grid(source: Source, written: &Spanned<Table<GridWritten>>) -> Result<Grid, FileFault> {
     let table = || written.span();
     let bays = require(
         &written.get_ref().bays,

@@ -12,7 +12,7 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::DuplicateKey { .. } => "keep one of the two".into(),
         FaultKind::WrongForm { expected, .. } => wrong_form(expected),
         FaultKind::Unit(error) => error.help(),
-        FaultKind::OutOfRange { .. } => "check the number, its sign and its unit".into(),
+        FaultKind::OutOfRange { help, .. } => help.clone(),
         FaultKind::Missing { help, .. } | FaultKind::Conflict { help, .. } => (*help).into(),
         FaultKind::NoBays => "give the bay widths from the left, for example bays = [\"7.2 m\", \"8.4 m\"]".into(),
         FaultKind::NoStoreys => {
@@ -33,9 +33,9 @@ pub(super) fn help(kind: &FaultKind) -> String {
         }
         FaultKind::NoLoad => THREE_WAYS.into(),
         FaultKind::StoreyShear { .. } => {
-            "the shear of a storey is the sum of the forces at its top floor and above, to the right; load from the other side follows by symmetry of signs".into()
+            "the shear of a storey is the sum of the forces at its top floor and above, to the right; a load to the left has the same magnitudes, so state it to the right".into()
         }
-        FaultKind::Choice { typed, allowed } => choice(typed, allowed),
+        FaultKind::Choice { typed, allowed, table } => choice(typed, allowed, *table),
         FaultKind::SpringNeedsInertia => {
             "give sizes.end_column_inertia and material.modulus, or state the spring as sizes.foot_spring, a ratio to 4 E I_c/h of its column".into()
         }
@@ -59,6 +59,9 @@ fn wrong_form(expected: &str) -> String {
     if expected.contains("double brackets") {
         return "each size is a table of its own, headed by the name in double brackets".into();
     }
+    if let Some(name) = expected.strip_prefix("the table ") {
+        return format!("write {name} on a line of its own and its keys below it");
+    }
     match expected {
         "text in quotes" => "put the value in quotes".into(),
         "a number without quotes" => "leave the quotes out; this value has no unit".into(),
@@ -67,11 +70,14 @@ fn wrong_form(expected: &str) -> String {
     }
 }
 
-fn choice(typed: &str, allowed: &[&str]) -> String {
+fn choice(typed: &str, allowed: &[&str], table: Option<&str>) -> String {
     let typed = typed.trim().to_lowercase();
-    let near = allowed.iter().min_by_key(|word| strsim::damerau_levenshtein(word, &typed));
-    match near.filter(|word| strsim::damerau_levenshtein(word, &typed) <= 2) {
-        Some(word) => format!("did you mean \"{word}\"?"),
-        None => format!("write {}", quoted(allowed)),
+    let stem = |word: &str| typed.len() >= 5 && word.starts_with(&typed.chars().take(5).collect::<String>());
+    let distance = |word: &str| strsim::damerau_levenshtein(word, &typed);
+    let near = allowed.iter().min_by_key(|word| distance(word)).filter(|word| distance(word) <= 2 || stem(word));
+    match (near, table) {
+        (Some(word), _) => format!("did you mean \"{word}\"?"),
+        (None, Some(table)) => format!("write {} or {table}", quoted(allowed).replace(" or ", ", ")),
+        (None, None) => format!("write {}", quoted(allowed)),
     }
 }

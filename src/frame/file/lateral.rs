@@ -8,7 +8,7 @@
 use super::fault::{FaultKind, FileFault};
 use super::grid::runs;
 use super::help::THREE_WAYS;
-use super::scalar::{Repeated, Scalar, TextOr};
+use super::scalar::{Repeated, Scalar, Table, TextOr};
 use super::source::{Need, Source, require};
 use super::written::{LateralWritten, PowerWritten};
 use crate::units::Dimension;
@@ -31,7 +31,7 @@ pub(super) struct Lateral {
 /// Checks `[lateral]` for a frame with these storey heights.
 pub(super) fn lateral(
     source: Source,
-    written: &Spanned<LateralWritten>,
+    written: &Spanned<Table<LateralWritten>>,
     heights: &[f64],
 ) -> Result<Lateral, FileFault> {
     let table = written.get_ref();
@@ -110,7 +110,7 @@ fn by_base_shear(
 fn power(source: Source, shape: &Spanned<TextOr<PowerWritten>>) -> Result<(f64, String), FileFault> {
     match shape.get_ref() {
         TextOr::Text(word) => {
-            let index = source.choice(word, shape.span(), &["uniform", "triangular"])?;
+            let index = source.choice(word, shape.span(), &["uniform", "triangular"], Some("{ power = 1.5 }"))?;
             Ok((index as f64, word.clone()))
         }
         TextOr::Table(table) => {

@@ -1,7 +1,7 @@
 //! Known sizes: the tables `[[columns]]` and `[[beams]]`, the later replacing the earlier member by member.
 
 use super::fault::{FaultKind, FileFault};
-use super::scalar::Scalar;
+use super::scalar::{Scalar, Table};
 use super::select;
 use super::source::{Need, Source, require};
 use super::warning::{FileWarning, SIDE, WarningKind};
@@ -22,7 +22,7 @@ pub(super) struct Members {
 }
 
 /// One table as checked.
-struct Table {
+struct Checked {
     levels: Vec<bool>,
     places: Vec<bool>,
     section: Section,
@@ -33,7 +33,11 @@ struct Table {
 }
 
 /// Checks all `[[columns]]` tables.
-pub(super) fn columns(source: Source, tables: &[Spanned<ColumnsWritten>], grid: &Grid) -> Result<Members, FileFault> {
+pub(super) fn columns(
+    source: Source,
+    tables: &[Spanned<Table<ColumnsWritten>>],
+    grid: &Grid,
+) -> Result<Members, FileFault> {
     let lines = grid.bays.lengths.len() + 1;
     let storeys = grid.storeys.lengths.len();
     let mut warnings = Vec::new();
@@ -47,7 +51,7 @@ pub(super) fn columns(source: Source, tables: &[Spanned<ColumnsWritten>], grid: 
         scale(&mut section, &mut typed, &factor);
         let what = format!("columns, storeys {}, lines {}", levels.1, places.1);
         let echo = Echo { what, typed };
-        checked.push(Table { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
     }
     let name =
         |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
@@ -55,7 +59,11 @@ pub(super) fn columns(source: Source, tables: &[Spanned<ColumnsWritten>], grid: 
 }
 
 /// Checks all `[[beams]]` tables.
-pub(super) fn beams(source: Source, tables: &[Spanned<BeamsWritten>], grid: &Grid) -> Result<Members, FileFault> {
+pub(super) fn beams(
+    source: Source,
+    tables: &[Spanned<Table<BeamsWritten>>],
+    grid: &Grid,
+) -> Result<Members, FileFault> {
     let bays = grid.bays.lengths.len();
     let floors = grid.storeys.lengths.len();
     let mut warnings = Vec::new();
@@ -72,7 +80,7 @@ pub(super) fn beams(source: Source, tables: &[Spanned<BeamsWritten>], grid: &Gri
         scale(&mut section, &mut typed, &factor);
         let what = format!("beams, floors {}, bays {}", levels.1, places.1);
         let echo = Echo { what, typed };
-        checked.push(Table { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
     }
     let name = |index: usize| format!("the beam of floor {} in bay {}", index / bays + 1, bay_name(index % bays));
     assign(checked, "beams", name, warnings)
@@ -150,8 +158,8 @@ fn beam_size(
         (None, inertia) => {
             let inertia = require(inertia, span, "the size of these beams", SIZE_HELP)?;
             if let Ok(0.0) = source.quantity(inertia, Dimension::Inertia) {
-                let needed = "an inertia must be more than 0; a beam that carries no moment takes stiffness_factor = 0";
-                return Err(source.out_of_range(inertia.span(), needed));
+                let help = "a beam that carries no moment takes its inertia and stiffness_factor = 0";
+                return Err(source.out_of_range(inertia.span(), "an inertia must be more than 0", help));
             }
             let typed = format!("inertia {}", source.typed(inertia.span()));
             Ok((Section { inertia: source.positive(inertia, Dimension::Inertia)?, area: None }, typed))
@@ -172,7 +180,7 @@ fn conflict(
 /// Width and depth, m, and how they were typed.
 fn sides(
     source: Source,
-    rectangle: &Spanned<RectangleWritten>,
+    rectangle: &Spanned<Table<RectangleWritten>>,
     warnings: &mut Vec<FileWarning>,
 ) -> Result<([f64; 2], String), FileFault> {
     let help = "write rectangle = { width = \"400 mm\", depth = \"600 mm\" }, the depth in the frame's plane";
@@ -200,7 +208,7 @@ fn scale(section: &mut Section, typed: &mut String, factor: &Option<(f64, String
 
 /// Gives every member the section of the last table that selects it.
 fn assign(
-    tables: Vec<Table>,
+    tables: Vec<Checked>,
     members: &'static str,
     name: impl Fn(usize) -> String,
     warnings: Vec<FileWarning>,
@@ -234,13 +242,13 @@ fn assign(
     Ok(Members { sections, echo: tables.into_iter().map(|table| table.echo).collect(), warnings })
 }
 
-fn factor_lost(table: &Table, replaced: Option<&Table>) -> Option<FileWarning> {
+fn factor_lost(table: &Checked, replaced: Option<&Checked>) -> Option<FileWarning> {
     let (value, typed) = replaced?.factor.as_ref()?;
     let lost = table.factor.is_none() && *value != 1.0;
     lost.then(|| FileWarning::new(WarningKind::FactorLost { earlier: typed.clone() }, table.span.clone()))
 }
 
-fn no_effect(table: &Table, members: &'static str) -> FileWarning {
+fn no_effect(table: &Checked, members: &'static str) -> FileWarning {
     let selects = table.levels.contains(&true) && table.places.contains(&true);
     let kind = if selects { WarningKind::Overridden { members } } else { WarningKind::SelectsNothing };
     FileWarning::new(kind, table.span.clone())

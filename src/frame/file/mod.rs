@@ -72,7 +72,8 @@ pub fn parse(text: &str) -> Result<FrameFile, FileFault> {
         let written = written(text)?;
         assemble::assemble(source::Source(text), &written)
     };
-    let named = |span: &std::ops::Range<usize>| locate::key_at(text, span);
+    let named =
+        |span: &std::ops::Range<usize>| if span.is_empty() { String::new() } else { locate::key_at(text, span) };
     match read() {
         Ok(mut file) => {
             file.warnings.sort_by_key(|warning| warning.span.start);
@@ -81,6 +82,7 @@ pub fn parse(text: &str) -> Result<FrameFile, FileFault> {
             }
             Ok(file)
         }
+        Err(fault) if matches!(fault.kind, FaultKind::Syntax { .. }) => Err(fault),
         Err(fault) => Err(FileFault { key: named(&fault.span), ..fault }),
     }
 }

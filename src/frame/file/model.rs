@@ -2,8 +2,8 @@
 
 use super::Echo;
 use super::fault::{FaultKind, FileFault};
-use super::scalar::{Scalar, Spread};
-use super::source::{Need, Source};
+use super::scalar::{Scalar, Spread, Table};
+use super::source::{Need, Source, WHOLE};
 use super::warning::{FileWarning, WarningKind};
 use super::written::{Maybe, SizesWritten, WithinWritten};
 use crate::frame::MAX_STOREYS;
@@ -51,7 +51,7 @@ fn read(
 fn tier(source: Source, value: &Maybe<Scalar>) -> Result<Option<usize>, FileFault> {
     let Some(value) = value else { return Ok(None) };
     match source.count(value)? {
-        0 => Err(source.out_of_range(value.span(), "it must be a whole number, 1 or more")),
+        0 => Err(source.out_of_range(value.span(), WHOLE, "write tier = 1 for a change of size at every storey")),
         count => Ok(Some(count.min(MAX_STOREYS))),
     }
 }
@@ -63,7 +63,7 @@ fn ordinary(source: Source, value: &Maybe<Spread>, range: Range, tiers: usize) -
         return Ok(());
     };
     let needed = format!("over the {tiers} changes of size of this frame that leaves no ordinary inertia at the roof");
-    Err(source.out_of_range(value.span(), &needed))
+    Err(source.out_of_range(value.span(), &needed, "bring the ratio nearer to 1, or put more storeys into a tier"))
 }
 
 fn spread_factor(source: Source, value: &Maybe<Scalar>) -> Result<Option<f64>, FileFault> {
@@ -71,7 +71,7 @@ fn spread_factor(source: Source, value: &Maybe<Scalar>) -> Result<Option<f64>, F
 }
 
 /// Checks `within`.
-pub(super) fn within(source: Source, written: &Maybe<WithinWritten>) -> Result<Option<Within>, FileFault> {
+pub(super) fn within(source: Source, written: &Maybe<Table<WithinWritten>>) -> Result<Option<Within>, FileFault> {
     let Some(table) = written else { return Ok(None) };
     let factor = |value| spread_factor(source, value).map(|factor| factor.unwrap_or(1.0));
     let table = table.get_ref();
@@ -79,7 +79,10 @@ pub(super) fn within(source: Source, written: &Maybe<WithinWritten>) -> Result<O
 }
 
 /// Refuses `within` beside `[sizes]`: both say how far sizes may vary.
-pub(super) fn one_statement(within: &Maybe<WithinWritten>, sizes: &Spanned<SizesWritten>) -> Result<(), FileFault> {
+pub(super) fn one_statement(
+    within: &Maybe<Table<WithinWritten>>,
+    sizes: &Spanned<Table<SizesWritten>>,
+) -> Result<(), FileFault> {
     let Some(within) = within else { return Ok(()) };
     let kind = FaultKind::Conflict {
         first: "[sizes]",

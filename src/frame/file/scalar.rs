@@ -4,6 +4,7 @@ use serde::de::value::MapAccessDeserializer;
 use serde::de::{Deserialize, Deserializer, Error, MapAccess, SeqAccess, Visitor};
 use std::fmt;
 use std::marker::PhantomData;
+use std::ops::Deref;
 use toml::Spanned;
 
 /// A text or a number; which one is due is judged later, so that the message can name the unit.
@@ -21,7 +22,7 @@ impl Visitor<'_> for ScalarVisitor {
     type Value = Scalar;
 
     fn expecting(&self, formatter: &mut fmt::Formatter) -> fmt::Result {
-        formatter.write_str("a single value: a number, or a text in quotes")
+        formatter.write_str("one number or one text in quotes")
     }
 
     fn visit_str<E: Error>(self, text: &str) -> Result<Scalar, E> {
@@ -62,7 +63,7 @@ pub(super) trait Expecting {
 }
 
 impl Expecting for Scalar {
-    const EXPECTING: &str = "a list of forces such as [\"40 kN\", \"60 kN\"], one for each floor";
+    const EXPECTING: &str = "a list such as [\"40 kN\", \"60 kN\"] with a force for each floor";
 }
 
 /// A list of values, or a table that stands for one.
@@ -170,6 +171,42 @@ impl<'de> Deserialize<'de> for Spread {
     fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
         deserializer.deserialize_any(SpreadVisitor)
     }
+}
+
+/// A table, never a list: serde would read a list as the keys in their order.
+#[derive(Debug)]
+pub(super) struct Table<T>(pub T);
+
+impl<T> Deref for Table<T> {
+    type Target = T;
+
+    fn deref(&self) -> &T {
+        &self.0
+    }
+}
+
+struct TableVisitor<T>(PhantomData<T>);
+
+impl<'de, T: Deserialize<'de> + Expecting> Visitor<'de> for TableVisitor<T> {
+    type Value = Table<T>;
+
+    fn expecting(&self, formatter: &mut fmt::Formatter) -> fmt::Result {
+        formatter.write_str(T::EXPECTING)
+    }
+
+    fn visit_map<A: MapAccess<'de>>(self, table: A) -> Result<Self::Value, A::Error> {
+        T::deserialize(MapAccessDeserializer::new(table)).map(Table)
+    }
+}
+
+impl<'de, T: Deserialize<'de> + Expecting> Deserialize<'de> for Table<T> {
+    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
+        deserializer.deserialize_any(TableVisitor(PhantomData))
+    }
+}
+
+impl<T: Expecting> Expecting for Table<T> {
+    const EXPECTING: &str = T::EXPECTING;
 }
 
 /// A list of tables or of values.

@@ -44,7 +44,19 @@ impl Need {
         let sane = number == 0.0 || (1.0 / LARGEST_NUMBER..=LARGEST_NUMBER).contains(&number);
         (!sane).then_some("it must lie between 1e-6 and 1e6")
     }
+
+    fn help(self) -> &'static str {
+        match self {
+            Self::Positive => "write a number without unit, such as 0.7",
+            Self::ZeroOrMore => "write a number without unit, such as 0.35; 0 is a beam that carries no moment",
+            Self::OneOrMore => "it is a factor either way: 1.15 means from 1/1.15 to 1.15 times, 1 means exact",
+            Self::Power => "write a number without unit, such as 1.5",
+        }
+    }
 }
+
+/// What a count must be.
+pub(super) const WHOLE: &str = "it must be a whole number, 1 or more";
 
 /// The text of the file.
 #[derive(Debug, Clone, Copy)]
@@ -78,7 +90,8 @@ impl Source<'_> {
         let number = number.map_err(|error| FileFault::new(error, span.clone()))?;
         let size = number.abs();
         if size > LARGEST || (size > 0.0 && size < 1.0 / LARGEST) {
-            return Err(self.out_of_range(span, &format!("{} of that size cannot be meant", wanted.noun())));
+            let needed = format!("{} of that size cannot be meant", wanted.noun());
+            return Err(self.out_of_range(span, &needed, "check the exponent of the number and the unit"));
         }
         Ok(number)
     }
@@ -93,7 +106,12 @@ impl Source<'_> {
         if number > 0.0 {
             return Ok(number);
         }
-        Err(self.out_of_range(span, &format!("{} must be more than 0", wanted.noun())))
+        let [metric, us] = wanted.examples();
+        let help = match self.typed(span.clone()).strip_prefix('-') {
+            Some(positive) if number < 0.0 => format!("write \"{}\"", positive.trim()),
+            _ => format!("write {} like \"{metric}\" or \"{us}\"", wanted.noun()),
+        };
+        Err(self.out_of_range(span, &format!("{} must be more than 0", wanted.noun()), &help))
     }
 
     /// A number without unit.
@@ -109,14 +127,14 @@ impl Source<'_> {
                 span,
             ));
         };
-        need.miss(*number).map_or(Ok(*number), |needed| Err(self.out_of_range(span, needed)))
+        need.miss(*number).map_or(Ok(*number), |needed| Err(self.out_of_range(span, needed, need.help())))
     }
 
     /// A whole number, 1 or more; 0 is let through where the caller has its own message for it.
     pub fn count(&self, value: &Spanned<Scalar>) -> Result<usize, FileFault> {
         match value.get_ref() {
             Scalar::Number(number) if number.fract() == 0.0 && (0.0..=1e15).contains(number) => Ok(*number as usize),
-            Scalar::Number(_) => Err(self.out_of_range(value.span(), "it must be a whole number, 1 or more")),
+            Scalar::Number(_) => Err(self.out_of_range(value.span(), WHOLE, "write a whole number such as 3")),
             Scalar::Text(_) => {
                 let found = format!("the text \"{}\"", self.typed(value.span()));
                 let expected = "a whole number".into();
@@ -125,15 +143,16 @@ impl Source<'_> {
         }
     }
 
-    /// Position of a word in `allowed`.
+    /// Position of a word in `allowed`; `table` is what may stand in place of a word.
     pub fn choice(
         &self,
         typed: &str,
         span: Range<usize>,
         allowed: &'static [&'static str],
+        table: Option<&'static str>,
     ) -> Result<usize, FileFault> {
         let position = allowed.iter().position(|word| *word == typed);
-        position.ok_or_else(|| FileFault::new(FaultKind::Choice { typed: typed.into(), allowed }, span))
+        position.ok_or_else(|| FileFault::new(FaultKind::Choice { typed: typed.into(), allowed, table }, span))
     }
 
     /// A log-uniform range of numbers, or of quantities where a dimension is given; uniform for powers.
@@ -166,8 +185,9 @@ impl Source<'_> {
         }
     }
 
-    pub(super) fn out_of_range(&self, span: Range<usize>, needed: &str) -> FileFault {
-        FileFault::new(FaultKind::OutOfRange { typed: self.typed(span.clone()), needed: needed.into() }, span)
+    pub(super) fn out_of_range(&self, span: Range<usize>, needed: &str, help: &str) -> FileFault {
+        let (needed, help) = (needed.into(), help.into());
+        FileFault::new(FaultKind::OutOfRange { typed: self.typed(span.clone()), needed, help }, span)
     }
 }
 

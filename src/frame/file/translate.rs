@@ -17,6 +17,7 @@ const HOMES: &[(&str, &[&str])] = &[
         &["beam_to_column", "interior_to_end", "tier", "taper", "beam_taper", "roof_beam", "span_power", "scatter"],
     ),
     ("in the table [sizes]", &["foot_spring", "end_column_inertia", "area_per_inertia"]),
+    ("inside { width = \"400 mm\", depth = \"600 mm\" }, the value of rectangle", &["depth"]),
     ("inside { spring = \"150 MN m/rad\" }, the value of fixity in the table [feet]", &["spring"]),
 ];
 
@@ -37,7 +38,9 @@ pub(super) fn translate(error: &toml::de::Error, text: &str) -> FileFault {
     if let Some((found, expected)) =
         message.strip_prefix("invalid type: ").and_then(|rest| rest.split_once(", expected "))
     {
-        return FileFault::new(FaultKind::WrongForm { found: form(found), expected: due(expected) }, span);
+        let date = found == "map" && !text[span.clone()].starts_with(['{', '[']);
+        let found = if date { format!("the date `{}`", &text[span.clone()]) } else { form(found) };
+        return FileFault::new(FaultKind::WrongForm { found, expected: due(expected) }, span);
     }
     syntax(message, text, span)
 }
@@ -55,7 +58,10 @@ fn clamp(span: Range<usize>, text: &str) -> Range<usize> {
 
 fn duplicate(text: &str, span: Range<usize>) -> FileFault {
     let key = text[span.clone()].trim_matches(['"', '\'']).to_string();
-    let first = locate::earlier_key(text, &key, span.start);
+    let line_start = text[..span.start].rfind('\n').map_or(0, |at| at + 1);
+    let header = text[line_start..].lines().next().unwrap_or_default().trim();
+    let same_header = || text[..line_start].find(header).map(|at| at..at + header.len());
+    let first = if header.starts_with('[') { same_header() } else { locate::earlier_key(text, &key, span.start) };
     let fault = FileFault::new(FaultKind::DuplicateKey { key }, span);
     match first {
         Some(first) => fault.beside(first, "given here first"),
@@ -104,17 +110,43 @@ fn due(expected: &str) -> String {
 fn syntax(message: &str, text: &str, span: Range<usize>) -> FileFault {
     let line_start = text[..span.start].rfind('\n').map_or(0, |at| at + 1);
     let line = text[line_start..].lines().next().unwrap_or_default();
-    let kind = |message: String, hint| FaultKind::Syntax { message, hint };
-    let hint = if message.contains("quote") || message.contains("basic string") || message.contains("literal string") {
-        "a text begins and ends with a quote on the same line; inches inside it are written \\\" or in, as in \"12'-6\\\"\" or \"150 in\""
-    } else if message.contains("array") || message.contains("`]`") {
-        "a list is written [\"7.2 m\", \"8.4 m\"], with a comma between entries and a closing bracket"
-    } else if message.contains("table") || message.contains("`}`") {
-        "a table header is written [grid], a table in one line { count = 3, width = \"7.2 m\" }"
-    } else if line.contains('=') {
-        "a line reads key = value; a value with a unit stands in quotes, as in modulus = \"30 GPa\""
+    let in_list = message.contains("array");
+    let next_line = in_list && text[line_start..span.start].trim().is_empty();
+    let (message, span) = if next_line && (line.contains('=') || line.starts_with('[')) {
+        let end = text[..line_start].trim_end().len();
+        ("a list is not closed, expected `]`", end..end)
     } else {
-        "a line is a [table], a key = value or a # comment"
+        (message, span)
     };
-    FileFault::new(kind(format!("the file cannot be read: {message}"), hint), span)
+    let doubled = text[..span.start].ends_with('"') && text[span.start..].starts_with('"');
+    let message = match message {
+        "string values must be quoted, expected literal string" => "a text stands without quotes",
+        "invalid basic string, expected `\"`" => "a text is not closed, expected `\"`",
+        "missing comma between array elements, expected `,`" => "a comma is missing between the entries of a list",
+        other => other,
+    };
+    let kind = FaultKind::Syntax {
+        message: format!("the file cannot be read: {message}"),
+        hint: hint(message, line, doubled),
+    };
+    FileFault::new(kind, span)
+}
+
+fn hint(message: &str, line: &str, doubled_quote: bool) -> &'static str {
+    let says = |words: &[&str]| words.iter().any(|word| message.contains(word));
+    let key_and_value = line.contains('=');
+    match () {
+        () if doubled_quote => "inches inside a text are written \\\" or in, as in \"12'-6\\\"\" or \"150 in\"",
+        () if says(&["string", "quote", "newline", "a text"]) => "a text begins and ends with a quote on the same line",
+        () if says(&["array", "list"]) => {
+            "a list is written [\"7.2 m\", \"8.4 m\"], with a comma between entries and a closing bracket"
+        }
+        () if says(&["table", "`}`", "`]`"]) => {
+            "a table is headed [grid] on a line of its own, or written { count = 3, width = \"7.2 m\" } in one line"
+        }
+        () if key_and_value => {
+            "a line reads key = value; a value with a unit stands in quotes, as in modulus = \"30 GPa\""
+        }
+        () => "a line is a [table], a key = value or a # comment",
+    }
 }

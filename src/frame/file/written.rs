@@ -2,7 +2,7 @@
 //!
 //! The comments on the keys are the descriptions in the JSON schema.
 
-use super::scalar::{Expecting, ListOr, Repeated, Scalar, Spread, TextOr};
+use super::scalar::{Expecting, ListOr, Repeated, Scalar, Spread, Table, TextOr};
 use super::schema;
 use schemars::JsonSchema;
 use serde::Deserialize;
@@ -14,7 +14,7 @@ pub(super) type Maybe<T> = Option<Spanned<T>>;
 /// A regular moment frame: its grid, feet, material, member sizes and lateral forces. Quantities are texts with a
 /// unit, such as "7.2 m", "24 ft", "12'-6\"", "40 kN", "200 GPa" or "1200 in4".
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a frame file")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(title = "Frame", extend("required" = ["grid", "lateral"]))]
 pub(super) struct Written {
     /// What the frame is called in reports.
@@ -25,33 +25,33 @@ pub(super) struct Written {
     pub report_units: Maybe<String>,
     /// How far the given sizes may be off, for the bounds of a frame with known sizes.
     #[schemars(schema_with = "schema::table::<WithinWritten>")]
-    pub within: Maybe<WithinWritten>,
+    pub within: Maybe<Table<WithinWritten>>,
     /// Bays and storeys.
     #[schemars(schema_with = "schema::table::<GridWritten>")]
-    pub grid: Maybe<GridWritten>,
+    pub grid: Maybe<Table<GridWritten>>,
     /// How the column feet are held against rotation. Left out, they are fixed.
     #[schemars(schema_with = "schema::table::<FeetWritten>")]
-    pub feet: Maybe<FeetWritten>,
+    pub feet: Maybe<Table<FeetWritten>>,
     /// The material of all members.
     #[schemars(schema_with = "schema::table::<MaterialWritten>")]
-    pub material: Maybe<MaterialWritten>,
+    pub material: Maybe<Table<MaterialWritten>>,
     /// Column sizes. Each table states the whole size of the columns it selects; a later table replaces an earlier one.
     #[schemars(schema_with = "schema::tables::<ColumnsWritten>")]
-    pub columns: Maybe<Repeated<ColumnsWritten>>,
+    pub columns: Maybe<Repeated<Table<ColumnsWritten>>>,
     /// Beam sizes. Each table states the whole size of the beams it selects; a later table replaces an earlier one.
     #[schemars(schema_with = "schema::tables::<BeamsWritten>")]
-    pub beams: Maybe<Repeated<BeamsWritten>>,
+    pub beams: Maybe<Repeated<Table<BeamsWritten>>>,
     /// What the sizes may be while they are unknown, in place of [[columns]] and [[beams]]. Every key has a default.
     #[schemars(schema_with = "schema::table::<SizesWritten>")]
-    pub sizes: Maybe<SizesWritten>,
+    pub sizes: Maybe<Table<SizesWritten>>,
     /// Lateral forces, to the right: `floors`, or `base_shear` with `shape`, or `pressure` with `tributary`.
     #[schemars(schema_with = "schema::table::<LateralWritten>")]
-    pub lateral: Maybe<LateralWritten>,
+    pub lateral: Maybe<Table<LateralWritten>>,
 }
 
 /// The grid of the frame.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "the table [grid]")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["bays", "storeys"]))]
 pub(super) struct GridWritten {
     /// Bay widths from the left, or { count = 3, width = "7.2 m" }.
@@ -64,7 +64,7 @@ pub(super) struct GridWritten {
 
 /// Bays of one width.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { count = 3, width = \"7.2 m\" }")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["count", "width"]))]
 pub(super) struct EqualBays {
     /// Number of bays, 1 to 100.
@@ -81,7 +81,7 @@ impl Expecting for EqualBays {
 
 /// Storeys of one height, the lowest apart.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { count = 8, height = \"3.9 m\" }")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["count", "height"]))]
 pub(super) struct EqualStoreys {
     /// Number of storeys, 1 to 500.
@@ -102,7 +102,7 @@ impl Expecting for EqualStoreys {
 
 /// The column feet.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "the table [feet]")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct FeetWritten {
     /// "fixed", "pinned", or { spring = "150 MN m/rad" } for each column line.
     #[schemars(schema_with = "schema::fixity")]
@@ -111,7 +111,7 @@ pub(super) struct FeetWritten {
 
 /// A rotational spring under each column.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { spring = \"150 MN m/rad\" }")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["spring"]))]
 pub(super) struct SpringWritten {
     /// Rotational stiffness of the spring under each column.
@@ -125,7 +125,7 @@ impl Expecting for SpringWritten {
 
 /// The material of all members.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "the table [material]")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct MaterialWritten {
     /// Modulus of elasticity.
     #[schemars(schema_with = "schema::modulus")]
@@ -134,7 +134,7 @@ pub(super) struct MaterialWritten {
 
 /// Columns of one size.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table of column sizes")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct ColumnsWritten {
     /// Storeys, 1 = lowest: "all", "2", "1-3", "4-roof", "1,3-5". Default "all".
     #[schemars(schema_with = "schema::levels")]
@@ -150,19 +150,19 @@ pub(super) struct ColumnsWritten {
     pub area: Maybe<Scalar>,
     /// A solid rectangle in place of `inertia` and `area`.
     #[schemars(schema_with = "schema::table::<RectangleWritten>")]
-    pub rectangle: Maybe<RectangleWritten>,
+    pub rectangle: Maybe<Table<RectangleWritten>>,
     /// Multiplies the inertia, not the area, for cracked concrete. More than 0, default 1.
     #[schemars(schema_with = "schema::positive_number")]
     pub stiffness_factor: Maybe<Scalar>,
 }
 
 impl Expecting for ColumnsWritten {
-    const EXPECTING: &str = "tables headed [[columns]], in double brackets";
+    const EXPECTING: &str = "a [[columns]] in double brackets";
 }
 
 /// Beams of one size.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table of beam sizes")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct BeamsWritten {
     /// Floors, 1 = on top of the lowest storey: "all", "2", "1-3", "4-roof", "roof". Default "all".
     #[schemars(schema_with = "schema::levels")]
@@ -175,7 +175,7 @@ pub(super) struct BeamsWritten {
     pub inertia: Maybe<Scalar>,
     /// A solid rectangle in place of `inertia`.
     #[schemars(schema_with = "schema::table::<RectangleWritten>")]
-    pub rectangle: Maybe<RectangleWritten>,
+    pub rectangle: Maybe<Table<RectangleWritten>>,
     /// Multiplies the inertia, for cracked concrete. Default 1; 0 for a beam that carries no moment.
     #[schemars(schema_with = "schema::factor")]
     pub stiffness_factor: Maybe<Scalar>,
@@ -185,12 +185,12 @@ pub(super) struct BeamsWritten {
 }
 
 impl Expecting for BeamsWritten {
-    const EXPECTING: &str = "tables headed [[beams]], in double brackets";
+    const EXPECTING: &str = "a [[beams]] in double brackets";
 }
 
 /// A solid rectangle.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { width = \"400 mm\", depth = \"600 mm\" }")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["width", "depth"]))]
 pub(super) struct RectangleWritten {
     /// Side across the frame's plane.
@@ -203,7 +203,7 @@ pub(super) struct RectangleWritten {
 
 /// The lateral forces.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "the table [lateral]")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct LateralWritten {
     /// Force at each floor, from the lowest up to the roof. May be zero or negative, but every storey shear must be positive.
     #[schemars(schema_with = "schema::forces")]
@@ -225,7 +225,7 @@ pub(super) struct LateralWritten {
 
 /// Forces proportional to a power of the height.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { power = 1.5 }")]
+#[serde(deny_unknown_fields, default)]
 #[schemars(extend("required" = ["power"]))]
 pub(super) struct PowerWritten {
     /// The power, 0 to 10.
@@ -239,7 +239,7 @@ impl Expecting for PowerWritten {
 
 /// How far given sizes may be off: factors up to that much either way, 1 or more, log-uniform.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "a table such as { member = 1.15, beams = 1.5, all = 1.3 }")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct WithinWritten {
     /// Factor drawn for each member alone. Default 1.
     #[schemars(schema_with = "schema::spread_factor")]
@@ -254,7 +254,7 @@ pub(super) struct WithinWritten {
 
 /// The size model: each key a number (fixed) or a range [low, high].
 #[derive(Debug, Default, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields, default, expecting = "the table [sizes]")]
+#[serde(deny_unknown_fields, default)]
 pub(super) struct SizesWritten {
     /// (I_b/L)/(I_c/h) of a beam of mean bay width to an end column of median storey height, both of the lowest tier.
     /// Log-uniform, default [0.1, 2.5].
@@ -290,4 +290,32 @@ pub(super) struct SizesWritten {
     /// a in A = a sqrt(I): 3.5 for solid square concrete, 1.0 to 1.6 for wide-flange steel. Log-uniform, default 3.5.
     #[schemars(schema_with = "schema::spread")]
     pub area_per_inertia: Maybe<Spread>,
+}
+
+impl Expecting for GridWritten {
+    const EXPECTING: &str = "the table [grid]";
+}
+
+impl Expecting for FeetWritten {
+    const EXPECTING: &str = "the table [feet]";
+}
+
+impl Expecting for MaterialWritten {
+    const EXPECTING: &str = "the table [material]";
+}
+
+impl Expecting for RectangleWritten {
+    const EXPECTING: &str = "a table such as { width = \"400 mm\", depth = \"600 mm\" }";
+}
+
+impl Expecting for LateralWritten {
+    const EXPECTING: &str = "the table [lateral]";
+}
+
+impl Expecting for WithinWritten {
+    const EXPECTING: &str = "a table such as { member = 1.15, beams = 1.5, all = 1.3 }";
+}
+
+impl Expecting for SizesWritten {
+    const EXPECTING: &str = "the table [sizes]";
 }
