@@ -34,7 +34,7 @@ fn numbers_that_files_cannot_carry_become_blank_and_minus_zero_goes() {
 fn csv_reads_back_equal() {
     let data = dataset();
     let table = data.table("errors").unwrap();
-    let text = csv::write(table);
+    let text = csv::write(table).unwrap();
     assert!(!text.contains('\r') && text.ends_with('\n'));
     let mut reader = ::csv::Reader::from_reader(text.as_bytes());
     let heads: Vec<&str> = table.columns().iter().map(|column| column.name).collect();
@@ -395,7 +395,7 @@ proptest! {
         const COLUMNS: [ColumnInfo; 1] = [ColumnInfo { name: "value", description: "" }];
         let value = f64::from_bits(bits);
         let table = Table::new("t", &COLUMNS, [[Cell::Number(value)]]);
-        let text = csv::write(&table);
+        let text = csv::write(&table).unwrap();
         let field = text.lines().nth(1).unwrap();
         match value.is_finite() {
             true => prop_assert_eq!(field.parse::<f64>().unwrap(), value),

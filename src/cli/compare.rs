@@ -136,7 +136,7 @@ fn write_report(args: &CompareArgs, findings: &Findings, dataset: &Dataset) -> R
     let place = args.common.out.clone().unwrap_or_else(|| output::usual_place(&args.frame, "compare"));
     let folder = ReportFolder::start(&place, &args.frame)?;
     for table in dataset.tables() {
-        folder.write(&format!("{}.csv", table.name()), csv::write(table).as_bytes())?;
+        folder.write(&format!("{}.csv", table.name()), csv::write(table)?.as_bytes())?;
     }
     folder.write("result.json", json::write(dataset)?.as_bytes())?;
     folder.write("record.json", json::record(dataset)?.as_bytes())?;
@@ -161,7 +161,7 @@ fn write_report(args: &CompareArgs, findings: &Findings, dataset: &Dataset) -> R
 fn standard_output(format: Format, findings: &Findings, dataset: &Dataset) -> Result<String, Failure> {
     Ok(match format {
         Format::Text => text::write(&brief(findings), text::Options { colour: true, ..text::Options::default() }),
-        Format::Csv => dataset.table("values").map(csv::write).unwrap_or_default(),
+        Format::Csv => dataset.table("values").map(csv::write).transpose()?.unwrap_or_default(),
         Format::Json => json::write(dataset)?,
     })
 }

@@ -29,9 +29,9 @@ pub const ID: &str = "slope-deflection";
 pub fn analyse(frame: &Frame) -> Result<Response, Unsolvable> {
     let levels = Levels { lines: frame.lines(), feet_turn: *frame.feet() != Feet::Fixed };
     let solution = assemble(frame, levels).solve().map_err(|singular| mechanism(frame, levels, &singular))?;
-    let residual = accept(solution.residual)?;
     let forces = recover(frame, levels, &solution);
-    let response = Response::from_forces(ID, frame, &forces).with_residual(residual);
+    let response = Response::from_forces(ID, frame, &forces).with_residual(solution.residual);
+    let response = accept(frame, response)?;
     if !frame.has_real_stiffness() {
         return Ok(response);
     }

@@ -36,12 +36,12 @@ pub fn analyse(frame: &Frame) -> Result<Response, Unsolvable> {
     }
     let map = Map::of(frame);
     let solution = assemble(frame, &map).solve().map_err(|singular| mechanism(frame, &map, &singular))?;
-    let residual = accept(solution.residual)?;
     let moved = Moved { map: &map, levels: &solution.levels };
     let forces = recover(frame, &moved);
     let drift = |storey| moved.chord(storey) * frame.storey_height(storey);
     let drifts: Vec<_> = (0..frame.storeys()).map(drift).collect();
-    Ok(Response::from_forces(ID, frame, &forces).with_residual(residual).with_drifts(&drifts))
+    let response = Response::from_forces(ID, frame, &forces).with_residual(solution.residual);
+    Ok(accept(frame, response)?.with_drifts(&drifts))
 }
 
 /// Place of one unknown: level and index.

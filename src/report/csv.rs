@@ -1,19 +1,25 @@
 //! A table as comma-separated text: a header, full precision, LF line ends.
 
 use super::number::full;
-use super::{Cell, Table};
+use super::{Cell, Fault, Table};
 
 /// The table as CSV.
 ///
+/// # Errors
+/// [`Fault::Csv`] where the text could not be made.
+///
 /// # References
 /// RFC 4180, but with LF alone at line ends.
-pub fn write(table: &Table) -> String {
-    let mut text = String::new();
-    push_row(&mut text, table.columns().iter().map(|column| column.name.into()));
+pub fn write(table: &Table) -> Result<String, Fault> {
+    let fault = |error: ::csv::Error| Fault::Csv { table: table.name().into(), cause: error.to_string() };
+    let mut writer = ::csv::WriterBuilder::new().from_writer(Vec::new());
+    writer.write_record(table.columns().iter().map(|column| column.name)).map_err(fault)?;
     for row in table.rows() {
-        push_row(&mut text, row.iter().map(field));
+        writer.write_record(row.iter().map(field)).map_err(fault)?;
     }
-    text
+    let failed = |cause: String| Fault::Csv { table: table.name().into(), cause };
+    let bytes = writer.into_inner().map_err(|error| failed(error.to_string()))?;
+    String::from_utf8(bytes).map_err(|error| failed(error.to_string()))
 }
 
 fn field(cell: &Cell) -> String {
@@ -23,20 +29,4 @@ fn field(cell: &Cell) -> String {
         Cell::Integer(value) => value.to_string(),
         Cell::Blank => String::new(),
     }
-}
-
-fn push_row(text: &mut String, fields: impl ExactSizeIterator<Item = String>) {
-    let alone = fields.len() == 1;
-    for (index, field) in fields.enumerate() {
-        if index > 0 {
-            text.push(',');
-        }
-        // A row of one empty field would read as no row.
-        let quoted = field.contains([',', '"', '\n', '\r']) || (alone && field.is_empty());
-        match quoted {
-            true => text.push_str(&format!("\"{}\"", field.replace('"', "\"\""))),
-            false => text.push_str(&field),
-        }
-    }
-    text.push('\n');
 }

@@ -43,6 +43,14 @@ pub enum Fault {
         /// The column at fault.
         column: String,
     },
+    /// The CSV text could not be made.
+    #[error("the CSV text of table `{table}` could not be made: {cause}")]
+    Csv {
+        /// The table.
+        table: String,
+        /// What went wrong.
+        cause: String,
+    },
     /// The JSON text could not be made.
     #[error("the JSON text could not be made: {0}")]
     Json(#[from] serde_json::Error),

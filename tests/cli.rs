@@ -1,0 +1,219 @@
+//! The program as a user meets it: exit codes, what goes to which stream, what is written and what is not.
+#![allow(clippy::unwrap_used, clippy::expect_used, clippy::panic, reason = "a test fails by panicking")]
+
+#[path = "support/pin.rs"]
+mod pin;
+
+use assert_cmd::Command;
+use std::fs::{self, File};
+use std::path::Path;
+use std::process::Output;
+use tempfile::TempDir;
+
+const FRAME: &str = r#"
+title = "Workshop"
+[grid]
+bays    = ["6 m", "7 m"]
+storeys = ["4 m", "3.5 m"]
+[feet]
+fixity = "FEET"
+[material]
+modulus = "200 GPa"
+[[columns]]
+storeys = "all"
+lines   = "all"
+inertia = "2e-4 m4"
+[[beams]]
+floors = "all"
+bays   = "all"
+inertia = "3e-4 m4"
+stiffness_factor = FACTOR
+[lateral]
+floors = ["30 kN", "40 kN"]
+"#;
+
+fn frame(feet: &str, factor: &str) -> String {
+    FRAME.replace("FEET", feet).replace("FACTOR", factor)
+}
+
+/// An empty folder with `frame.toml` in it.
+fn home(text: &str) -> TempDir {
+    let home = tempfile::tempdir().unwrap();
+    fs::write(home.path().join("frame.toml"), text).unwrap();
+    home
+}
+
+fn run(home: &TempDir, words: &[&str]) -> Output {
+    let mut command = Command::new(env!("CARGO_BIN_EXE_swaybound"));
+    command.current_dir(home.path()).args(words).output().unwrap()
+}
+
+fn stderr(output: &Output) -> String {
+    String::from_utf8(output.stderr.clone()).unwrap()
+}
+
+/// Asserts a failure: its code, one message that holds `words`, nothing on standard output, nothing written.
+fn fails(home: &TempDir, words: &[&str], code: i32, message: &str) {
+    let before = names(home.path());
+    let output = run(home, words);
+    let said = stderr(&output);
+    assert_eq!(output.status.code(), Some(code), "{said}");
+    assert!(said.contains(message), "{message:?} is not in:\n{said}");
+    assert_eq!(said.matches("error").count(), 1, "more than one message:\n{said}");
+    assert!(!said.contains("panicked"), "{said}");
+    assert!(output.stdout.is_empty());
+    assert_eq!(names(home.path()), before, "something was written");
+}
+
+fn names(folder: &Path) -> Vec<String> {
+    let mut names: Vec<_> = fs::read_dir(folder).unwrap().map(|entry| entry.unwrap().path()).collect();
+    names.sort();
+    names.iter().map(|path| path.file_name().unwrap().to_string_lossy().into_owned()).collect()
+}
+
+#[test]
+fn a_sound_frame_gives_results_on_standard_output_and_a_report() {
+    let home = home(&frame("fixed", "1.0"));
+    let output = run(&home, &["compare", "frame.toml"]);
+    assert_eq!(output.status.code(), Some(0));
+    assert!(String::from_utf8_lossy(&output.stdout).starts_with("Workshop\n"));
+    assert!(stderr(&output).contains("report: output/frame/compare/report.html"));
+    let report = names(&home.path().join("output/frame/compare"));
+    for name in ["record.json", "report.html", "result.json", "results.xlsx", "values.csv", "errors.csv"] {
+        assert!(report.contains(&name.to_string()), "{name}");
+    }
+    assert_eq!(names(&home.path().join("output/frame")), ["compare"], "nothing is left beside the report");
+}
+
+#[test]
+fn quiet_leaves_standard_error_empty_and_the_results_whole() {
+    let home = home(&frame("fixed", "1.0").replace("\"4 m\"", "\"16 m\""));
+    let (loud, quiet) = (run(&home, &["compare", "frame.toml"]), run(&home, &["compare", "frame.toml", "--quiet"]));
+    assert!(stderr(&loud).contains("16 m"), "{}", stderr(&loud));
+    assert!(quiet.stderr.is_empty());
+    assert!(!String::from_utf8_lossy(&loud.stdout).contains("warning"));
+    assert_eq!(loud.stdout, quiet.stdout);
+}
+
+#[test]
+fn the_csv_on_standard_output_begins_with_the_agreed_head() {
+    let home = home(&frame("fixed", "1.0"));
+    let output = run(&home, &["compare", "frame.toml", "--format", "csv"]);
+    let text = String::from_utf8(output.stdout).unwrap();
+    assert!(text.starts_with("method,member,storey,at,quantity,value,unit\n"));
+    assert!(text.contains("\nportal,column,1,A,moment_foot,-"));
+    let errors = fs::read_to_string(home.path().join("output/frame/compare/errors.csv")).unwrap();
+    let head =
+        "method,reference,member,storey,at,quantity,exact,quick,unit,error_percent,storey_error_percent,factor,flag\n";
+    assert!(errors.starts_with(head));
+}
+
+#[test]
+fn units_on_the_command_line_replace_those_of_the_file() {
+    let home = home(&frame("fixed", "1.0"));
+    let output = run(&home, &["compare", "frame.toml", "--format", "csv", "--units", "us"]);
+    let text = String::from_utf8(output.stdout).unwrap();
+    assert!(text.contains(",kip ft\n") && text.contains(",in\n") && !text.contains("kN"));
+}
+
+#[test]
+fn require_turns_a_shortfall_into_exit_code_1() {
+    let home = home(&frame("fixed", "1.0"));
+    let code = |words: &[&str]| run(&home, words).status.code();
+    assert_eq!(code(&["compare", "frame.toml", "--require", "--tolerance", "1"]), Some(1));
+    assert_eq!(code(&["compare", "frame.toml", "--tolerance", "1%"]), Some(0));
+    assert_eq!(code(&["compare", "frame.toml", "--require", "--tolerance", "90 %"]), Some(0));
+}
+
+#[test]
+fn a_frame_that_cannot_stand_is_exit_code_3_and_names_the_storey() {
+    fails(&home(&frame("pinned", "0")), &["compare", "frame.toml"], 3, "storey 1 sways without resistance");
+}
+
+#[test]
+fn an_analysis_that_lacks_areas_is_refused_with_the_reason() {
+    let words = ["compare", "frame.toml", "--exact", "stiffness"];
+    fails(&home(&frame("fixed", "1.0")), &words, 2, "not every column has an area");
+}
+
+#[test]
+fn inputs_that_are_no_frame_files_get_one_message_each() {
+    let home = home("");
+    fs::create_dir(home.path().join("folder")).unwrap();
+    fs::write(home.path().join("latin.toml"), b"title = \"x\"\n# B\xfcro\n").unwrap();
+    File::create(home.path().join("huge.toml")).unwrap().set_len(100_000_000).unwrap();
+    fails(&home, &["compare", "folder"], 2, "this is a folder");
+    fails(&home, &["compare", "latin.toml"], 2, "latin.toml:2: the file is not UTF-8");
+    fails(&home, &["compare", "huge.toml"], 2, "100000000 bytes");
+    fails(&home, &["compare", "frame.toml"], 2, "empty");
+    fails(&home, &["compare", "nowhere.toml"], 4, "there is no such file");
+}
+
+#[test]
+fn a_folder_that_is_not_a_report_is_left_alone() {
+    let home = home(&frame("fixed", "1.0"));
+    fs::create_dir(home.path().join("thesis")).unwrap();
+    fs::write(home.path().join("thesis/chapter.txt"), "years").unwrap();
+    fails(&home, &["compare", "frame.toml", "--out", "thesis"], 4, "not a report folder");
+    assert_eq!(fs::read_to_string(home.path().join("thesis/chapter.txt")).unwrap(), "years");
+}
+
+#[test]
+fn a_report_is_replaced_by_the_next() {
+    let home = home(&frame("fixed", "1.0"));
+    assert!(run(&home, &["compare", "frame.toml", "--out", "here"]).status.success());
+    let first = fs::read(home.path().join("here/report.html")).unwrap();
+    fs::write(home.path().join("frame.toml"), frame("pinned", "1.0")).unwrap();
+    assert!(run(&home, &["compare", "frame.toml", "--out", "here"]).status.success());
+    assert_ne!(fs::read(home.path().join("here/report.html")).unwrap(), first);
+    assert_eq!(names(home.path()), ["frame.toml", "here"]);
+}
+
+#[test]
+fn words_that_mean_nothing_are_exit_code_2() {
+    let home = home(&frame("fixed", "1.0"));
+    fails(&home, &["compare", "frame.toml", "--tolerance", "0"], 2, "percentage over 0");
+    fails(&home, &["compare", "frame.toml", "--tolerance", "NaN"], 2, "percentage over 0");
+    fails(&home, &["compare", "frame.toml", "--formt", "csv"], 2, "--format");
+    fails(&home, &["compare"], 2, "<FRAME>");
+}
+
+#[test]
+fn help_shows_cautions_and_exit_codes() {
+    let home = home("");
+    for words in [&["--help"][..], &["compare", "--help"], &["new", "--help"]] {
+        let output = run(&home, words);
+        let text = String::from_utf8(output.stdout).unwrap();
+        assert!(text.contains("It is not a design"), "{text}");
+        assert!(text.lines().all(|line| line.chars().count() <= 100));
+    }
+}
+
+#[test]
+fn assumed_sizes_are_said_in_the_first_line() {
+    let text = "title = \"Sketch\"\n[grid]\nbays = { count = 2, width = \"7 m\" }\n\
+                storeys = { count = 3, height = \"3.6 m\" }\n[sizes]\n[lateral]\nfloors = [\"1 kN\", \"2 kN\", \"3 kN\"]\n";
+    let home = home(text);
+    let output = run(&home, &["compare", "frame.toml"]);
+    assert!(String::from_utf8_lossy(&output.stdout).starts_with("Sketch: member sizes assumed\n"));
+    let csv = String::from_utf8(run(&home, &["compare", "frame.toml", "--format", "csv"]).stdout).unwrap();
+    assert!(!csv.contains("drift"), "relative sizes give no drifts");
+}
+
+#[test]
+fn every_shipped_frame_runs() {
+    let folder = pin::project("studies");
+    let mut frames = 0;
+    for entry in fs::read_dir(folder).unwrap() {
+        let path = entry.unwrap().path();
+        if path.extension().is_none_or(|end| end != "toml") {
+            continue;
+        }
+        let home = tempfile::tempdir().unwrap();
+        let output = run(&home, &["compare", path.to_str().unwrap()]);
+        assert_eq!(output.status.code(), Some(0), "{}: {}", path.display(), stderr(&output));
+        assert!(!stderr(&output).contains("warning"), "{}: {}", path.display(), stderr(&output));
+        frames += 1;
+    }
+    assert!(frames >= 4);
+}
