@@ -77,11 +77,20 @@ fn unknown_key(rest: &str) -> FaultKind {
         return FaultKind::WrongForm { found: "a date".into(), expected: "a text in quotes or a table".into() };
     }
     let known: Vec<_> = names.filter(|name| name != "area" || !rest.contains("`floors`")).collect();
-    let near =
-        known.iter().min_by_key(|name| distance(name, &key)).filter(|name| distance(name, &key) <= 2 + key.len() / 6);
-    let home = || HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| (*place).to_string());
-    let suggestion = home().or_else(|| near.cloned());
-    FaultKind::UnknownKey { key, suggestion, known }
+    let home = HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| *place);
+    let near = || {
+        let near = known.iter().min_by_key(|name| distance(name, &key));
+        near.filter(|name| home.is_none() && distance(name, &key) <= 2 + key.len() / 6).cloned()
+    };
+    let suggestion = twin(&key, &known).or_else(near);
+    FaultKind::UnknownKey { key, suggestion, home, known }
+}
+
+/// Columns have storeys and lines where beams have floors and bays.
+fn twin(key: &str, known: &[String]) -> Option<String> {
+    let twins = [("storeys", "floors"), ("floors", "storeys"), ("bays", "lines"), ("lines", "bays")];
+    let other = twins.iter().find(|(name, _)| *name == key).map(|(_, other)| (*other).to_string());
+    other.filter(|other| known.contains(other) && known.iter().any(|name| name == "inertia"))
 }
 
 fn distance(known: &str, typed: &str) -> usize {
