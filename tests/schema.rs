@@ -2,6 +2,8 @@
 //!
 //! To write it anew: `SWAYBOUND_PIN=write cargo test --release --test schema`.
 
+#![allow(clippy::unwrap_used, clippy::panic)]
+
 use serde_json::Value;
 use std::fs;
 use std::path::{Path, PathBuf};
