@@ -2,6 +2,8 @@
 //!
 //! To write the messages anew: `SWAYBOUND_PIN=write cargo test --release --test messages`, then read the difference.
 
+#![allow(clippy::unwrap_used, clippy::panic)]
+
 use assert_cmd::Command;
 use std::fs;
 use std::path::{Path, PathBuf};

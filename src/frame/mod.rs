@@ -6,6 +6,7 @@ mod fault;
 pub mod file;
 mod names;
 pub mod sizes;
+pub mod template;
 
 pub use fault::{FrameFault, FrameWarning};
 pub use names::{bay_name, line_index, line_name};

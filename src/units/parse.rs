@@ -1,7 +1,7 @@
 //! Quantities as people type them: `7.2 m`, `3.6m`, `12'-6 1/2"`, `1200 in^4`, `150 MN m/rad`.
 
+use super::METRES_PER_INCH;
 use super::dimension::{Dimension, Powers, SYMBOLS, Symbol};
-use super::{METRES_PER_FOOT, METRES_PER_INCH};
 use thiserror::Error;
 
 /// A text that is not a quantity of the wanted kind.
@@ -300,7 +300,7 @@ fn read_feet(marked: &str) -> Option<f64> {
         text => mixed_number(text.strip_suffix('"')?.trim())?,
     };
     let whole = !body.contains('\'') || inches < 12.0;
-    whole.then(|| sign * (feet * METRES_PER_FOOT + inches * METRES_PER_INCH))
+    whole.then_some(sign * (12.0 * feet + inches) * METRES_PER_INCH)
 }
 
 /// A number such as `6`, `6.5`, `6 1/2`, `6-1/2` or `1/2`.

@@ -118,7 +118,10 @@ fn known_sizes(
     let mut echo = made.echo;
     echo.extend(made_beams.echo);
     echo.extend(
-        written.within.as_ref().map(|table| Echo { what: "sizes within".into(), typed: source.typed(table.span()) }),
+        written
+            .within
+            .as_ref()
+            .map(|table| Echo { what: "sizes within".into(), typed: model::echo_within(source, table.get_ref()) }),
     );
     Ok(Sized {
         columns: made.sections,
@@ -128,7 +131,7 @@ fn known_sizes(
         statement: SizeStatement::Stated { within },
         echo,
         warnings: made.warnings.into_iter().chain(made_beams.warnings).collect(),
-        span: columns.get_ref().0.first().map_or(columns.span(), Spanned::span),
+        span: made.without_area.unwrap_or(columns.span()),
     })
 }
 

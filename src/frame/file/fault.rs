@@ -11,7 +11,7 @@ use thiserror::Error;
 #[error("{kind}")]
 pub struct FileFault {
     /// What is wrong.
-    pub kind: FaultKind,
+    pub kind: Box<FaultKind>,
     /// Bytes of the text that are at fault.
     pub span: Range<usize>,
     /// The key in words, such as `grid.bays, entry 2`; empty where the fault belongs to no key.
@@ -23,7 +23,7 @@ pub struct FileFault {
 impl FileFault {
     /// A fault at `span`; the key is found when the whole text is at hand.
     pub(super) fn new(kind: impl Into<FaultKind>, span: Range<usize>) -> Self {
-        Self { kind: kind.into(), span, key: String::new(), related: None }
+        Self { kind: Box::new(kind.into()), span, key: String::new(), related: None }
     }
 
     /// The same fault with another place that has to do with it.
@@ -56,8 +56,10 @@ pub enum FaultKind {
     UnknownKey {
         /// The key as typed.
         key: String,
-        /// A key of the same table that is close to it, or the table it belongs to.
+        /// A key of the same table that is close to it.
         suggestion: Option<String>,
+        /// Where the key belongs, where it is one of another table.
+        home: Option<&'static str>,
         /// The keys that the table has.
         known: Vec<String>,
     },

@@ -8,7 +8,9 @@ pub(super) fn help(kind: &FaultKind) -> String {
     match kind {
         FaultKind::Syntax { hint, .. } => (*hint).into(),
         FaultKind::Empty => "`swaybound new` writes a commented frame file to start from".into(),
-        FaultKind::UnknownKey { key, suggestion, known } => unknown_key(key, suggestion.as_deref(), known),
+        FaultKind::UnknownKey { key, suggestion, home, known } => {
+            unknown_key(key, suggestion.as_deref(), *home, known)
+        },
         FaultKind::DuplicateKey { .. } => "keep one of the two".into(),
         FaultKind::WrongForm { expected, .. } => wrong_form(expected),
         FaultKind::Unit(error) => error.help(),
@@ -47,11 +49,11 @@ pub(super) fn help(kind: &FaultKind) -> String {
 /// The three forms of the table `[lateral]`.
 pub(super) const THREE_WAYS: &str = "write [lateral] with floors = [\"40 kN\", \"60 kN\"] from the lowest floor up, or base_shear = \"900 kN\" with shape = \"triangular\", or pressure = \"1.2 kPa\" with tributary = \"6 m\"";
 
-fn unknown_key(key: &str, suggestion: Option<&str>, known: &[String]) -> String {
-    match suggestion {
-        Some(place) if place.contains(' ') => format!("`{key}` belongs {place}"),
-        Some(better) => format!("did you mean `{better}`?"),
-        None => format!("the keys here are {}", known.join(", ")),
+fn unknown_key(key: &str, suggestion: Option<&str>, home: Option<&str>, known: &[String]) -> String {
+    match (suggestion, home) {
+        (Some(better), _) => format!("did you mean `{better}`?"),
+        (None, Some(home)) => format!("`{key}` belongs {home}"),
+        (None, None) => format!("the keys here are {}", known.join(", ")),
     }
 }
 

@@ -19,6 +19,8 @@ pub(super) struct Members {
     pub sections: Vec<Section>,
     pub echo: Vec<Echo>,
     pub warnings: Vec<FileWarning>,
+    /// The first table with an effect that states no area.
+    pub without_area: Option<Range<usize>>,
 }
 
 /// One table as checked.
@@ -221,10 +223,10 @@ fn assign(
     let mut warnings = warnings;
     for (number, table) in tables.iter().enumerate() {
         let mut lost = None;
-        for index in 0..owners.len() {
+        for (index, owner) in owners.iter_mut().enumerate() {
             if table.levels[index / places] && table.places[index % places] {
-                lost = lost.or(owners[index]);
-                owners[index] = Some(number);
+                lost = lost.or(*owner);
+                *owner = Some(number);
             }
         }
         warnings.extend(factor_lost(table, lost.map(|earlier| &tables[earlier])));
@@ -238,8 +240,11 @@ fn assign(
     warnings.extend(
         tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)),
     );
+    let bare = |number: &usize| !unused(*number) && tables[*number].section.area.is_none();
+    let without_area = (0..tables.len()).find(bare).map(|number| tables[number].span.clone());
     let sections = owners.iter().flatten().map(|number| tables[*number].section).collect();
-    Ok(Members { sections, echo: tables.into_iter().map(|table| table.echo).collect(), warnings })
+    let echo = tables.into_iter().map(|table| table.echo).collect();
+    Ok(Members { sections, echo, warnings, without_area })
 }
 
 fn factor_lost(table: &Checked, replaced: Option<&Checked>) -> Option<FileWarning> {

@@ -82,7 +82,7 @@ pub fn parse(text: &str) -> Result<FrameFile, FileFault> {
             }
             Ok(file)
         }
-        Err(fault) if matches!(fault.kind, FaultKind::Syntax { .. }) => Err(fault),
+        Err(fault) if matches!(*fault.kind, FaultKind::Syntax { .. }) => Err(fault),
         Err(fault) => Err(FileFault { key: named(&fault.span), ..fault }),
     }
 }

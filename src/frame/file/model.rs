@@ -127,3 +127,12 @@ pub(super) fn echo(source: Source, written: &SizesWritten, model: &SizeModel) ->
     };
     lines.into_iter().map(line).collect()
 }
+
+/// What the user typed in `within`.
+pub(super) fn echo_within(source: Source, table: &WithinWritten) -> String {
+    let named = [("member", &table.member), ("beams", &table.beams), ("all", &table.all)];
+    let word = |(name, value): (&str, &Maybe<Scalar>)| {
+        value.as_ref().map(|value| format!("{name} {}", source.typed(value.span())))
+    };
+    named.into_iter().filter_map(word).collect::<Vec<_>>().join(", ")
+}

@@ -33,7 +33,7 @@ pub(super) fn translate(error: &toml::de::Error, text: &str) -> FileFault {
         return FileFault::new(crate::units::UnitError::Overflow { text: typed }, span);
     }
     if let Some(rest) = message.strip_prefix("unknown field ") {
-        return FileFault::new(unknown_key(rest), span);
+        return FileFault::new(unknown_key(rest, text[span.clone()].trim_matches(['"', '\''])), span);
     }
     if let Some((found, expected)) =
         message.strip_prefix("invalid type: ").and_then(|rest| rest.split_once(", expected "))
@@ -70,18 +70,28 @@ fn duplicate(text: &str, span: Range<usize>) -> FileFault {
 }
 
 /// Reads `` `key`, expected one of `a`, `b` `` as serde writes it.
-fn unknown_key(rest: &str) -> FaultKind {
-    let mut names = rest.split('`').skip(1).step_by(2).map(String::from);
-    let key = names.next().unwrap_or_default();
-    if key.starts_with("$__toml_private") {
+fn unknown_key(rest: &str, typed: &str) -> FaultKind {
+    let key = typed.to_string();
+    let names = rest.rsplit_once(", expected ").map_or("", |(_, names)| names);
+    let names = names.split('`').skip(1).step_by(2).map(String::from);
+    if rest.starts_with("`$__toml_private") {
         return FaultKind::WrongForm { found: "a date".into(), expected: "a text in quotes or a table".into() };
     }
     let known: Vec<_> = names.filter(|name| name != "area" || !rest.contains("`floors`")).collect();
-    let near =
-        known.iter().min_by_key(|name| distance(name, &key)).filter(|name| distance(name, &key) <= 2 + key.len() / 6);
-    let home = || HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| (*place).to_string());
-    let suggestion = home().or_else(|| near.cloned());
-    FaultKind::UnknownKey { key, suggestion, known }
+    let home = HOMES.iter().find(|(_, keys)| keys.contains(&key.as_str())).map(|(place, _)| *place);
+    let near = || {
+        let near = known.iter().min_by_key(|name| distance(name, &key));
+        near.filter(|name| home.is_none() && distance(name, &key) <= 2 + key.len() / 6).cloned()
+    };
+    let suggestion = twin(&key, &known).or_else(near);
+    FaultKind::UnknownKey { key, suggestion, home, known }
+}
+
+/// Columns have storeys and lines where beams have floors and bays.
+fn twin(key: &str, known: &[String]) -> Option<String> {
+    let twins = [("storeys", "floors"), ("floors", "storeys"), ("bays", "lines"), ("lines", "bays")];
+    let other = twins.iter().find(|(name, _)| *name == key).map(|(_, other)| (*other).to_string());
+    other.filter(|other| known.contains(other) && known.iter().any(|name| name == "inertia"))
 }
 
 fn distance(known: &str, typed: &str) -> usize {

@@ -33,6 +33,7 @@ impl FileWarning {
                 "a later table replaces the whole size: repeat stiffness_factor in it, or write stiffness_factor = 1"
             }
             WarningKind::Growing => "members usually get smaller up the height",
+            WarningKind::Frame(FrameWarning::SomeAreas { .. }) => "add area to the tables of columns that have none",
             WarningKind::Frame(_) => "check the numbers of the frame",
         }
     }

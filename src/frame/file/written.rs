@@ -52,7 +52,7 @@ pub(super) struct Written {
 /// The grid of the frame.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["bays", "storeys"]))]
+#[schemars(rename = "Grid", extend("required" = ["bays", "storeys"]))]
 pub(super) struct GridWritten {
     /// Bay widths from the left, or { count = 3, width = "7.2 m" }.
     #[schemars(schema_with = "schema::bays")]
@@ -65,7 +65,7 @@ pub(super) struct GridWritten {
 /// Bays of one width.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["count", "width"]))]
+#[schemars(rename = "EqualBays", extend("required" = ["count", "width"]))]
 pub(super) struct EqualBays {
     /// Number of bays, 1 to 100.
     #[schemars(schema_with = "schema::bay_count")]
@@ -82,7 +82,7 @@ impl Expecting for EqualBays {
 /// Storeys of one height, the lowest apart.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["count", "height"]))]
+#[schemars(rename = "EqualStoreys", extend("required" = ["count", "height"]))]
 pub(super) struct EqualStoreys {
     /// Number of storeys, 1 to 500.
     #[schemars(schema_with = "schema::storey_count")]
@@ -103,6 +103,7 @@ impl Expecting for EqualStoreys {
 /// The column feet.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Feet")]
 pub(super) struct FeetWritten {
     /// "fixed", "pinned", or { spring = "150 MN m/rad" } for each column line.
     #[schemars(schema_with = "schema::fixity")]
@@ -112,7 +113,7 @@ pub(super) struct FeetWritten {
 /// A rotational spring under each column.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["spring"]))]
+#[schemars(rename = "Spring", extend("required" = ["spring"]))]
 pub(super) struct SpringWritten {
     /// Rotational stiffness of the spring under each column.
     #[schemars(schema_with = "schema::rotational_stiffness")]
@@ -126,6 +127,7 @@ impl Expecting for SpringWritten {
 /// The material of all members.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Material")]
 pub(super) struct MaterialWritten {
     /// Modulus of elasticity.
     #[schemars(schema_with = "schema::modulus")]
@@ -135,6 +137,7 @@ pub(super) struct MaterialWritten {
 /// Columns of one size.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Columns")]
 pub(super) struct ColumnsWritten {
     /// Storeys, 1 = lowest: "all", "2", "1-3", "4-roof", "1,3-5". Default "all".
     #[schemars(schema_with = "schema::levels")]
@@ -163,6 +166,7 @@ impl Expecting for ColumnsWritten {
 /// Beams of one size.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Beams")]
 pub(super) struct BeamsWritten {
     /// Floors, 1 = on top of the lowest storey: "all", "2", "1-3", "4-roof", "roof". Default "all".
     #[schemars(schema_with = "schema::levels")]
@@ -191,7 +195,7 @@ impl Expecting for BeamsWritten {
 /// A solid rectangle.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["width", "depth"]))]
+#[schemars(rename = "Rectangle", extend("required" = ["width", "depth"]))]
 pub(super) struct RectangleWritten {
     /// Side across the frame's plane.
     #[schemars(schema_with = "schema::length")]
@@ -204,6 +208,7 @@ pub(super) struct RectangleWritten {
 /// The lateral forces.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Lateral")]
 pub(super) struct LateralWritten {
     /// Force at each floor, from the lowest up to the roof. May be zero or negative, but every storey shear must be positive.
     #[schemars(schema_with = "schema::forces")]
@@ -226,7 +231,7 @@ pub(super) struct LateralWritten {
 /// Forces proportional to a power of the height.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
-#[schemars(extend("required" = ["power"]))]
+#[schemars(rename = "Power", extend("required" = ["power"]))]
 pub(super) struct PowerWritten {
     /// The power, 0 to 10.
     #[schemars(schema_with = "schema::power")]
@@ -240,6 +245,7 @@ impl Expecting for PowerWritten {
 /// How far given sizes may be off: factors up to that much either way, 1 or more, log-uniform.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Within")]
 pub(super) struct WithinWritten {
     /// Factor drawn for each member alone. Default 1.
     #[schemars(schema_with = "schema::spread_factor")]
@@ -255,6 +261,7 @@ pub(super) struct WithinWritten {
 /// The size model: each key a number (fixed) or a range [low, high].
 #[derive(Debug, Default, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Sizes")]
 pub(super) struct SizesWritten {
     /// (I_b/L)/(I_c/h) of a beam of mean bay width to an end column of median storey height, both of the lowest tier.
     /// Log-uniform, default [0.1, 2.5].
