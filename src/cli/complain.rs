@@ -48,8 +48,10 @@ fn finish(group: Group<'_>, styled: bool) -> String {
 }
 
 /// A message that belongs to no place in a text.
-pub fn plain_error(message: &str) -> String {
-    finish(Group::with_title(Level::ERROR.primary_title(message)), true)
+pub fn plain_error(message: &str, help: Option<&str>) -> String {
+    let group = Group::with_title(Level::ERROR.primary_title(message));
+    let help = help.map(|help| Level::HELP.message(help));
+    finish(group.elements(help), true)
 }
 
 /// A warning that belongs to no place in a text.

@@ -6,6 +6,7 @@ use std::path::PathBuf;
 use std::process::ExitCode;
 use swaybound::exact::Unsolvable;
 use swaybound::frame::file::FileFault;
+use swaybound::frame::template::TemplateFault;
 use swaybound::report::Fault as ReportFault;
 use swaybound::report::figure::PngError;
 use swaybound::store::StoreFault;
@@ -24,6 +25,9 @@ pub(super) enum Failure {
         /// Its text.
         text: String,
     },
+    /// The flags of a new frame file are at fault.
+    #[error(transparent)]
+    Template(#[from] TemplateFault),
     /// A file or folder cannot be used.
     #[error(transparent)]
     Store(#[from] StoreFault),
@@ -51,14 +55,15 @@ impl Failure {
     pub(super) fn render(&self) -> String {
         match self {
             Self::File { fault, path, text } => complain::render(fault, &path.display().to_string(), text, true),
-            other => complain::plain_error(&other.to_string()),
+            Self::Template(fault) => complain::plain_error(&fault.to_string(), fault.help().as_deref()),
+            other => complain::plain_error(&other.to_string(), None),
         }
     }
 
     /// See the exit codes in `--help`.
     pub(super) fn exit_code(&self) -> ExitCode {
         ExitCode::from(match self {
-            Self::File { .. } => 2,
+            Self::File { .. } | Self::Template(_) => 2,
             Self::Store(fault) if fault.is_input_at_fault() => 2,
             // A frame without areas or with relative sizes is fine; what was asked of it is not.
             Self::Unsolvable { fault: Unsolvable::NoAreas | Unsolvable::RelativeSizes, .. } => 2,

@@ -3,7 +3,7 @@
 mod compare;
 mod complain;
 mod failure;
-
+mod new;
 mod output;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
@@ -31,6 +31,7 @@ struct Cli {
 
 #[derive(Debug, Subcommand)]
 enum Command {
+    New(new::NewArgs),
     Compare(compare::CompareArgs),
 }
 
@@ -82,6 +83,7 @@ impl From<Units> for ReportUnits {
 pub fn run() -> ExitCode {
     let cli = Cli::parse();
     let result = match cli.command {
+        Command::New(args) => new::run(&args),
         Command::Compare(args) => compare::run(&args),
     };
     result.unwrap_or_else(|failure| {

@@ -108,7 +108,7 @@ impl UnitError {
             }
             Self::NoUnit { number, wanted } => {
                 let [metric, us] = wanted.units_for(number.parse().unwrap_or(0.0));
-                format!("write the unit inside the quotes, for example \"{number} {metric}\" or \"{number} {us}\"")
+                format!("write it in quotes with its unit, for example \"{number} {metric}\" or \"{number} {us}\"")
             }
             Self::UnknownUnit { suggestion: Some(unit), .. } => format!("did you mean `{unit}`?"),
             Self::UnknownUnit { wanted, .. } | Self::WrongKind { wanted, .. } => write_example(*wanted),
