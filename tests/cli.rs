@@ -93,6 +93,41 @@ fn quiet_leaves_standard_error_empty_and_the_results_whole() {
 }
 
 #[test]
+fn absurd_results_are_warned_about_and_still_given() {
+    let home = home(&frame("fixed", "1.0").replace("\"30 kN\"", "\"9000 kN\""));
+    let output = run(&home, &["compare", "frame.toml"]);
+    assert_eq!(output.status.code(), Some(0));
+    assert!(stderr(&output).contains("beyond 1/20"), "{}", stderr(&output));
+    assert!(String::from_utf8_lossy(&output.stdout).contains("beyond 1/20"));
+}
+
+#[test]
+fn new_writes_a_file_that_compare_takes_and_never_overwrites() {
+    let home = tempfile::tempdir().unwrap();
+    let words = ["new", "hall.toml", "--storeys", "3", "--bays", "2", "--height", "12'-6\"", "--units", "us"];
+    assert_eq!(run(&home, &words).status.code(), Some(0));
+    assert_eq!(names(home.path()), ["frame.schema.json", "hall.toml"]);
+    let text = fs::read_to_string(home.path().join("hall.toml")).unwrap();
+    assert!(text.starts_with("#:schema ./frame.schema.json\n") && text.contains("12'-6"));
+    assert_eq!(run(&home, &["compare", "hall.toml"]).status.code(), Some(0));
+    fails(&home, &words, 4, "exists already");
+    fails(&home, &["new", "other.toml", "--height", "3.5"], 2, "needs a unit");
+    fails(&home, &["new", "other.toml", "--storeys", "501"], 2, "1 to 500");
+    fails(&home, &["new", "other.toml", "--forces", "1 kN,2 kN", "--base-shear", "9 kN"], 2, "cannot be used with");
+}
+
+#[test]
+fn new_writes_to_standard_output_and_prints_the_schema() {
+    let home = tempfile::tempdir().unwrap();
+    let text = String::from_utf8(run(&home, &["new", "-", "--unknown-sizes"]).stdout).unwrap();
+    assert!(text.contains("\n[sizes]\n") && !text.contains("#:schema"));
+    let schema = String::from_utf8(run(&home, &["new", "--schema"]).stdout).unwrap();
+    let shipped = Path::new(env!("CARGO_MANIFEST_DIR")).join("studies/frame.schema.json");
+    assert_eq!(schema, fs::read_to_string(shipped).unwrap());
+    assert!(names(home.path()).is_empty());
+}
+
+#[test]
 fn the_csv_on_standard_output_begins_with_the_agreed_head() {
     let home = home(&frame("fixed", "1.0"));
     let output = run(&home, &["compare", "frame.toml", "--format", "csv"]);

@@ -4,6 +4,9 @@ use crate::report::{Align, Column, Document, Form, TableBlock, TableCell};
 use crate::response::{Amount, Cell, Step, Worksheet};
 use crate::units::{ReportUnits, Unit};
 
+/// A number under this share of the largest of its kind is what rounding leaves of a zero.
+const ROUNDING: f64 = 1e-12;
+
 /// Adds the steps of a hand calculation; `key` begins the keys of its tables.
 pub(super) fn add(report: &mut Document, key: &str, worksheet: &Worksheet, units: ReportUnits) {
     for (index, step) in worksheet.steps.iter().enumerate() {
@@ -30,14 +33,31 @@ fn table(key: &str, step: &Step, units: ReportUnits) -> TableBlock {
             key: index == 0,
         });
     }
+    let largest: Vec<_> = step.columns.iter().map(|column| largest(step, column.amount)).collect();
     for row in &step.rows {
-        table.row(row.iter().zip(&step.columns).map(|(cell, column)| match cell {
+        let cells = row.iter().zip(step.columns.iter().zip(&largest));
+        table.row(cells.map(|(cell, (column, largest))| match cell {
             Cell::Name(name) => TableCell::from(name.as_str()),
-            Cell::Number(value) => unit(column.amount, units).from_si(*value).into(),
+            Cell::Number(value) => unit(column.amount, units).from_si(tidy(*value, *largest)).into(),
             Cell::Blank => TableCell::blank(),
         }));
     }
     table
+}
+
+/// The largest number of a kind in a step, without sign.
+fn largest(step: &Step, amount: Amount) -> f64 {
+    let numbers = step.rows.iter().flat_map(|row| row.iter().zip(&step.columns));
+    let of_kind = numbers.filter(|(_, column)| column.amount == amount).map(|(cell, _)| match cell {
+        Cell::Number(value) => value.abs(),
+        _ => 0.0,
+    });
+    of_kind.fold(0.0, f64::max)
+}
+
+/// The number, or zero where it is only what rounding leaves.
+fn tidy(value: f64, largest: f64) -> f64 {
+    if value.abs() < ROUNDING * largest { 0.0 } else { value }
 }
 
 /// The unit of all numbers of a step, where they have one in common.
