@@ -3,7 +3,7 @@
 //! Column moments, beam moments and shears are shown positive in their usual sense under load to the right (columns
 //! resist it, beams lift their left joints), axial forces positive in tension.
 
-use crate::frame::{Feet, Frame, bay_name, line_name};
+use crate::frame::{Feet, Frame, SizeSource, bay_name, line_name};
 use crate::response::{Amount, Cell, Column, Response, Step, Worksheet};
 
 /// What the shear of a storey is shared by.
@@ -55,7 +55,15 @@ pub(super) fn axial_sheet(frame: &Frame, response: &Response) -> Worksheet {
     let mut steps = vec![storey_shears(frame), hinge_moments(frame)];
     if frame.has_areas() {
         let area = |storey, line| frame.column(storey, line).area.unwrap_or(1.0);
-        steps.push(by_line(frame, "Column areas A", "As the frame file gives them.", Amount::Area, &area));
+        let (rule, amount) = match frame.size_source() {
+            SizeSource::Stated => ("As the frame file gives them.", Amount::Area),
+            SizeSource::Assumed => ("Assumed from [sizes]: A = a × root of I.", Amount::Area),
+            SizeSource::AssumedRelative => {
+                ("Assumed from [sizes]: A in proportion to the root of I; only ratios have meaning.", Amount::Ratio)
+            }
+        };
+        let scale = if amount == Amount::Ratio { area(0, 0) } else { 1.0 };
+        steps.push(by_line(frame, "Column areas A", rule, amount, &|storey, line| area(storey, line) / scale));
     }
     let area_note = if frame.has_areas() { "" } else { " No areas are known: all A are taken as equal." };
     steps.extend([

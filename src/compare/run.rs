@@ -1,7 +1,7 @@
 //! One whole comparison: every analysis of a frame, their statics, errors and verdicts.
 
 use super::errors::{ValueError, errors};
-use super::verdict::{State, Subject, Verdict, judge};
+use super::verdict::{State, Subject, Verdict, by_shortfall, judge};
 use crate::approx::METHODS;
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame};
@@ -119,8 +119,16 @@ impl Comparison {
     /// The verdicts on one subject, the smallest shortfall first.
     pub fn ranked(&self, subject: Subject) -> Vec<&Verdict> {
         let mut verdicts: Vec<_> = self.verdicts.iter().filter(|verdict| verdict.subject == subject).collect();
-        verdicts.sort_by(|a, b| b.lowest.percent.total_cmp(&a.lowest.percent));
+        verdicts.sort_by(|a, b| by_shortfall(a, b));
         verdicts
+    }
+
+    /// The earlier quick method whose values `method` repeats on this frame, if there is one.
+    pub fn repeats(&self, method: &str) -> Option<&'static str> {
+        let answers = || self.quick.iter().filter_map(|quick| quick.response.as_ref());
+        let own = answers().find(|response| response.method == method)?;
+        let earlier = answers().take_while(|response| response.method != method);
+        earlier.into_iter().find(|response| response.equals(own)).map(|response| response.method)
     }
 
     /// Results that are allowed but absurd for a building.

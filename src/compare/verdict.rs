@@ -1,9 +1,13 @@
 //! Whether a quick method is good enough: verdicts by method, subject and place.
 
-use super::errors::ValueError;
+use super::errors::{Flag, ValueError};
 use super::places::{Kind, Place};
 use crate::response::{Member, Quantity};
+use std::cmp::Ordering;
 use std::collections::BTreeMap;
+
+/// Numbers that differ by less than this are equal: the first member is quoted, whatever rounding leaves.
+const TIE: f64 = 1e-7;
 
 /// What a verdict is about.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -73,7 +77,7 @@ impl State {
     }
 
     fn of(short: f64, over: f64, tolerance: f64) -> Self {
-        match (short < -tolerance, over > tolerance) {
+        match (short < -tolerance - TIE, over > tolerance + TIE) {
             (true, _) => Self::Short,
             (false, true) => Self::Generous,
             (false, false) => Self::Suffices,
@@ -94,8 +98,15 @@ pub struct Extreme {
     pub exact: f64,
     /// Quick value, N or N m.
     pub quick: f64,
-    /// |e| / |q|, where q is not zero.
+    /// |e| / |q|; `None` where q is zero or weak, since a factor would mislead.
     pub factor: Option<f64>,
+}
+
+impl Extreme {
+    /// How far the quick value is short of the member's own exact value, percent; negative where it is over.
+    pub fn own_shortfall(&self) -> f64 {
+        100.0 * (1.0 - self.quick.abs() / self.exact.abs())
+    }
 }
 
 /// The verdict on one place.
@@ -109,8 +120,10 @@ pub struct PlaceVerdict {
     pub lowest: Extreme,
     /// The member that is most over, or least short.
     pub highest: Extreme,
-    /// The largest factor over the members; `None` where some quick value is zero.
-    pub factor: Option<f64>,
+    /// The member with the largest factor, zero and weak values aside.
+    pub governing: Option<Extreme>,
+    /// Members whose quick value is zero or weak: the largest exact one, and their number.
+    pub unloaded: Option<(Extreme, usize)>,
     /// Against the tolerance.
     pub state: State,
 }
@@ -133,9 +146,16 @@ pub struct Verdict {
 }
 
 impl Verdict {
-    /// The largest factor over all members; `None` where some quick value is zero.
-    pub fn largest_factor(&self) -> Option<f64> {
-        self.places.iter().map(|place| place.factor).try_fold(0.0_f64, |a, b| Some(a.max(b?)))
+    /// The member with the largest factor, zero and weak values aside.
+    pub fn governing(&self) -> Option<Extreme> {
+        largest_factor(self.places.iter().filter_map(|place| place.governing))
+    }
+
+    /// Members whose quick value is zero or weak: the largest exact one, and their number.
+    pub fn unloaded(&self) -> Option<(Extreme, usize)> {
+        let found = || self.places.iter().filter_map(|place| place.unloaded);
+        let largest = largest_exact(found().map(|(member, _)| member))?;
+        Some((largest, found().map(|(_, count)| count).sum()))
     }
 }
 
@@ -161,21 +181,42 @@ pub fn judge(method: &'static str, subject: Subject, errors: &[ValueError], tole
 
 fn extreme(error: &ValueError) -> Option<Extreme> {
     let percent = error.storey_error_percent.filter(|percent| percent.is_finite())?;
-    let ValueError { member, place, exact, quick, factor, .. } = *error;
+    let ValueError { member, place, exact, quick, .. } = *error;
+    let factor = error.factor.filter(|_| !error.flags.contains(&Flag::Weak));
     Some(Extreme { member, place, percent, exact, quick, factor })
 }
 
 fn judge_place(place: Place, members: &[Extreme], tolerance: f64) -> Option<PlaceVerdict> {
     let (lowest, highest) = (least(members.iter().copied())?, most(members.iter().copied())?);
-    let factor = members.iter().map(|member| member.factor).try_fold(0.0_f64, |a, b| Some(a.max(b?)));
+    let (loaded, unloaded): (Vec<_>, Vec<_>) = members.iter().partition(|member| member.factor.is_some());
+    let governing = largest_factor(loaded.into_iter());
+    let unloaded = largest_exact(unloaded.iter().copied()).map(|member| (member, unloaded.len()));
     let state = State::of(lowest.percent, highest.percent, tolerance);
-    Some(PlaceVerdict { place, members: members.len(), lowest, highest, factor, state })
+    Some(PlaceVerdict { place, members: members.len(), lowest, highest, governing, unloaded, state })
+}
+
+fn extremal(members: impl Iterator<Item = Extreme>, size: impl Fn(&Extreme) -> f64) -> Option<Extreme> {
+    members.reduce(|best, next| if size(&next) > size(&best) + TIE { next } else { best })
 }
 
 fn least(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
-    members.min_by(|a, b| a.percent.total_cmp(&b.percent))
+    extremal(members, |member| -member.percent)
 }
 
 fn most(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
-    members.max_by(|a, b| a.percent.total_cmp(&b.percent))
+    extremal(members, |member| member.percent)
+}
+
+fn largest_factor(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
+    extremal(members, |member| member.factor.unwrap_or(0.0))
+}
+
+fn largest_exact(members: impl Iterator<Item = Extreme>) -> Option<Extreme> {
+    members.reduce(|best, next| if next.exact.abs() > best.exact.abs() { next } else { best })
+}
+
+/// Orders verdicts by their shortfall, the smallest first; equal ones keep their order.
+pub fn by_shortfall(a: &Verdict, b: &Verdict) -> Ordering {
+    let steps = |verdict: &Verdict| (verdict.lowest.percent / TIE).round();
+    steps(b).total_cmp(&steps(a))
 }

@@ -109,6 +109,14 @@ pub fn signed_percent(value: f64, places: usize) -> String {
     with_unit(&signed(value, places), "%")
 }
 
+/// A number that must not be understated, with so many decimals, rounded up: `1.15` of 1.1448.
+///
+/// What lies within 1e-9 above the last decimal is what rounding leaves and does not count.
+pub fn rounded_up(value: f64, places: usize) -> String {
+    let scale = 10_f64.powi(places as i32);
+    decimals((value * scale - 1e-9).ceil() / scale, places)
+}
+
 /// A force, moment or movement for a sentence: three significant figures and the unit, kept on one line.
 pub fn quantity(value: f64, unit: &str) -> String {
     with_unit(&significant(value, 3), unit)

@@ -138,6 +138,18 @@ impl Response {
         self.residual
     }
 
+    /// Whether both responses state the same member forces, but for what rounding leaves.
+    pub fn equals(&self, other: &Self) -> bool {
+        let close = |a: f64, b: f64, scale: f64| (a - b).abs() <= 1e-9 * scale;
+        let moment = self.largest_moment().max(other.largest_moment());
+        let axial = self.columns.iter().map(|column| column.axial.abs()).fold(0.0, f64::max);
+        let columns = self.columns.iter().zip(&other.columns).all(|(a, b)| {
+            close(a.foot, b.foot, moment) && close(a.head, b.head, moment) && close(a.axial, b.axial, axial)
+        });
+        let beams = self.beams.iter().zip(&other.beams);
+        columns && beams.into_iter().all(|(a, b)| close(a.left, b.left, moment) && close(a.right, b.right, moment))
+    }
+
     /// The largest member end moment of the frame, without sign, N m.
     pub fn largest_moment(&self) -> f64 {
         let columns = self.columns.iter().map(ColumnForces::design_moment);

@@ -83,7 +83,7 @@ fn elevations(findings: &Findings) -> Vec<Chart> {
         };
         chart(format!("{ELEVATION}{method}"), &title, &caption, &figure)
     };
-    summary::quick_errors(comparison).map(one).collect()
+    summary::quick_errors(comparison).filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
 }
 
 fn cell(error: &ValueError) -> Cell {

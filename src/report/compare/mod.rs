@@ -4,6 +4,7 @@ mod brief;
 mod charts;
 mod page;
 mod sheet;
+mod sizes;
 mod summary;
 mod tables;
 mod words;
@@ -14,11 +15,11 @@ pub use page::page;
 pub use tables::tables;
 
 use super::workbook::About;
-use super::{Sentence, State, TableBlock, TableCell, say};
+use super::{Document, Sentence, TableBlock, TableCell, say};
 use crate::compare::verdict::Subject;
 use crate::compare::{Comparison, FOOT_RATIOS};
 use crate::frame::Frame;
-use crate::frame::file::FrameFile;
+use crate::frame::file::{FrameFile, SizeStatement};
 use crate::response::Fit;
 
 /// What a comparison's reports are made from.
@@ -57,8 +58,29 @@ impl Findings<'_> {
         let sentence = |(text, methods): (String, Vec<&str>)| {
             Sentence::default().strong(words::capital(&methods.join(", "))).then(format!(": {text}."))
         };
-        let warnings = self.warnings.iter().map(|warning| say(warning.as_str()));
-        warnings.chain(reasons.into_iter().map(sentence)).collect()
+        let warnings = self.warnings.iter().map(|warning| say(words::capital(warning) + "."));
+        let flags = summary::quick_errors(self.comparison).filter_map(|(method, errors)| {
+            words::flags(&words::capital(&words::method_name(self.comparison, method)), errors)
+        });
+        let reasons = reasons.into_iter().map(sentence);
+        warnings.chain(self.notices()).chain(reasons).chain(flags.map(Sentence::from)).collect()
+    }
+
+    /// What of the file does not enter, and which methods repeat each other here.
+    fn notices(&self) -> Vec<Sentence> {
+        let mut notices = Vec::new();
+        if matches!(self.file.sizes, SizeStatement::Stated { within: Some(_) }) {
+            let text = "Sizes are taken as given: what the file says under ";
+            notices.push(say(text).code("within").then(" does not enter this comparison."));
+        }
+        for quick in &self.comparison.quick {
+            if let Some(earlier) = self.comparison.repeats(quick.entry.info.id) {
+                let name = words::method_name(self.comparison, earlier);
+                let own = words::capital(quick.entry.info.name);
+                notices.push(say(format!("{own}: gives the same values as the {name} on this frame.")));
+            }
+        }
+        notices
     }
 }
 
@@ -84,20 +106,27 @@ fn feet_table(comparison: &Comparison) -> Option<TableBlock> {
         table = table.under(subject.name()).percent("fixed", 0);
         table = FOOT_RATIOS.iter().fold(table, |table, ratio| table.percent(format!("spring {ratio}"), 0));
     }
-    let tolerance = comparison.options.tolerance;
-    let cell = |percent: f64| TableCell::from(percent).marked((percent < -tolerance).then_some(State::FallsShort));
+    let cell = |percent: f64| summary::percent_cell(percent, comparison.options.tolerance);
     for lines in comparison.feet.chunk_by(|a, b| a.method == b.method) {
         let numbers = lines.iter().flat_map(|line| [line.fixed, line.sprung[0], line.sprung[1]].map(cell));
         table.row(std::iter::once(TableCell::from(summary::short_name(lines[0].method))).chain(numbers));
     }
     table.note(
-        "Springs: rotational foot stiffness over 4 E I/h of the lowest columns. The exact answer changes with the feet, \
-         the quick methods keep theirs fixed; percent of the storey's largest exact value, negative is short.",
+        "Springs: rotational foot stiffness over 4 E I/h of each foot's own column. The exact answer changes with the \
+         feet, the quick methods keep theirs fixed; percent of the storey's largest exact value, negative is short.",
     );
-    table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
-    (!comparison.feet.is_empty()).then_some(table)
+    (!comparison.feet.is_empty()).then(|| summary::judged(table, comparison))
 }
 
 fn comparison_name(comparison: &Comparison, method: &str) -> String {
     words::method_name(comparison, method)
+}
+
+/// One card per verdict on `subject`, methods that repeat another left out.
+fn verdict_cards(report: &mut Document, findings: &Findings, subject: Subject) {
+    let comparison = findings.comparison;
+    for verdict in comparison.ranked(subject).into_iter().filter(|verdict| words::own(comparison, verdict)) {
+        let sentence = words::verdict(comparison, verdict, findings.frame().report_units());
+        report.verdict_in_words(words::mark(verdict.state), words::word(verdict.state), sentence);
+    }
 }

@@ -1,11 +1,12 @@
 //! The page of a comparison: verdict first, method sheet and record last.
 
 use super::charts::ELEVATION;
-use super::summary::{READING, by_storey, short_name};
-use super::{Findings, comparison_name, feet_table, sheet, words};
+use super::summary::{READING, Shown, by_storey, judged, percent_cell, short_name};
+use super::{Findings, comparison_name, feet_table, sheet, sizes, verdict_cards, words};
 use crate::compare::verdict::{Extreme, Subject, Verdict};
-use crate::frame::SizeSource;
-use crate::report::number::{Form, decimals, signed_percent};
+use crate::compare::{Comparison, Quick};
+use crate::frame::Feet;
+use crate::report::number::{Form, decimals, signed_percent, significant};
 use crate::report::{Document, Figure, Record, Sentence, State, TableBlock, TableCell, say};
 use crate::response::statics::{Law, Statics};
 use crate::response::{Quantity, Response};
@@ -38,8 +39,9 @@ pub fn page(findings: &Findings, record: &Record, figures: Vec<Figure>) -> Docum
 fn opening(report: &mut Document, findings: &Findings) {
     let comparison = findings.comparison;
     report.section("Verdict");
-    for (state, sentence) in Subject::ALL.into_iter().filter_map(|subject| words::finding(comparison, subject)) {
-        report.verdict(state, sentence.then(" See ").refer("ranking").then("."));
+    let found = |subject| words::finding(findings.frame(), comparison, subject);
+    for (state, word, sentence) in Subject::ALL.into_iter().filter_map(found) {
+        report.verdict_in_words(state, word, sentence.then(" See ").refer("ranking").then("."));
     }
     report.paragraph(words::measure(findings.frame(), comparison));
     report.table(ranking(findings));
@@ -52,68 +54,68 @@ fn opening(report: &mut Document, findings: &Findings) {
 /// One row per quick method: lowest and highest error on every subject.
 fn ranking(findings: &Findings) -> TableBlock {
     let comparison = findings.comparison;
-    let mut table = TableBlock::new("ranking", "Quick methods: lowest and highest error of any member").name("method");
+    let caption = "Quick methods: lowest and highest error of any member, % of its storey's largest exact value";
+    let mut table = TableBlock::new("ranking", caption).name("method");
     for subject in Subject::ALL {
-        table = table.under(subject.name()).percent("lowest", 0).percent("highest", 0).number("multiply by", "", 3);
+        table = table.under(subject.name()).percent("lowest", 0).percent("highest", 0);
+        table = table.number("multiply by", "", 3).number("redistribution", "%", 2);
     }
-    for quick in &comparison.quick {
+    for quick in own_methods(comparison) {
         let id = quick.entry.info.id;
         let mut cells = vec![TableCell::from(comparison_name(comparison, id))];
         for subject in Subject::ALL {
             let found = comparison.verdicts.iter().find(|verdict| verdict.method == id && verdict.subject == subject);
-            cells.extend(found.map_or_else(
-                || vec![TableCell::blank(); 3],
-                |verdict| extremes(comparison.options.tolerance, verdict),
-            ));
+            let row = |verdict: &Verdict| extremes(comparison.options.tolerance, verdict);
+            cells.extend(found.map_or_else(|| vec![TableCell::blank(); 4], row));
         }
         table.row(cells);
     }
     table.note(
-        "“Multiply by” is the largest |exact| / |quick| of any member: with it no member of this frame would be short. \
-         It multiplies the lateral part only.",
+        "“Multiply by”: the largest |exact| / |quick| of any member, rounded up; with it no member of this frame is short \
+         (members that a method leaves almost without load aside). It multiplies the lateral part only.",
     );
-    judged(table, comparison.options.tolerance)
+    table.note(
+        "“Redistribution”: 1 − 1 / factor, the share of its moment that the shortest member must shed if the factor is \
+         not used: for ductile parts of a stable frame only.",
+    );
+    judged(table, comparison)
+}
+
+/// The quick methods whose values are not those of an earlier one.
+fn own_methods(comparison: &Comparison) -> impl Iterator<Item = &Quick> {
+    comparison.quick.iter().filter(|quick| comparison.repeats(quick.entry.info.id).is_none())
 }
 
 fn extremes(tolerance: f64, verdict: &Verdict) -> Vec<TableCell> {
-    let factor = verdict.largest_factor().map_or_else(|| TableCell::from("none"), TableCell::from);
-    vec![low(tolerance, verdict.lowest), high(tolerance, verdict.highest), factor]
-}
-
-fn low(tolerance: f64, extreme: Extreme) -> TableCell {
-    TableCell::from(extreme.percent).marked((extreme.percent < -tolerance).then_some(State::FallsShort))
-}
-
-fn high(tolerance: f64, extreme: Extreme) -> TableCell {
-    TableCell::from(extreme.percent).marked((extreme.percent > tolerance).then_some(State::SafeSide))
-}
-
-fn judged(mut table: TableBlock, tolerance: f64) -> TableBlock {
-    table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
-    table.meaning(State::SafeSide, format!("over by more than {tolerance} %"));
-    table
+    let governing = verdict.governing();
+    let shed = |member: Extreme| words::needed(member.factor).map_or(0.0, |factor| 100.0 * (1.0 - 1.0 / factor));
+    vec![
+        percent_cell(verdict.lowest.percent, tolerance),
+        percent_cell(verdict.highest.percent, tolerance),
+        words::factor(governing.and_then(|member| member.factor)).into(),
+        governing.map(|member| TableCell::formed(shed(member), Form::Whole)).into(),
+    ]
 }
 
 fn verdicts(report: &mut Document, findings: &Findings) {
-    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let comparison = findings.comparison;
     report.section("Where each method holds");
     for subject in Subject::ALL {
         report.subsection(words::capital(subject.name()));
-        for verdict in comparison.ranked(subject) {
-            report.verdict(words::mark(verdict.state), words::verdict(comparison, verdict, frame.report_units()));
-        }
+        verdict_cards(report, findings, subject);
         report.table(place_table(findings, subject));
     }
     if let Some(table) = feet_table(comparison) {
         report.subsection("If the fixed feet turn a little");
-        report.table(judged(table, comparison.options.tolerance));
+        report.table(table);
     }
 }
 
 /// One row per place: lowest and highest error and factor of every method.
 fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
     let comparison = findings.comparison;
-    let verdicts: Vec<_> = comparison.verdicts.iter().filter(|verdict| verdict.subject == subject).collect();
+    let of_subject = comparison.verdicts.iter().filter(|verdict| verdict.subject == subject);
+    let verdicts: Vec<_> = of_subject.filter(|verdict| words::own(comparison, verdict)).collect();
     let key = format!("places-{}", subject.name().replace(' ', "-"));
     let caption = format!("{}: lowest and highest error by place", words::capital(subject.name()));
     let mut table = TableBlock::new(key, caption.as_str()).name("place").count("members");
@@ -130,12 +132,13 @@ fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
         for verdict in &verdicts {
             let place = &verdict.places[index];
             let tolerance = comparison.options.tolerance;
-            let factor = place.factor.map_or_else(|| TableCell::from("none"), TableCell::from);
-            cells.extend([low(tolerance, place.lowest), high(tolerance, place.highest), factor]);
+            let factor = words::factor(place.governing.and_then(|member| member.factor));
+            let percents = [place.lowest, place.highest].map(|extreme| percent_cell(extreme.percent, tolerance));
+            cells.extend(percents.into_iter().chain([factor.into()]));
         }
         table.row(cells);
     }
-    judged(table, comparison.options.tolerance)
+    judged(table, comparison)
 }
 
 /// Elevations stand side by side to be compared, the others one below the other.
@@ -153,8 +156,9 @@ fn storeys(report: &mut Document, findings: &Findings) {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     report.section("Storey by storey");
     report.paragraph(READING);
-    for subject in Subject::ALL {
-        report.table(by_storey(frame, comparison, subject, MOST_ROWS));
+    let further = [Shown::FOOT_MOMENTS, Shown::HEAD_MOMENTS, Shown::AXIAL];
+    for shown in Subject::ALL.map(Shown::subject).into_iter().chain(further) {
+        report.table(by_storey(frame, comparison, shown, MOST_ROWS));
     }
     if let Some(table) = drift_table(findings) {
         report.table(table);
@@ -270,7 +274,7 @@ fn storey_sums(findings: &Findings, method: &str, statics: &Statics) -> TableBlo
             force.from_si(sums.shear_found).into(),
             moment.from_si(sums.overturning_applied).into(),
             moment.from_si(sums.by_moments).into(),
-            moment.from_si(sums.by_axial).into(),
+            moment.from_si(tidy(sums.by_axial, largest_moment)).into(),
             moment.from_si(tidy(left_over, largest_moment)).into(),
             force.from_si(tidy(sums.axial_sum, largest_force)).into(),
             moment.from_si(tidy(sums.joint_moment, largest_moment)).into(),
@@ -280,12 +284,16 @@ fn storey_sums(findings: &Findings, method: &str, statics: &Statics) -> TableBlo
 }
 
 fn described(report: &mut Document, findings: &Findings) {
+    let frame = findings.frame();
     report.section("The frame as typed");
     let pairs = findings.file.echo.iter().map(|echo| (echo.what.clone(), say(echo.typed.as_str())));
     report.pairs(pairs);
-    if findings.frame().size_source() == SizeSource::Stated {
-        report.paragraph("Inertias enter with their stiffness factors; areas do not carry them.");
+    if let Feet::Springs(springs) = frame.feet() {
+        let own = frame.foot_springs(1.0);
+        let ratios: Vec<_> = springs.iter().zip(&own).map(|(spring, own)| significant(spring / own, 3)).collect();
+        report.paragraph(format!("Foot springs over 4 E I/h of their columns, from line A: {}.", ratios.join(", ")));
     }
+    sizes::add(report, frame, &findings.file.sizes);
 }
 
 fn method_sheet(report: &mut Document, findings: &Findings) {
@@ -304,7 +312,7 @@ fn method_sheet(report: &mut Document, findings: &Findings) {
         );
         return;
     }
-    for quick in &comparison.quick {
+    for quick in own_methods(comparison) {
         let Some(response) = &quick.response else { continue };
         let info = quick.entry.info;
         report.details(format!("{}: line by line", words::capital(info.name)), |inner| {
@@ -328,8 +336,8 @@ fn closing(report: &mut Document, findings: &Findings, record: &Record) {
     report.section("Record");
     report.record(record);
     report.footer(
-        "Lateral part only, for preliminary sizing and checking; not a design. The licensed engineer and the code in \
-         force decide.",
+        "Lateral part only, first order (no P-delta), for preliminary sizing and checking; not a design. The licensed \
+         engineer and the code in force decide.",
     );
 }
 
@@ -341,7 +349,9 @@ fn assumptions(findings: &Findings) -> Vec<Sentence> {
         ),
         say("Floors are rigid in their own plane: one sway per floor."),
         say("slope-deflection: inextensible members. stiffness: columns stretch and shorten as well."),
-        say("Loads act to the right at the floors; the mirror case is the mirror image."),
+        say(
+            "Loads act to the right at the floors. Load from the other side reverses every sign and changes no magnitude.",
+        ),
         say("Design moment: the larger end moment of a member."),
         say("Places: ground, second, middle, below the top and top storey, by end and interior; in low frames ground \
              wins, then the top, then the second."),

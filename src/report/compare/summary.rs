@@ -1,18 +1,72 @@
 //! Tables that show a whole frame in few rows: exact values and errors by storey and class.
 
-use super::words::{class_head, kind, unit};
+use super::words;
 use crate::compare::Comparison;
 use crate::compare::errors::ValueError;
-use crate::compare::places::Class;
+use crate::compare::places::{Class, Kind};
 use crate::compare::verdict::Subject;
 use crate::frame::Frame;
+use crate::report::number::Form;
 use crate::report::{State, TableBlock, TableCell, say};
+use crate::response::Quantity;
 use std::ops::Range;
 
 /// How the cells of [`by_storey`] are to be read.
-pub(super) const READING: &str = "Errors in percent of the largest exact value of the same storey: of the members of a \
-                                  cell the one most off, but the shortest where any is short by more than the \
+pub(super) const READING: &str = "Errors are in percent of the storey's largest exact value: in a row of one storey, the \
+                                  larger of its exact values (or 5 % of the frame's largest). Of the members of a cell \
+                                  the one most off is shown, but the shortest where any is short by more than the \
                                   tolerance.";
+
+/// A quantity shown storey by storey.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) struct Shown {
+    /// What it is called.
+    pub name: &'static str,
+    kind: Kind,
+    quantity: Quantity,
+}
+
+impl Shown {
+    /// Moments at the column feet: foundations and splices go by them.
+    pub(super) const FOOT_MOMENTS: Self =
+        Self { name: "column foot moments", kind: Kind::Columns, quantity: Quantity::MomentFoot };
+    /// Moments at the column heads.
+    pub(super) const HEAD_MOMENTS: Self =
+        Self { name: "column head moments", kind: Kind::Columns, quantity: Quantity::MomentHead };
+    /// Column axial forces.
+    pub(super) const AXIAL: Self = Self { name: "column axial forces", kind: Kind::Columns, quantity: Quantity::Axial };
+
+    /// What a verdict is about.
+    pub(super) fn subject(subject: Subject) -> Self {
+        let kind = if subject == Subject::BeamMoments { Kind::Beams } else { Kind::Columns };
+        Self { name: subject.name(), kind, quantity: subject.quantity() }
+    }
+
+    fn is_of_beams(self) -> bool {
+        self.kind == Kind::Beams
+    }
+
+    fn class_head(self, class: Class) -> &'static str {
+        match (self.is_of_beams(), class) {
+            (true, Class::End) => "beams of end bays",
+            (true, _) => "beams of interior bays",
+            (false, Class::End) => "end columns",
+            (false, _) => "interior columns",
+        }
+    }
+
+    fn classes(self, frame: &Frame) -> Vec<Class> {
+        let across = if self.is_of_beams() { frame.bays() } else { frame.lines() };
+        if across > 2 { vec![Class::End, Class::Interior] } else { vec![Class::End] }
+    }
+
+    fn holds(self, error: &ValueError, class: Class, group: &Range<usize>) -> bool {
+        error.place.kind == self.kind
+            && error.quantity == self.quantity
+            && error.place.class == class
+            && group.contains(&error.member.storey())
+    }
+}
 
 /// Groups of storeys from the ground, single ones where they fit.
 pub(super) fn groups(storeys: usize, most: usize) -> Vec<Range<usize>> {
@@ -27,8 +81,8 @@ pub(super) fn groups(storeys: usize, most: usize) -> Vec<Range<usize>> {
 }
 
 /// Name of a group of storeys or floors: `3`, `4–8`, `9 top`.
-pub(super) fn group_name(group: &Range<usize>, storeys: usize, subject: Subject) -> String {
-    let top = if subject == Subject::BeamMoments { "roof" } else { "top" };
+pub(super) fn group_name(group: &Range<usize>, storeys: usize, of_beams: bool) -> String {
+    let top = if of_beams { "roof" } else { "top" };
     match (group.len(), group.end == storeys) {
         (1, true) => format!("{} {top}", group.end),
         (1, false) => group.end.to_string(),
@@ -36,34 +90,25 @@ pub(super) fn group_name(group: &Range<usize>, storeys: usize, subject: Subject)
     }
 }
 
-/// Exact values and errors of every quick method on `subject`: storeys from the roof, ends and interior side by side.
-pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, subject: Subject, most: usize) -> TableBlock {
-    let unit = unit(subject, frame.report_units());
-    let row_head = if subject == Subject::BeamMoments { "floor" } else { "storey" };
-    let key = subject.name().replace(' ', "-");
-    let caption =
-        say(format!("{}: largest exact value, and error of each method", super::words::capital(subject.name())));
-    let mut table = TableBlock::new(key, caption).name(row_head);
-    let classes = classes(frame, subject);
-    let methods: Vec<_> = quick_errors(comparison).map(|(method, _)| method).collect();
+/// Exact values and errors of every quick method: storeys from the roof, ends and interior side by side.
+pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, most: usize) -> TableBlock {
+    let unit = shown.quantity.unit(frame.report_units());
+    let name = words::capital(shown.name);
+    let caption = say(format!("{name}: largest exact value, and error of each method in % of the storey's largest"));
+    let row_head = if shown.is_of_beams() { "floor" } else { "storey" };
+    let mut table = TableBlock::new(shown.name.replace(' ', "-"), caption).name(row_head);
+    let classes = shown.classes(frame);
     for class in &classes {
-        table = table.under(class_head(subject, *class)).number("exact", unit.symbol, 3);
-        table = methods.iter().fold(table, |table, method| table.percent(short_name(method), 0));
+        table = table.under(shown.class_head(*class)).number("exact", unit.symbol, 3);
+        table = quick_errors(comparison).fold(table, |table, (method, _)| table.percent(short_name(method), 0));
     }
-    let groups = groups(frame.storeys(), most);
-    for group in groups.iter().rev() {
-        let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), subject))];
+    for group in groups(frame.storeys(), most).iter().rev() {
+        let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), shown.is_of_beams()))];
         for class in &classes {
-            let of_place = |error: &&ValueError| {
-                error.place.kind == kind(subject)
-                    && error.quantity == subject.quantity()
-                    && error.place.class == *class
-                    && group.contains(&error.member.storey())
-            };
             let mut exact = None;
             let mut errors = Vec::new();
             for (_, set) in quick_errors(comparison) {
-                let found: Vec<_> = set.iter().filter(of_place).collect();
+                let found: Vec<_> = set.iter().filter(|error| shown.holds(error, *class, group)).collect();
                 exact = found.iter().map(|error| error.exact.abs()).reduce(f64::max).or(exact);
                 errors.push(telling(&found, comparison.options.tolerance));
             }
@@ -72,10 +117,7 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, subject: Subject
         }
         table.row(cells);
     }
-    let tolerance = comparison.options.tolerance;
-    table.meaning(State::FallsShort, format!("short by more than {tolerance} %"));
-    table.meaning(State::SafeSide, format!("over by more than {tolerance} %"));
-    table
+    judged(table, comparison)
 }
 
 /// The error sets of the quick methods.
@@ -89,9 +131,25 @@ pub(super) fn short_name(method: &str) -> &str {
     method.strip_prefix("portal-").unwrap_or(method)
 }
 
-fn classes(frame: &Frame, subject: Subject) -> Vec<Class> {
-    let places = if subject == Subject::BeamMoments { frame.bays() } else { frame.lines() };
-    if places > 2 { vec![Class::End, Class::Interior] } else { vec![Class::End] }
+/// Says what the marks of [`percent_cell`] mean.
+pub(super) fn judged(mut table: TableBlock, comparison: &Comparison) -> TableBlock {
+    let tolerance = words::tolerance(comparison);
+    table.meaning(State::FallsShort, format!("short by more than {tolerance}"));
+    table.meaning(State::SafeSide, format!("over by more than {tolerance}"));
+    table
+}
+
+/// A storey error, marked where it is beyond the tolerance; with a decimal where rounding would hide on which side.
+pub(super) fn percent_cell(percent: f64, tolerance: f64) -> TableCell {
+    let state = match percent {
+        short if short < -tolerance - 1e-7 => Some(State::FallsShort),
+        over if over > tolerance + 1e-7 => Some(State::SafeSide),
+        _ => None,
+    };
+    let rounded = percent.abs().round();
+    let hidden = (rounded > tolerance) != state.is_some() || rounded == tolerance && state.is_some();
+    let cell = if hidden { TableCell::formed(percent, Form::Signed(1)) } else { TableCell::from(percent) };
+    cell.marked(state)
 }
 
 /// The error that tells most of several members.
@@ -100,17 +158,13 @@ fn telling(found: &[&ValueError], tolerance: f64) -> TableCell {
     let lowest = percents().reduce(f64::min);
     let farthest = percents().reduce(|a, b| if b.abs() > a.abs() { b } else { a });
     let told = lowest.filter(|lowest| *lowest < -tolerance).or(farthest);
-    let state = |percent: f64| match percent {
-        short if short < -tolerance => Some(State::FallsShort),
-        over if over > tolerance => Some(State::SafeSide),
-        _ => None,
-    };
-    told.map_or_else(TableCell::blank, |percent| TableCell::from(percent).marked(state(percent)))
+    told.map_or_else(TableCell::blank, |percent| percent_cell(percent, tolerance))
 }
 
 #[cfg(test)]
 mod tests {
-    use super::groups;
+    use super::*;
+    use crate::report::{Content, number};
 
     #[test]
     fn groups_cover_every_storey_once_and_keep_to_the_limit() {
@@ -118,6 +172,20 @@ mod tests {
             let groups = groups(storeys, 20);
             assert!(groups.len() <= 20, "{storeys}");
             assert!(groups.iter().cloned().flatten().eq(0..storeys), "{storeys}");
+        }
+    }
+
+    #[test]
+    fn rounding_never_hides_on_which_side_of_the_tolerance_a_value_lies() {
+        let shown = |percent| match percent_cell(percent, 20.0).content {
+            Content::Number(value) => number::signed(value, 0),
+            Content::Formed(value, form) => form.show(value),
+            other => panic!("{other:?}"),
+        };
+        let cases = [(-20.3, "−20.3"), (-19.7, "−20"), (-20.6, "−21"), (20.4, "+20.4"), (20.0, "+20"), (3.2, "+3")];
+        for (percent, text) in cases {
+            assert_eq!(shown(percent), text);
+            assert_eq!(percent_cell(percent, 20.0).state.is_some(), f64::abs(percent) > 20.0);
         }
     }
 }

@@ -96,8 +96,11 @@ fn errors(comparison: &Comparison, units: ReportUnits) -> Table {
     Table::new("errors", &COLUMNS, rows)
 }
 
+/// The member that sets the factor, and the members that no factor helps.
+type Covered = (Option<Extreme>, Option<(Extreme, usize)>);
+
 fn verdicts(comparison: &Comparison) -> Table {
-    static COLUMNS: [ColumnInfo; 15] = [
+    static COLUMNS: [ColumnInfo; 16] = [
         METHOD,
         MEMBER,
         QUANTITY,
@@ -111,11 +114,12 @@ fn verdicts(comparison: &Comparison) -> Table {
         info("highest_percent", "highest storey error, percent"),
         info("highest_storey", "where it is: storey, of a beam its floor"),
         info("highest_at", "where it is: column line or bay"),
-        info("factor", "largest |exact| / |quick| over the members"),
+        info("factor", "largest |exact| / |quick| over the members, zero and weak values aside"),
+        info("unloaded", "members whose quick value is zero or weak, so that no factor helps"),
         info("tolerance_percent", "tolerance, percent of the storey's reference"),
     ];
     let tolerance = comparison.options.tolerance;
-    let row = |verdict: &Verdict, place: [Cell; 4], [lowest, highest]: [Extreme; 2], factor: Option<f64>| {
+    let row = |verdict: &Verdict, place: [Cell; 4], [lowest, highest]: [Extreme; 2], covered: Covered| {
         let [band, class, members, state] = place;
         [
             Cell::from(verdict.method),
@@ -131,18 +135,20 @@ fn verdicts(comparison: &Comparison) -> Table {
             highest.percent.into(),
             (highest.member.storey() + 1).into(),
             highest.member.at().into(),
-            factor.into(),
+            covered.0.and_then(|member| member.factor).into(),
+            covered.1.map_or(0, |(_, count)| count).into(),
             tolerance.into(),
         ]
     };
     let of_verdict = |verdict: &Verdict| {
         let members: usize = verdict.places.iter().map(|place| place.members).sum();
         let whole = ["all".into(), "all".into(), members.into(), verdict.state.id().into()];
-        let mut rows = vec![row(verdict, whole, [verdict.lowest, verdict.highest], verdict.largest_factor())];
+        let mut rows =
+            vec![row(verdict, whole, [verdict.lowest, verdict.highest], (verdict.governing(), verdict.unloaded()))];
         for place in &verdict.places {
             let band = place.place.band.id(place.place.kind);
             let cells = [band.into(), place.place.class.id().into(), place.members.into(), place.state.id().into()];
-            rows.push(row(verdict, cells, [place.lowest, place.highest], place.factor));
+            rows.push(row(verdict, cells, [place.lowest, place.highest], (place.governing, place.unloaded)));
         }
         rows
     };

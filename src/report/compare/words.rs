@@ -1,11 +1,12 @@
 //! Sentences of a comparison.
 
 use crate::compare::Comparison;
-use crate::compare::places::{Class, Kind, Place};
+use crate::compare::errors::{Flag, ValueError};
+use crate::compare::places::{Class, Place};
 use crate::compare::verdict::{Extreme, State as Standing, Subject, Verdict};
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame, SizeSource};
-use crate::report::number::{percent, quantity};
+use crate::report::number::{NO_BREAK, quantity, rounded_up, signed_percent};
 use crate::report::{Sentence, State, say};
 use crate::response::{Member, Quantity};
 use crate::units::{ReportUnits, Unit};
@@ -102,7 +103,8 @@ pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
     let reference = comparison.reference();
     let mut sentence = say("Errors are measured by ").strong(method_name(comparison, reference.method)).then(
         ", in percent of the largest exact value of the same storey (at least 5 % of the frame's largest). \
-         Negative is short: the unsafe side for strength.",
+         Negative is short: the unsafe side for strength. A member that carries less than the largest can be short of \
+         its own value by more than that percentage: the factor tells.",
     );
     if let Some(reason) = &comparison.no_stiffness {
         sentence = sentence.then(format!(" The stiffness analysis was not run: {reason}."));
@@ -123,59 +125,84 @@ pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
     ))
 }
 
-/// The finding on one subject in one sentence: the best method and how it stands.
-pub(super) fn finding(comparison: &Comparison, subject: Subject) -> Option<(State, Sentence)> {
-    let tolerance = percent(comparison.options.tolerance, 0);
-    let ranked = comparison.ranked(subject);
+/// The finding on one subject for the first screen: which methods hold, or the least short one.
+pub(super) fn finding(
+    frame: &Frame,
+    comparison: &Comparison,
+    subject: Subject,
+) -> Option<(State, &'static str, Sentence)> {
+    let tolerance = tolerance(comparison);
+    let ranked: Vec<_> = comparison.ranked(subject).into_iter().filter(|verdict| own(comparison, verdict)).collect();
     let best = ranked.first()?;
     let good: Vec<_> = ranked.iter().filter(|verdict| verdict.state != Standing::Short).collect();
-    let subject_name = capital(subject.name());
-    let sentence = if good.is_empty() {
+    let (subject_name, sizes) = (capital(subject.name()), for_sizes(frame));
+    let start = if good.is_empty() {
         say(format!(
-            "{subject_name}: no quick method stays within {tolerance} on the unsafe side; the least short is the "
+            "{subject_name}{sizes}: every quick method is somewhere short by more than {tolerance}. The least short is \
+             the {}, {}",
+            method_name(comparison, best.method),
+            short_by(best)
         ))
-        .then(method_name(comparison, best.method))
-        .then(format!(", by up to {}.", short_by(best.lowest.percent)))
     } else {
         let names: Vec<_> = good
             .iter()
-            .map(|verdict| format!("{} ({})", method_name(comparison, verdict.method), span(verdict)))
+            .map(|verdict| {
+                format!(
+                    "{} ({} to {})",
+                    method_name(comparison, verdict.method),
+                    verdict_percent(verdict.lowest),
+                    verdict_percent(verdict.highest)
+                )
+            })
             .collect();
-        let verb = if names.len() == 1 { "is" } else { "are" };
-        say(format!("{subject_name}: nowhere more than {tolerance} short {verb} the {}.", names.join(" and the ")))
+        say(format!("{subject_name}{sizes}: nowhere short by more than {tolerance}: {}", names.join("; ")))
     };
-    Some((mark(good.first().map_or(Standing::Short, |verdict| verdict.state)), sentence))
+    let standing = good.first().map_or(Standing::Short, |verdict| verdict.state);
+    Some((mark(standing), word(standing), start.then(".").then(cover(best, subject, frame.report_units()))))
 }
 
-/// Lowest and highest error of a verdict: `−12 % to +31 %`.
-fn span(verdict: &Verdict) -> String {
-    use crate::report::number::signed_percent;
-    format!("{} to {}", signed_percent(verdict.lowest.percent, 0), signed_percent(verdict.highest.percent, 0))
+/// The tolerance as it was asked for.
+pub(super) fn tolerance(comparison: &Comparison) -> String {
+    format!("{}{NO_BREAK}%", comparison.options.tolerance)
 }
 
-/// A verdict in words: how far, where, and in which places the method holds.
+/// What a verdict says of assumed sizes.
+fn for_sizes(frame: &Frame) -> &'static str {
+    if frame.size_source() == SizeSource::Stated { "" } else { " (for the assumed sizes)" }
+}
+
+/// Whether the method's values are not those of an earlier method.
+pub(super) fn own(comparison: &Comparison, verdict: &Verdict) -> bool {
+    comparison.repeats(verdict.method).is_none()
+}
+
+/// A signed storey error, rounded to whole percent.
+fn verdict_percent(extreme: Extreme) -> String {
+    signed_percent(extreme.percent, 0)
+}
+
+/// The word of a verdict.
+pub(super) fn word(standing: Standing) -> &'static str {
+    match standing {
+        Standing::Suffices => "suffices",
+        Standing::Generous => "generous",
+        Standing::Short => "falls short",
+    }
+}
+
+/// A verdict in words: how far, where, in which places the method holds, and what covers every member.
 pub(super) fn verdict(comparison: &Comparison, verdict: &Verdict, units: ReportUnits) -> Sentence {
-    let tolerance = percent(comparison.options.tolerance, 0);
+    let tolerance = tolerance(comparison);
     let name = capital(&method_name(comparison, verdict.method));
     let unit = verdict.subject.quantity().unit(units);
-    let sentence = Sentence::default().strong(name).then(": ");
-    let sentence = match verdict.state {
-        Standing::Short => sentence.then(format!(
-            "up to {} short, worst in {}",
-            short_by(verdict.lowest.percent),
-            extreme(verdict.lowest, unit)
-        )),
-        Standing::Generous => sentence.then(format!(
-            "{}, but up to {} over in {}",
-            nowhere_short(verdict),
-            percent(verdict.highest.percent, 0),
-            extreme(verdict.highest, unit)
-        )),
-        Standing::Suffices => sentence.then(format!(
-            "{}, nowhere more than {} over",
-            nowhere_short(verdict),
-            percent(verdict.highest.percent.max(0.0).ceil(), 0)
-        )),
+    let over = match verdict.highest.percent {
+        none if none < 0.05 => "nowhere over".into(),
+        some => format!("over by up to {}", size(some)),
+    };
+    let text = match verdict.state {
+        Standing::Short => format!("{}, worst in {}", short_by(verdict), extreme(verdict.lowest, unit)),
+        Standing::Generous => format!("{}; {over}, most in {}", short_by(verdict), extreme(verdict.highest, unit)),
+        Standing::Suffices => format!("{}, {over}", short_by(verdict)),
     };
     let by_state = |state: Standing| {
         let of_state = verdict.places.iter().filter(|place| place.state == state);
@@ -184,61 +211,95 @@ pub(super) fn verdict(comparison: &Comparison, verdict: &Verdict, units: ReportU
     let kinds = [
         (Standing::Short, format!("Short by more than {tolerance}")),
         (Standing::Suffices, format!("Within {tolerance}")),
-        (Standing::Generous, format!("Over by more than {tolerance}, nowhere short by more")),
+        (Standing::Generous, format!("Over by more than {tolerance}, not short by more than {tolerance}")),
     ];
     let lists = kinds.into_iter().filter_map(|(state, head)| {
         let found = by_state(state);
         let all = found.len() == verdict.places.len();
         (!found.is_empty()).then(|| format!(" {head}: {}.", if all { "everywhere".into() } else { places(&found) }))
     });
-    let factor = match verdict.largest_factor() {
-        Some(factor) if factor > 1.005 => format!(" Multiplied by {factor:.2}, no member would be short."),
-        Some(_) => String::new(),
-        None => " Some value is zero: no factor covers every member.".into(),
+    let start = Sentence::default().strong(name).then(format!(": {text}."));
+    lists.fold(start, Sentence::then).then(cover(verdict, verdict.subject, units))
+}
+
+/// What covers every member: the factor and the member that sets it, and the members that no factor helps.
+fn cover(verdict: &Verdict, subject: Subject, units: ReportUnits) -> String {
+    let mut text = match verdict.governing() {
+        Some(member) if needed(member.factor).is_some() => format!(
+            " Multiplied by {} no member is short: {} sets this, {} short of its own exact value.",
+            factor(member.factor),
+            member_name(member),
+            size(member.own_shortfall())
+        ),
+        _ => String::new(),
     };
-    lists.fold(sentence.then("."), Sentence::then).then(factor)
+    if let Some((largest, count)) = verdict.unloaded() {
+        let members = if count == 1 { "member is" } else { "members are" };
+        let exact = amount(largest.exact.abs(), unit(subject, units));
+        text += &format!(
+            " {count} {members} left almost without load by the method, and no factor helps: design for the exact value \
+             (up to {exact}, {}).",
+            member_name(largest)
+        );
+    }
+    text
 }
 
-/// `34 %` of −34.2, never rounded to nothing.
-fn short_by(lowest: f64) -> String {
-    let size = (-lowest).max(0.0);
-    percent(size, usize::from(size < 1.0))
+fn member_name(extreme: Extreme) -> String {
+    member(extreme.member)
 }
 
-fn nowhere_short(verdict: &Verdict) -> String {
-    match verdict.lowest.percent {
-        lowest if lowest > -0.5 => "nowhere short".into(),
-        lowest => {
-            format!("nowhere more than {} short ({})", percent((-lowest).ceil(), 0), member(verdict.lowest.member))
-        }
+/// A factor over 1, if the value must be multiplied at all.
+pub(super) fn needed(factor: Option<f64>) -> Option<f64> {
+    factor.filter(|factor| *factor > 1.0 + 1e-9)
+}
+
+/// A factor for people: rounded up, never under 1: a quick value is not reduced by it.
+pub(super) fn factor(factor: Option<f64>) -> String {
+    factor.map_or_else(|| "none".into(), |factor| rounded_up(factor.max(1.0), 2))
+}
+
+/// `short by up to 40 % of the storey's largest` of −39.2: rounded to the far side.
+fn short_by(verdict: &Verdict) -> String {
+    match -verdict.lowest.percent {
+        none if none < 0.05 => "nowhere short".into(),
+        some => format!("short by up to {} of the storey's largest", size(some)),
     }
 }
 
-/// A member with both values: `column A, storey 1 (120 kN m where 182 kN m is exact)`.
+/// A percentage without sign, rounded away from zero; one decimal under 1 %.
+fn size(percent: f64) -> String {
+    let places = usize::from(percent < 1.0);
+    format!("{}{NO_BREAK}%", rounded_up(percent.max(0.0), places))
+}
+
+/// A member with both values: `column A, storey 1 (120 kN m where 182 kN m is exact, 35 % short of it)`.
 fn extreme(extreme: Extreme, unit: Unit) -> String {
     let (quick, exact) = (amount(extreme.quick.abs(), unit), amount(extreme.exact.abs(), unit));
-    format!("{} ({quick} where {exact} is exact)", member(extreme.member))
+    let off = match extreme.own_shortfall() {
+        short if short > 0.0 => format!("{} short of it", size(short)),
+        over => format!("{} over it", size(-over)),
+    };
+    format!("{} ({quick} where {exact} is exact: {off})", member(extreme.member))
+}
+
+/// How many values of a method carry a flag.
+pub(super) fn flags(method: &str, errors: &[ValueError]) -> Option<String> {
+    let count = |flag: Flag| errors.iter().filter(|error| error.flags.contains(&flag)).count();
+    let (sign, weak, zero) = (count(Flag::Sign), count(Flag::Weak), count(Flag::Zero));
+    (sign + weak + zero > 0).then(|| {
+        format!(
+            "{method}: of {} values {sign} differ in sign from the exact ones, {weak} are weak and {zero} zero beside \
+             the largest of their storey (column flag of errors.csv).",
+            errors.len()
+        )
+    })
 }
 
 /// The text with a capital first letter.
 pub(super) fn capital(text: &str) -> String {
     let mut letters = text.chars();
     letters.next().map(|first| first.to_uppercase().chain(letters).collect()).unwrap_or_default()
-}
-
-/// Head of the class columns of a subject.
-pub(super) fn class_head(subject: Subject, class: Class) -> &'static str {
-    match (subject == Subject::BeamMoments, class) {
-        (true, Class::End) => "beams of end bays",
-        (true, _) => "beams of interior bays",
-        (false, Class::End) => "end columns",
-        (false, _) => "interior columns",
-    }
-}
-
-/// Kind of member that a subject judges.
-pub(super) fn kind(subject: Subject) -> Kind {
-    if subject == Subject::BeamMoments { Kind::Beams } else { Kind::Columns }
 }
 
 /// Unit of a subject's values.
@@ -253,6 +314,11 @@ pub(super) fn cautions() -> Vec<&'static str> {
         "Linear elastic lateral analysis of a plane frame, for preliminary sizing and for checking. It is not a design: \
          gravity, torsion, connections, foundations, detailing, load combinations and drift limits remain with the \
          licensed engineer and the code in force.",
+        "First order: gravity acting on the sway (P-delta) is in none of the values. Real moments and drifts are larger, \
+         in tall and flexible frames markedly.",
+        "Every quick method satisfies statics. Where it is short, a ductile frame without instability yields early and \
+         redistributes; brittle parts (base plates, splices, column shear) need the full factor, and codes restrict \
+         redistribution in columns.",
         "Not for frames with walls, braces, infill, flat slabs, transfer columns or setbacks, nor for accidental torsion.",
         "Factors multiply the lateral part only, before gravity is added. Factored values are an envelope and balance \
          no joint: never derive shears or beam moments from factored column moments.",
