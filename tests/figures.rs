@@ -8,7 +8,7 @@ mod words;
 
 use resvg::tiny_skia::Pixmap;
 use swaybound::report::figure::{
-    Cell, EXACT_METHODS, Figure, INK, Marker, QUICK_METHODS, SERIES, Svg, colour_limit, contrast_on_white, look, png,
+    EXACT_METHODS, Figure, INK, Marker, QUICK_METHODS, SERIES, Shade, Svg, colour_limit, contrast_on_white, look, png,
     signed_colour,
 };
 
@@ -130,7 +130,7 @@ fn the_same_bytes_each_time() {
 #[test]
 fn numbers_that_are_not_finite_are_left_out_and_noted() {
     let mut elevation = scenes::elevation(3, 2);
-    elevation.columns[0] = Cell::Error(f64::NAN);
+    elevation.columns[0] = Shade::Error(f64::NAN);
     elevation.beams.truncate(4);
     elevation.grid.lateral[1] = f64::INFINITY;
     elevation.grid.storeys[1] = f64::NAN;
@@ -186,8 +186,8 @@ fn moments_are_drawn_on_the_side_in_tension() {
 fn members_take_the_colour_of_their_error() {
     let mut elevation = scenes::elevation(1, 1);
     elevation.limit = 40.0;
-    elevation.columns = vec![Cell::Error(-40.0), Cell::Error(20.0)];
-    elevation.beams = vec![Cell::Error(400.0)];
+    elevation.columns = vec![Shade::Error(-40.0), Shade::Error(20.0)];
+    elevation.beams = vec![Shade::Error(400.0)];
     let svg = elevation.svg();
     for share in [-1.0, 0.5, 1.0] {
         let bar = format!("fill=\"{}\" stroke=\"#8A8A8A\"", signed_colour(share).hex());

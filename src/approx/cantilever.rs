@@ -3,7 +3,9 @@
 use super::{march, range_fit, sheet};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Caution, Fit, Forces, Info, Members, Method, Response, Work, Worksheet, axial_from_beam_shears};
+use crate::response::{
+    Caution, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet, axial_from_beam_shears,
+};
 
 /// The cantilever method: column axial stress grows with the distance from the centroid of the column areas.
 ///
@@ -33,6 +35,7 @@ impl Method for Cantilever {
             "Beams bend to an inflection point at mid-span.",
         ],
         needs_sizes: false,
+        gives: Gives::Forces,
     };
 
     fn fit(frame: &Frame) -> Fit {

@@ -3,7 +3,7 @@
 use super::{march, range_fit, sheet};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Amount, Fit, Forces, Info, Members, Method, Response, Work, Worksheet};
+use crate::response::{Amount, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
 
 /// The portal method: interior columns take twice the shear of the end columns.
 ///
@@ -32,6 +32,7 @@ impl Method for Portal {
             "Beams bend to an inflection point at mid-span.",
         ],
         needs_sizes: false,
+        gives: Gives::Forces,
     };
 
     fn fit(frame: &Frame) -> Fit {

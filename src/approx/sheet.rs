@@ -4,7 +4,7 @@
 //! resist it, beams lift their left joints), axial forces positive in tension.
 
 use crate::frame::{Feet, Frame, SizeSource, bay_name, line_name};
-use crate::response::{Amount, Cell, Column, Response, Step, Worksheet};
+use crate::response::{Amount, Response, SheetCell, SheetColumn, Step, Worksheet};
 
 /// What the shear of a storey is shared by.
 pub(super) struct Part {
@@ -95,24 +95,24 @@ pub(super) fn axial_sheet(frame: &Frame, response: &Response) -> Worksheet {
     Worksheet { steps }
 }
 
-fn column(head: impl Into<String>, amount: Amount) -> Column {
-    Column { head: head.into(), amount }
+fn column(head: impl Into<String>, amount: Amount) -> SheetColumn {
+    SheetColumn { head: head.into(), amount }
 }
 
-fn storey_label(frame: &Frame, storey: usize) -> Cell {
+fn storey_label(frame: &Frame, storey: usize) -> SheetCell {
     let roof = if storey + 1 == frame.storeys() { " (top)" } else { "" };
-    Cell::Name(format!("{}{roof}", storey + 1))
+    SheetCell::Name(format!("{}{roof}", storey + 1))
 }
 
-fn floor_label(frame: &Frame, floor: usize) -> Cell {
-    if floor + 1 == frame.storeys() { Cell::Name("roof".into()) } else { Cell::Name((floor + 1).to_string()) }
+fn floor_label(frame: &Frame, floor: usize) -> SheetCell {
+    if floor + 1 == frame.storeys() { SheetCell::Name("roof".into()) } else { SheetCell::Name((floor + 1).to_string()) }
 }
 
 /// A table with one row per storey from the roof and one column per line.
 fn by_line(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn Fn(usize, usize) -> f64) -> Step {
     let lines = (0..frame.lines()).map(|line| column(line_name(line), amount));
     let row = |storey: usize| {
-        let numbers = (0..frame.lines()).map(|line| Cell::Number(value(storey, line)));
+        let numbers = (0..frame.lines()).map(|line| SheetCell::Number(value(storey, line)));
         std::iter::once(storey_label(frame, storey)).chain(numbers).collect()
     };
     Step {
@@ -127,7 +127,7 @@ fn by_line(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn F
 fn by_bay(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn Fn(usize, usize) -> f64) -> Step {
     let bays = (0..frame.bays()).map(|bay| column(bay_name(bay), amount));
     let row = |floor: usize| {
-        let numbers = (0..frame.bays()).map(|bay| Cell::Number(value(floor, bay)));
+        let numbers = (0..frame.bays()).map(|bay| SheetCell::Number(value(floor, bay)));
         std::iter::once(floor_label(frame, floor)).chain(numbers).collect()
     };
     Step {
@@ -142,13 +142,13 @@ fn by_bay(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn Fn
 fn with_column(mut step: Step, frame: &Frame, head: &str, amount: Amount, value: &dyn Fn(usize) -> f64) -> Step {
     step.columns.push(column(head, amount));
     let levels = (0..frame.storeys()).rev();
-    step.rows.iter_mut().zip(levels).for_each(|(row, level)| row.push(Cell::Number(value(level))));
+    step.rows.iter_mut().zip(levels).for_each(|(row, level)| row.push(SheetCell::Number(value(level))));
     step
 }
 
 fn storey_shears(frame: &Frame) -> Step {
     let row = |storey: usize| {
-        let numbers = [frame.lateral(storey), frame.storey_shear(storey)].map(Cell::Number);
+        let numbers = [frame.lateral(storey), frame.storey_shear(storey)].map(SheetCell::Number);
         std::iter::once(storey_label(frame, storey)).chain(numbers).collect()
     };
     Step {
@@ -165,9 +165,10 @@ fn storey_shears(frame: &Frame) -> Step {
 
 fn shares(frame: &Frame, rule: &str, part: Part, parts: &dyn Fn(usize) -> f64) -> Step {
     let sum: f64 = (0..frame.lines()).map(parts).sum();
-    let row =
-        |line: usize| vec![Cell::Name(line_name(line)), Cell::Number(parts(line)), Cell::Number(parts(line) / sum)];
-    let total = vec![Cell::Name("sum".into()), Cell::Number(sum), Cell::Number(1.0)];
+    let row = |line: usize| {
+        vec![SheetCell::Name(line_name(line)), SheetCell::Number(parts(line)), SheetCell::Number(parts(line) / sum)]
+    };
+    let total = vec![SheetCell::Name("sum".into()), SheetCell::Number(sum), SheetCell::Number(1.0)];
     Step {
         title: "Share of each column line".into(),
         rule: rule.into(),
@@ -189,7 +190,7 @@ fn column_moments(frame: &Frame, response: &Response, rule: &str) -> Step {
     let pinned = *frame.feet() == Feet::Pinned;
     for (row, storey) in step.rows.iter_mut().zip((0..frame.storeys()).rev()) {
         let label = if storey == 0 && pinned { "head (foot: 0)" } else { "head = foot" };
-        row.insert(1, Cell::Name(label.into()));
+        row.insert(1, SheetCell::Name(label.into()));
     }
     step
 }
@@ -225,7 +226,7 @@ fn hinge_level(frame: &Frame, storey: usize) -> f64 {
 fn hinge_moments(frame: &Frame) -> Step {
     let row = |storey: usize| {
         let level = hinge_level(frame, storey);
-        let numbers = [level, frame.overturning_above(level)].map(Cell::Number);
+        let numbers = [level, frame.overturning_above(level)].map(SheetCell::Number);
         std::iter::once(storey_label(frame, storey)).chain(numbers).collect()
     };
     Step {

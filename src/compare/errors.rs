@@ -2,8 +2,8 @@
 
 use super::formulas::{self, NEAR_ZERO, WEAK, ZERO};
 use super::places::Place;
-use crate::frame::Frame;
-use crate::response::{Member, Quantity, Response, Value};
+use crate::frame::{Frame, Member, MemberKind};
+use crate::response::{Quantity, Response, Value};
 use std::collections::HashMap;
 
 /// A reason to read an error with care.
@@ -57,8 +57,8 @@ pub struct ValueError {
 /// Largest values of one quantity, by storey and over the frame.
 #[derive(Default)]
 struct Largest {
-    by_storey: HashMap<(&'static str, Quantity, usize), f64>,
-    of_frame: HashMap<(&'static str, Quantity), f64>,
+    by_storey: HashMap<(MemberKind, Quantity, usize), f64>,
+    of_frame: HashMap<(MemberKind, Quantity), f64>,
 }
 
 impl Largest {
@@ -93,8 +93,10 @@ impl Largest {
 pub fn errors(frame: &Frame, exact: &Response, quick: &Response) -> Vec<ValueError> {
     let (exact, quick) = (exact.values(frame), quick.values(frame));
     let (exact_largest, quick_largest) = (Largest::of(&exact), Largest::of(&quick));
-    let by_place: HashMap<_, _> = exact.iter().map(|value| ((value.member, value.quantity), value)).collect();
-    let pairs = quick.iter().filter_map(|q| by_place.get(&(q.member, q.quantity)).map(|e| (*e, q)));
+    // Both lists stand in one order; what only one of them states is passed over.
+    let mut stated = exact.iter();
+    let same = |q: &Value, e: &Value| e.member == q.member && e.quantity == q.quantity;
+    let pairs = quick.iter().filter_map(|q| stated.by_ref().find(|e| same(q, e)).map(|e| (e, q)));
     pairs
         .map(|(e, q)| {
             let reference = formulas::reference::<f64, 1>(exact_largest.storey(e), exact_largest.frame(e));

@@ -1,7 +1,6 @@
 //! Places: members that are judged together, by band up the height and class across the width.
 
-use crate::frame::Frame;
-use crate::response::Member;
+use crate::frame::{Frame, Member, MemberKind};
 
 /// A band of storeys (for beams: of floors). In low frames ground wins, then roof, then second.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -29,22 +28,11 @@ pub enum Class {
     Whole,
 }
 
-/// What kind of member a place holds.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
-pub enum Kind {
-    /// Columns.
-    Columns,
-    /// Beams.
-    Beams,
-    /// Whole storeys.
-    Storeys,
-}
-
 /// Members that are judged together.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
 pub struct Place {
     /// Columns, beams or storeys.
-    pub kind: Kind,
+    pub kind: MemberKind,
     /// Band up the height.
     pub band: Band,
     /// Class across the width.
@@ -64,9 +52,9 @@ impl Band {
     }
 
     /// Name in files; beams are called by floor.
-    pub fn id(self, kind: Kind) -> &'static str {
+    pub fn id(self, kind: MemberKind) -> &'static str {
         match (self, kind) {
-            (Self::Ground, Kind::Beams) => "first",
+            (Self::Ground, MemberKind::Beam) => "first",
             (Self::Ground, _) => "ground",
             (Self::Second, _) => "second",
             (Self::Middle, _) => "middle",
@@ -76,13 +64,13 @@ impl Band {
     }
 
     /// Name in sentences.
-    pub fn words(self, kind: Kind) -> &'static str {
+    pub fn words(self, kind: MemberKind) -> &'static str {
         match (self, kind) {
-            (Self::Ground, Kind::Beams) => "first floor",
-            (Self::Second, Kind::Beams) => "second floor",
-            (Self::Middle, Kind::Beams) => "middle floors",
-            (Self::BelowRoof, Kind::Beams) => "floor below the roof",
-            (Self::Roof, Kind::Beams) => "roof",
+            (Self::Ground, MemberKind::Beam) => "first floor",
+            (Self::Second, MemberKind::Beam) => "second floor",
+            (Self::Middle, MemberKind::Beam) => "middle floors",
+            (Self::BelowRoof, MemberKind::Beam) => "floor below the roof",
+            (Self::Roof, MemberKind::Beam) => "roof",
             (Self::Ground, _) => "ground storey",
             (Self::Second, _) => "second storey",
             (Self::Middle, _) => "middle storeys",
@@ -108,9 +96,9 @@ impl Place {
     pub fn of(frame: &Frame, member: Member) -> Self {
         let class = |end: bool| if end { Class::End } else { Class::Interior };
         let (kind, class) = match member {
-            Member::Column { line, .. } => (Kind::Columns, class(frame.is_end_line(line))),
-            Member::Beam { bay, .. } => (Kind::Beams, class(frame.is_end_bay(bay))),
-            Member::Storey { .. } => (Kind::Storeys, Class::Whole),
+            Member::Column { line, .. } => (MemberKind::Column, class(frame.is_end_line(line))),
+            Member::Beam { bay, .. } => (MemberKind::Beam, class(frame.is_end_bay(bay))),
+            Member::Storey { .. } => (MemberKind::Storey, Class::Whole),
         };
         Self { kind, band: Band::of(member.storey(), frame.storeys()), class }
     }
@@ -119,9 +107,9 @@ impl Place {
     pub fn words(self) -> String {
         let band = self.band.words(self.kind);
         match (self.kind, self.class) {
-            (Kind::Columns, class) => format!("{band}, {} columns", class.id()),
-            (Kind::Beams, class) => format!("{band}, beams of {} bays", class.id()),
-            (Kind::Storeys, _) => band.into(),
+            (MemberKind::Column, class) => format!("{band}, {} columns", class.id()),
+            (MemberKind::Beam, class) => format!("{band}, beams of {} bays", class.id()),
+            (MemberKind::Storey, _) => band.into(),
         }
     }
 }

@@ -1,7 +1,7 @@
 //! One whole comparison: every analysis of a frame, their statics, errors and verdicts.
 
 use super::errors::{ValueError, errors};
-use super::verdict::{State, Subject, Verdict, by_shortfall, judge};
+use super::verdict::{Standing, Subject, Verdict, by_shortfall, judge};
 use crate::approx::METHODS;
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame};
@@ -52,10 +52,17 @@ pub enum ExactChoice {
 /// What a comparison is asked for.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Options {
-    /// How far a value may be off before the method does not suffice, percent of the storey's reference.
+    /// How far a value may be off before the method does not suffice, percent of the storey's reference; positive.
     pub tolerance: f64,
     /// Which exact analysis is the measure.
     pub exact: ExactChoice,
+}
+
+impl Default for Options {
+    /// A tolerance of 20 %, the exact analysis chosen by the frame.
+    fn default() -> Self {
+        Self { tolerance: 20.0, exact: ExactChoice::Automatic }
+    }
 }
 
 /// One quick method and what came of it.
@@ -87,9 +94,11 @@ pub struct FootLine {
 pub struct Comparison {
     /// What was asked for.
     pub options: Options,
-    /// The exact answers; the first is the measure of all errors.
-    pub exact: Vec<Response>,
-    /// Why the analysis with column axial strain was not run.
+    /// The exact answer that errors are measured by.
+    pub reference: Response,
+    /// The other exact answer, where there is one.
+    pub other_exact: Option<Response>,
+    /// Why the analysis with column axial strain has no answer.
     pub no_stiffness: Option<Unsolvable>,
     /// True where the frame is tall or slender but the measure leaves out column axial strain.
     pub axial_strain_missing: bool,
@@ -106,14 +115,28 @@ pub struct Comparison {
 }
 
 impl Comparison {
-    /// The exact answer that errors are measured by.
-    pub fn reference(&self) -> &Response {
-        &self.exact[0]
+    /// The exact answers, the measure of all errors first.
+    pub fn exact(&self) -> impl Iterator<Item = &Response> {
+        std::iter::once(&self.reference).chain(&self.other_exact)
+    }
+
+    /// The quick answers.
+    pub fn quick_responses(&self) -> impl Iterator<Item = &Response> {
+        self.quick.iter().filter_map(|quick| quick.response.as_ref())
     }
 
     /// Every answer: the exact ones first.
     pub fn responses(&self) -> impl Iterator<Item = &Response> {
-        self.exact.iter().chain(self.quick.iter().filter_map(|quick| quick.response.as_ref()))
+        self.exact().chain(self.quick_responses())
+    }
+
+    /// The error sets of the quick methods.
+    pub fn quick_errors(&self) -> impl Iterator<Item = (&'static str, &[ValueError])> {
+        let is_quick = |method: &str| self.quick.iter().any(|quick| quick.entry.info.id == method);
+        self.errors
+            .iter()
+            .filter(move |(method, _)| is_quick(method))
+            .map(|(method, errors)| (*method, errors.as_slice()))
     }
 
     /// The verdicts on one subject, the smallest shortfall first.
@@ -125,15 +148,14 @@ impl Comparison {
 
     /// The earlier quick method whose values `method` repeats on this frame, if there is one.
     pub fn repeats(&self, method: &str) -> Option<&'static str> {
-        let answers = || self.quick.iter().filter_map(|quick| quick.response.as_ref());
-        let own = answers().find(|response| response.method == method)?;
-        let earlier = answers().take_while(|response| response.method != method);
-        earlier.into_iter().find(|response| response.equals(own)).map(|response| response.method)
+        let own = self.quick_responses().find(|response| response.method == method)?;
+        let mut earlier = self.quick_responses().take_while(|response| response.method != method);
+        earlier.find(|response| response.equals(own)).map(|response| response.method)
     }
 
     /// Results that are allowed but absurd for a building.
     pub fn warnings(&self, frame: &Frame) -> Vec<ResultWarning> {
-        let drift = |storey: usize| self.reference().movement(storey).map(|movement| movement.drift.abs());
+        let drift = |storey: usize| self.reference.movement(storey).map(|movement| movement.drift.abs());
         let storeys =
             (0..frame.storeys()).filter_map(|storey| Some((storey, drift(storey)? / frame.storey_height(storey))));
         let worst = storeys.max_by(|a, b| a.1.total_cmp(&b.1)).filter(|(_, ratio)| *ratio > ABSURD_DRIFT);
@@ -142,36 +164,39 @@ impl Comparison {
 
     /// Whether some quick method is nowhere short on `subject` by more than the tolerance.
     pub fn some_method_meets(&self, subject: Subject) -> bool {
-        self.verdicts.iter().any(|verdict| verdict.subject == subject && verdict.state != State::Short)
+        self.verdicts.iter().any(|verdict| verdict.subject == subject && verdict.state != Standing::Short)
     }
 }
 
 /// Runs every analysis that applies to `frame` and compares them.
 ///
 /// # Errors
-/// [`Unsolvable`] where the frame cannot stand, the solution is too inaccurate, or the exact analysis asked for cannot be
-/// run for want of areas.
+/// [`Unsolvable`] where the frame cannot stand, or where the exact analysis that is the measure has no answer.
 pub fn compare(frame: &Frame, options: Options) -> Result<Comparison, Unsolvable> {
-    let plain = slope_deflection::analyse(frame)?;
-    let (with_strain, no_stiffness) = match stiffness::analyse(frame) {
-        Ok(response) => (Some(response), None),
-        Err(reason @ (Unsolvable::NoAreas | Unsolvable::RelativeSizes)) => (None, Some(reason)),
-        Err(other) => return Err(other),
-    };
     let tall = frame.height() > SLENDER * frame.width() || frame.storeys() > TALL;
+    let (plain, with_strain) = (slope_deflection::analyse(frame), stiffness::analyse(frame));
     let strain_wanted = match options.exact {
-        ExactChoice::Automatic => tall && with_strain.is_some(),
+        ExactChoice::Automatic => tall && with_strain.is_ok(),
         ExactChoice::SlopeDeflection => false,
         ExactChoice::Stiffness => true,
     };
-    let exact = match (strain_wanted, with_strain, &no_stiffness) {
-        (true, None, Some(reason)) => return Err(reason.clone()),
-        (true, Some(response), _) => vec![response, plain],
-        (_, response, _) => std::iter::once(plain).chain(response).collect(),
-    };
+    let no_stiffness = with_strain.as_ref().err().cloned();
+    let (reference, other_exact) = if strain_wanted { (with_strain?, plain.ok()) } else { (plain?, with_strain.ok()) };
     let quick: Vec<_> = METHODS.iter().map(|entry| run_quick(frame, entry)).collect();
-    let axial_strain_missing = tall && !strain_wanted;
-    Ok(evaluate(frame, options, exact, no_stiffness, axial_strain_missing, quick))
+    let mut comparison = Comparison {
+        options,
+        axial_strain_missing: tall && !strain_wanted,
+        no_stiffness,
+        errors: Vec::new(),
+        verdicts: Vec::new(),
+        feet: Vec::new(),
+        statics: Vec::new(),
+        reference,
+        other_exact,
+        quick,
+    };
+    comparison.evaluate(frame);
+    Ok(comparison)
 }
 
 fn run_quick(frame: &Frame, entry: &'static Entry) -> Quick {
@@ -180,40 +205,25 @@ fn run_quick(frame: &Frame, entry: &'static Entry) -> Quick {
     Quick { entry, fit, response }
 }
 
-fn evaluate(
-    frame: &Frame,
-    options: Options,
-    exact: Vec<Response>,
-    no_stiffness: Option<Unsolvable>,
-    axial_strain_missing: bool,
-    quick: Vec<Quick>,
-) -> Comparison {
-    let measured = quick.iter().filter_map(|quick| quick.response.as_ref()).chain(&exact[1..]);
-    let error_sets: Vec<_> = measured.map(|response| (response.method, errors(frame, &exact[0], response))).collect();
-    let is_quick = |method: &str| quick.iter().any(|quick| quick.entry.info.id == method);
-    let sets = error_sets.iter().filter(|(method, _)| is_quick(method));
-    let judged = sets.flat_map(|(method, errors)| {
-        Subject::ALL.into_iter().filter_map(move |subject| judge(method, subject, errors, options.tolerance))
-    });
-    let verdicts: Vec<_> = judged.collect();
-    let responses = exact.iter().chain(quick.iter().filter_map(|quick| quick.response.as_ref()));
-    let statics = responses.map(|response| (response.method, statics::check(frame, response))).collect();
-    let feet = foot_lines(frame, options, &exact[0], &quick);
-    Comparison {
-        options,
-        no_stiffness,
-        axial_strain_missing,
-        statics,
-        feet,
-        errors: error_sets,
-        verdicts,
-        exact,
-        quick,
+impl Comparison {
+    /// Fills in what follows from the answers.
+    fn evaluate(&mut self, frame: &Frame) {
+        let measured = self.quick_responses().chain(&self.other_exact);
+        self.errors = measured.map(|response| (response.method, errors(frame, &self.reference, response))).collect();
+        let tolerance = self.options.tolerance;
+        let judged = self.quick_errors().flat_map(|(method, errors)| {
+            Subject::ALL.into_iter().filter_map(move |subject| judge(method, subject, errors, tolerance))
+        });
+        self.verdicts = judged.collect();
+        let with_forces = self.responses().filter(|response| response.has_forces());
+        self.statics = with_forces.map(|response| (response.method, statics::check(frame, response))).collect();
+        self.feet = foot_lines(frame, self);
     }
 }
 
 /// The second line of a fixed-foot report: the lowest storeys against feet that turn a little.
-fn foot_lines(frame: &Frame, options: Options, exact: &Response, quick: &[Quick]) -> Vec<FootLine> {
+fn foot_lines(frame: &Frame, comparison: &Comparison) -> Vec<FootLine> {
+    let exact = &comparison.reference;
     if *frame.feet() != Feet::Fixed {
         return Vec::new();
     }
@@ -226,8 +236,9 @@ fn foot_lines(frame: &Frame, options: Options, exact: &Response, quick: &[Quick]
     let lines = |response: &Response| {
         let sets = [exact, stiff, soft].map(|exact| lowest_storeys(errors(frame, exact, response)));
         let line = |subject: Subject| {
-            let lowest =
-                |set: &[ValueError]| Some(judge(response.method, subject, set, options.tolerance)?.lowest.percent);
+            let lowest = |set: &[ValueError]| {
+                Some(judge(response.method, subject, set, comparison.options.tolerance)?.lowest.percent)
+            };
             let [fixed, stiff, soft] = &sets;
             Some(FootLine {
                 method: response.method,
@@ -238,7 +249,7 @@ fn foot_lines(frame: &Frame, options: Options, exact: &Response, quick: &[Quick]
         };
         Subject::ALL.into_iter().filter_map(line).collect::<Vec<_>>()
     };
-    quick.iter().filter_map(|quick| quick.response.as_ref()).flat_map(lines).collect()
+    comparison.quick_responses().flat_map(lines).collect()
 }
 
 /// The errors of the two lowest storeys, where feet matter most.

@@ -1,8 +1,9 @@
 //! Whether a quick method is good enough: verdicts by method, subject and place.
 
 use super::errors::{Flag, ValueError};
-use super::places::{Kind, Place};
-use crate::response::{Member, Quantity};
+use super::places::Place;
+use crate::frame::{Member, MemberKind};
+use crate::response::Quantity;
 use std::cmp::Ordering;
 use std::collections::BTreeMap;
 
@@ -33,11 +34,11 @@ impl Subject {
         }
     }
 
-    /// `column` or `beam`, as the files say.
-    pub fn member(self) -> &'static str {
+    /// The kind of member that is judged.
+    pub fn kind(self) -> MemberKind {
         match self {
-            Self::ColumnMoments | Self::ColumnShears => "column",
-            Self::BeamMoments => "beam",
+            Self::ColumnMoments | Self::ColumnShears => MemberKind::Column,
+            Self::BeamMoments => MemberKind::Beam,
         }
     }
 
@@ -50,14 +51,13 @@ impl Subject {
     }
 
     fn covers(self, error: &ValueError) -> bool {
-        let kind = if self == Self::BeamMoments { Kind::Beams } else { Kind::Columns };
-        error.place.kind == kind && error.quantity == self.quantity()
+        error.place.kind == self.kind() && error.quantity == self.quantity()
     }
 }
 
 /// How a method stands against the tolerance.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
-pub enum State {
+pub enum Standing {
     /// Nowhere short and nowhere over by more than the tolerance.
     Suffices,
     /// Nowhere short by more than the tolerance, somewhere over by more.
@@ -66,7 +66,7 @@ pub enum State {
     Short,
 }
 
-impl State {
+impl Standing {
     /// Name in files.
     pub fn id(self) -> &'static str {
         match self {
@@ -77,7 +77,7 @@ impl State {
     }
 
     fn of(short: f64, over: f64, tolerance: f64) -> Self {
-        match (short < -tolerance - TIE, over > tolerance + TIE) {
+        match (short < -tolerance - TIE || tolerance.is_nan(), over > tolerance + TIE) {
             (true, _) => Self::Short,
             (false, true) => Self::Generous,
             (false, false) => Self::Suffices,
@@ -125,7 +125,7 @@ pub struct PlaceVerdict {
     /// Members whose quick value is zero or weak: the largest exact one, and their number.
     pub unloaded: Option<(Extreme, usize)>,
     /// Against the tolerance.
-    pub state: State,
+    pub state: Standing,
 }
 
 /// The verdict on one method for one subject.
@@ -136,7 +136,7 @@ pub struct Verdict {
     /// What is judged.
     pub subject: Subject,
     /// Against the tolerance, over all places.
-    pub state: State,
+    pub state: Standing,
     /// The shortest member of the frame.
     pub lowest: Extreme,
     /// The member most over.
@@ -175,7 +175,7 @@ pub fn judge(method: &'static str, subject: Subject, errors: &[ValueError], tole
     let places: Vec<_> = judged.collect::<Option<_>>()?;
     let lowest = least(places.iter().map(|place| place.lowest))?;
     let highest = most(places.iter().map(|place| place.highest))?;
-    let state = State::of(lowest.percent, highest.percent, tolerance);
+    let state = Standing::of(lowest.percent, highest.percent, tolerance);
     Some(Verdict { method, subject, state, lowest, highest, places })
 }
 
@@ -191,7 +191,7 @@ fn judge_place(place: Place, members: &[Extreme], tolerance: f64) -> Option<Plac
     let (loaded, unloaded): (Vec<_>, Vec<_>) = members.iter().partition(|member| member.factor.is_some());
     let governing = largest_factor(loaded.into_iter());
     let unloaded = largest_exact(unloaded.iter().copied()).map(|member| (member, unloaded.len()));
-    let state = State::of(lowest.percent, highest.percent, tolerance);
+    let state = Standing::of(lowest.percent, highest.percent, tolerance);
     Some(PlaceVerdict { place, members: members.len(), lowest, highest, governing, unloaded, state })
 }
 

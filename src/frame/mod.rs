@@ -4,11 +4,13 @@
 
 mod fault;
 pub mod file;
+mod member;
 mod names;
 pub mod sizes;
 pub mod template;
 
 pub use fault::{FrameFault, FrameWarning};
+pub use member::{Member, MemberKind};
 pub use names::{bay_name, line_index, line_name};
 
 use crate::units::ReportUnits;
@@ -82,6 +84,9 @@ pub struct FrameParts {
 /// A regular moment frame with valid geometry, members and loads.
 ///
 /// Indices count from 0: storey 0 stands on the ground, floor 0 is on top of it, line 0 is A, bay 0 is A-B.
+///
+/// # Panics
+/// Accessors panic where an index lies outside the frame.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Frame {
     parts: FrameParts,

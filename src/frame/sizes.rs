@@ -9,7 +9,7 @@
 //! - column areas A = a sqrt(I) (a = `area_per_inertia`);
 //! - foot springs `foot_spring` times 4 E I_c / h of the column above.
 
-use super::Section;
+use super::{Member, Section};
 use std::fmt;
 
 /// What one parameter of the size model may be.
@@ -173,25 +173,6 @@ pub struct SizeSet {
     pub area_per_inertia: f64,
 }
 
-/// A member of the frame, indices from 0.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum MemberPlace {
-    /// The column of `storey` on `line`.
-    Column {
-        /// Storey, 0 = lowest.
-        storey: usize,
-        /// Column line, 0 = A.
-        line: usize,
-    },
-    /// The beam at `floor` in `bay`.
-    Beam {
-        /// Floor, 0 = lowest.
-        floor: usize,
-        /// Bay, 0 = A-B.
-        bay: usize,
-    },
-}
-
 /// Columns and beams in the order of [`super::FrameParts`].
 #[derive(Debug, Clone, PartialEq)]
 pub struct Sections {
@@ -204,14 +185,14 @@ pub struct Sections {
 impl SizeSet {
     /// The members of a grid with these sizes. `factor` multiplies the inertia of each member; it is called once for
     /// each column in the order they are stored, then once for each beam. Column areas follow the multiplied inertia.
-    pub fn sections(&self, bays: &[f64], storeys: &[f64], factor: impl FnMut(MemberPlace) -> f64) -> Sections {
+    pub fn sections(&self, bays: &[f64], storeys: &[f64], factor: impl FnMut(Member) -> f64) -> Sections {
         let mut factor = factor;
         let lines = bays.len() + 1;
         let mut columns = Vec::with_capacity(storeys.len() * lines);
         for storey in 0..storeys.len() {
             for line in 0..lines {
                 let end = line == 0 || line + 1 == lines;
-                let inertia = self.column_inertia(storey, end) * factor(MemberPlace::Column { storey, line });
+                let inertia = self.column_inertia(storey, end) * factor(Member::Column { storey, line });
                 columns.push(Section { inertia, area: Some(self.area_per_inertia * inertia.sqrt()) });
             }
         }
@@ -221,7 +202,7 @@ impl SizeSet {
             let roof = if floor + 1 == storeys.len() { self.roof_beam } else { 1.0 };
             for (bay, width) in bays.iter().enumerate() {
                 let inertia = self.beam_inertia(floor, width / mean, mean / median) * roof;
-                beams.push(Section { inertia: inertia * factor(MemberPlace::Beam { floor, bay }), area: None });
+                beams.push(Section { inertia: inertia * factor(Member::Beam { floor, bay }), area: None });
             }
         }
         Sections { columns, beams }
@@ -355,9 +336,9 @@ mod tests {
             next += 1.0;
             next
         });
-        assert_eq!(asked[1], MemberPlace::Column { storey: 0, line: 1 });
-        assert_eq!(asked[2], MemberPlace::Column { storey: 1, line: 0 });
-        assert_eq!(asked[5], MemberPlace::Beam { floor: 1, bay: 0 });
+        assert_eq!(asked[1], Member::Column { storey: 0, line: 1 });
+        assert_eq!(asked[2], Member::Column { storey: 1, line: 0 });
+        assert_eq!(asked[5], Member::Beam { floor: 1, bay: 0 });
         near(made.columns[1].inertia, 2.0 * 3e-3);
         near(made.columns[1].area.unwrap(), 3.5 * 6e-3f64.sqrt());
     }

@@ -16,6 +16,8 @@ pub struct Forces<const W: usize> {
     pub beam_left: Vec<[f64; W]>,
     /// Beam moments at the right end, N m.
     pub beam_right: Vec<[f64; W]>,
+    /// Storey drifts, m; relative where the frame's sizes are.
+    pub drift: Vec<[f64; W]>,
 }
 
 impl<const W: usize> Forces<W> {
@@ -29,21 +31,25 @@ impl<const W: usize> Forces<W> {
             column_axial: columns,
             beam_left: beams.clone(),
             beam_right: beams,
+            drift: vec![[0.0; W]; members.storeys],
         }
     }
 }
 
-/// Scratch numbers a method may use: one per column line. Their contents mean nothing between calls.
+/// Scratch numbers a method may use. Their contents mean nothing between calls.
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Work<const W: usize> {
     /// One number per column line.
     pub line: Vec<[f64; W]>,
+    /// One number per storey, in four sets.
+    pub storey: [Vec<[f64; W]>; 4],
 }
 
 impl<const W: usize> Work<W> {
     /// Scratch room for `members`.
     pub fn for_members(members: &Members<W>) -> Self {
-        Self { line: vec![[0.0; W]; members.lines()] }
+        let storey = vec![[0.0; W]; members.storeys];
+        Self { line: vec![[0.0; W]; members.lines()], storey: [storey.clone(), storey.clone(), storey.clone(), storey] }
     }
 }
 

@@ -21,6 +21,14 @@ pub struct Members<const W: usize> {
     pub shear: Vec<[f64; W]>,
     /// Column areas, in any one unit: the quick methods use their ratios only. All equal where the frame has none.
     pub area: Vec<[f64; W]>,
+    /// Flexural stiffness E I/h of each column, N m; relative where the frame's sizes are.
+    pub column_stiffness: Vec<[f64; W]>,
+    /// Flexural stiffness E I/L of each beam, N m; relative where the frame's sizes are.
+    pub beam_stiffness: Vec<[f64; W]>,
+    /// Axial stiffness E A of each column, N; relative where the frame's sizes are, equal where it has no areas.
+    pub axial_stiffness: Vec<[f64; W]>,
+    /// Foot fixity S / (S + C): S the sum of the foot springs, C that of the lowest columns' E I/h. 1 fixed, 0 pinned.
+    pub foot_fixity: [f64; W],
     /// Height of the ground storey's assumed inflection point over the storey height: 0 on pinned feet, else 1/2.
     pub ground_hinge: [f64; W],
 }
@@ -48,7 +56,11 @@ impl Members<1> {
         let each =
             |count: usize, value: &dyn Fn(usize) -> f64| (0..count).map(|index| [value(index)]).collect::<Vec<_>>();
         let lines = frame.lines();
-        let area = |index: usize| frame.column(index / lines, index % lines).area.unwrap_or(1.0);
+        let bays = frame.bays();
+        let has_areas = frame.has_areas();
+        let stated = |index: usize| frame.column(index / lines, index % lines).area.unwrap_or(1.0);
+        let area = |index: usize| if has_areas { stated(index) } else { 1.0 };
+        let columns = frame.storeys() * lines;
         Self {
             storeys: frame.storeys(),
             bays: frame.bays(),
@@ -56,23 +68,48 @@ impl Members<1> {
             width: each(frame.bays(), &|bay| frame.bay_width(bay)),
             position: each(lines, &|line| frame.line_position(line)),
             shear: each(frame.storeys(), &|storey| frame.storey_shear(storey)),
-            area: each(frame.storeys() * lines, &|index| if frame.has_areas() { area(index) } else { 1.0 }),
+            area: each(columns, &area),
+            column_stiffness: each(columns, &|index| frame.column_stiffness(index / lines, index % lines)),
+            beam_stiffness: each(frame.storeys() * bays, &|index| frame.beam_stiffness(index / bays, index % bays)),
+            axial_stiffness: each(columns, &|index| frame.modulus() * area(index)),
+            foot_fixity: [foot_fixity(frame)],
             ground_hinge: [if *frame.feet() == Feet::Pinned { 0.0 } else { 0.5 }],
         }
     }
+}
 
-    /// The same frame in four lanes.
-    pub fn repeated(&self) -> Members<4> {
-        let spread = |values: &[[f64; 1]]| values.iter().map(|[value]| [*value; 4]).collect::<Vec<_>>();
-        Members {
-            storeys: self.storeys,
-            bays: self.bays,
-            height: spread(&self.height),
-            width: spread(&self.width),
-            position: spread(&self.position),
-            shear: spread(&self.shear),
-            area: spread(&self.area),
-            ground_hinge: [self.ground_hinge[0]; 4],
+impl Members<4> {
+    /// Four frames of one shape side by side.
+    pub fn side_by_side(frames: [&Members<1>; 4]) -> Self {
+        let gather = |values: fn(&Members<1>) -> &Vec<[f64; 1]>| {
+            let count = values(frames[0]).len();
+            (0..count).map(|index| frames.map(|frame| values(frame)[index][0])).collect()
+        };
+        Self {
+            storeys: frames[0].storeys,
+            bays: frames[0].bays,
+            height: gather(|frame| &frame.height),
+            width: gather(|frame| &frame.width),
+            position: gather(|frame| &frame.position),
+            shear: gather(|frame| &frame.shear),
+            area: gather(|frame| &frame.area),
+            column_stiffness: gather(|frame| &frame.column_stiffness),
+            beam_stiffness: gather(|frame| &frame.beam_stiffness),
+            axial_stiffness: gather(|frame| &frame.axial_stiffness),
+            foot_fixity: frames.map(|frame| frame.foot_fixity[0]),
+            ground_hinge: frames.map(|frame| frame.ground_hinge[0]),
+        }
+    }
+}
+
+fn foot_fixity(frame: &Frame) -> f64 {
+    match frame.feet() {
+        Feet::Fixed => 1.0,
+        Feet::Pinned => 0.0,
+        Feet::Springs(springs) => {
+            let springs: f64 = springs.iter().sum();
+            let columns: f64 = (0..frame.lines()).map(|line| frame.column_stiffness(0, line)).sum();
+            springs / (springs + columns)
         }
     }
 }

@@ -17,6 +17,31 @@ pub struct Info {
     pub assumptions: &'static [&'static str],
     /// True where member sizes must be known (areas for the cantilever method count only as ratios).
     pub needs_sizes: bool,
+    /// What the method states.
+    pub gives: Gives,
+}
+
+/// What a method states.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Gives {
+    /// Member forces.
+    Forces,
+    /// Storey drifts.
+    Drifts,
+    /// Member forces and storey drifts.
+    Both,
+}
+
+impl Gives {
+    /// Whether member forces are among it.
+    pub fn forces(self) -> bool {
+        self != Self::Drifts
+    }
+
+    /// Whether storey drifts are among it.
+    pub fn drifts(self) -> bool {
+        self != Self::Forces
+    }
 }
 
 /// A reason to read a method's numbers with care, as one sentence.
@@ -42,7 +67,7 @@ pub trait Method {
     /// Whether the method may be used on `frame`.
     fn fit(frame: &Frame) -> Fit;
 
-    /// Computes the member forces of `W` frames.
+    /// Computes what [`Info::gives`] says for `W` frames; the rest of `forces` means nothing.
     ///
     /// `work` and `forces` must have been made for `members`.
     fn respond<L: crate::lane::Lane<W>, const W: usize>(
@@ -87,6 +112,13 @@ impl Entry {
         let members = Members::of(frame);
         let mut forces = Forces::for_members(&members);
         (self.one)(&members, &mut Work::for_members(&members), &mut forces);
-        Response::from_forces(self.info.id, frame, &forces)
+        let response = match self.info.gives.forces() {
+            true => Response::from_forces(self.info.id, frame, &forces),
+            false => Response::without_forces(self.info.id, frame),
+        };
+        match self.info.gives.drifts() && frame.has_real_stiffness() {
+            true => response.with_drifts(&forces.drift.iter().map(|[drift]| *drift).collect::<Vec<_>>()),
+            false => response,
+        }
     }
 }

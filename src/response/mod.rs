@@ -13,7 +13,7 @@ mod worksheet;
 
 pub use forces::{Forces, Work, axial_from_beam_shears};
 pub use members::Members;
-pub use method::{Caution, Entry, Fit, Info, Method};
-pub use quantity::{Member, Quantity, Value};
+pub use method::{Caution, Entry, Fit, Gives, Info, Method};
+pub use quantity::{Quantity, Value};
 pub use single::{BeamForces, ColumnForces, Movement, Response};
-pub use worksheet::{Amount, Cell, Column, Step, Worksheet};
+pub use worksheet::{Amount, SheetCell, SheetColumn, Step, Worksheet};

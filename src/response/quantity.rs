@@ -1,58 +1,7 @@
 //! The quantities a response states, each with its place: one list that files, errors and reports share.
 
-use crate::frame::{Frame, bay_name, line_name};
+use crate::frame::{Frame, Member};
 use crate::units::{ReportUnits, Unit};
-
-/// What a value belongs to. Indices count from 0.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
-pub enum Member {
-    /// A column, by storey and line.
-    Column {
-        /// Storey, 0 = ground.
-        storey: usize,
-        /// Column line, 0 = A.
-        line: usize,
-    },
-    /// A beam, by its own floor and bay.
-    Beam {
-        /// Floor, 0 = lowest.
-        floor: usize,
-        /// Bay, 0 = A-B.
-        bay: usize,
-    },
-    /// A whole storey.
-    Storey {
-        /// Storey, 0 = ground.
-        storey: usize,
-    },
-}
-
-impl Member {
-    /// `column`, `beam` or `storey`, as the files say.
-    pub fn kind(self) -> &'static str {
-        match self {
-            Self::Column { .. } => "column",
-            Self::Beam { .. } => "beam",
-            Self::Storey { .. } => "storey",
-        }
-    }
-
-    /// Storey (a beam: its floor), counted from 0.
-    pub fn storey(self) -> usize {
-        match self {
-            Self::Column { storey, .. } | Self::Storey { storey } | Self::Beam { floor: storey, .. } => storey,
-        }
-    }
-
-    /// Line or bay by name, `-` for a whole storey.
-    pub fn at(self) -> String {
-        match self {
-            Self::Column { line, .. } => line_name(line),
-            Self::Beam { bay, .. } => bay_name(bay),
-            Self::Storey { .. } => "-".into(),
-        }
-    }
-}
 
 /// A quantity of a column, beam or storey.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -120,7 +69,8 @@ impl super::Response {
     /// Every number of this response: columns storey by storey, then beams floor by floor, then storeys.
     pub fn values(&self, frame: &Frame) -> Vec<Value> {
         let mut values = Vec::new();
-        for storey in 0..frame.storeys() {
+        let with_forces = if self.has_forces() { frame.storeys() } else { 0 };
+        for storey in 0..with_forces {
             for line in 0..frame.lines() {
                 let member = Member::Column { storey, line };
                 let column = self.column(storey, line);
@@ -134,7 +84,7 @@ impl super::Response {
                 values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
             }
         }
-        for floor in 0..frame.storeys() {
+        for floor in 0..with_forces {
             for bay in 0..frame.bays() {
                 let member = Member::Beam { floor, bay };
                 let beam = self.beam(floor, bay);
@@ -149,7 +99,9 @@ impl super::Response {
         }
         for storey in 0..frame.storeys() {
             let member = Member::Storey { storey };
-            values.push(Value { member, quantity: Quantity::Shear, value: self.storey_shear(storey) });
+            if self.has_forces() {
+                values.push(Value { member, quantity: Quantity::Shear, value: self.storey_shear(storey) });
+            }
             if let Some(movement) = self.movement(storey) {
                 values.push(Value { member, quantity: Quantity::Drift, value: movement.drift });
                 values.push(Value { member, quantity: Quantity::Sway, value: movement.sway });

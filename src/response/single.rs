@@ -51,6 +51,9 @@ pub struct Movement {
 }
 
 /// The answer of one method for one frame, exact or quick.
+///
+/// # Panics
+/// Accessors panic where an index lies outside the frame.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Response {
     /// Name of the method in files, such as `slope-deflection`.
@@ -87,7 +90,17 @@ impl Response {
         }
     }
 
-    /// Adds the drift of every storey, m; sways are their sums.
+    /// The answer of a method that states no member forces.
+    pub fn without_forces(method: &'static str, frame: &Frame) -> Self {
+        Self { method, lines: frame.lines(), columns: Vec::new(), beams: Vec::new(), movements: None, residual: None }
+    }
+
+    /// Whether the answer states member forces; where not, the accessors of columns and beams panic.
+    pub fn has_forces(&self) -> bool {
+        !self.columns.is_empty()
+    }
+
+    /// Adds the drift of every storey from the ground, m; sways are their sums.
     pub fn with_drifts(mut self, drifts: &[f64]) -> Self {
         let movement = |sway: &mut f64, drift: &f64| {
             *sway += drift;
@@ -143,6 +156,9 @@ impl Response {
         let close = |a: f64, b: f64, scale: f64| (a - b).abs() <= 1e-9 * scale;
         let moment = self.largest_moment().max(other.largest_moment());
         let axial = self.columns.iter().map(|column| column.axial.abs()).fold(0.0, f64::max);
+        if !self.has_forces() || !other.has_forces() {
+            return false;
+        }
         let columns = self.columns.iter().zip(&other.columns).all(|(a, b)| {
             close(a.foot, b.foot, moment) && close(a.head, b.head, moment) && close(a.axial, b.axial, axial)
         });

@@ -5,8 +5,8 @@
 //! # References
 //! Equilibrium of joints, storeys and free bodies: common practice.
 
-use super::{Member, Response};
-use crate::frame::Frame;
+use super::Response;
+use crate::frame::{Frame, Member};
 
 /// The most a response may miss equilibrium by, relative to the scale of the check.
 ///

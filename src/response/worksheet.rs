@@ -21,7 +21,7 @@ pub enum Amount {
 
 /// One column of a step's table.
 #[derive(Debug, Clone, PartialEq, Eq)]
-pub struct Column {
+pub struct SheetColumn {
     /// Head of the column, without unit.
     pub head: String,
     /// What its numbers are.
@@ -30,7 +30,7 @@ pub struct Column {
 
 /// One entry of a step's table.
 #[derive(Debug, Clone, PartialEq)]
-pub enum Cell {
+pub enum SheetCell {
     /// A name.
     Name(String),
     /// A number in N, m.
@@ -47,9 +47,9 @@ pub struct Step {
     /// The rule in words and symbols.
     pub rule: String,
     /// The table's columns.
-    pub columns: Vec<Column>,
+    pub columns: Vec<SheetColumn>,
     /// The table's rows, one entry per column.
-    pub rows: Vec<Vec<Cell>>,
+    pub rows: Vec<Vec<SheetCell>>,
 }
 
 /// A method's hand calculation for one frame.

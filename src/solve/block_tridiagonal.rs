@@ -25,7 +25,7 @@ pub struct BlockTridiagonal {
 pub struct Solution {
     /// Unknowns of each level.
     pub levels: Vec<DVector<f64>>,
-    /// Largest |b - A x| over largest |b|, after one step of iterative refinement.
+    /// Largest |b - A x| over largest |b| (0 without load), after one step of iterative refinement.
     pub residual: f64,
 }
 
@@ -65,6 +65,8 @@ impl BlockTridiagonal {
                     self.diagonal[level][(i, j)] += value;
                 } else if level == other + 1 {
                     self.below[other][(i, j)] += value;
+                } else {
+                    debug_assert!(other == level + 1, "unknowns of levels {level} and {other} are no neighbours");
                 }
             }
         }
@@ -87,7 +89,11 @@ impl BlockTridiagonal {
         let largest = |vectors: &[DVector<f64>]| vectors.iter().map(|vector| vector.amax()).fold(0.0, f64::max);
         let (misfit, load) = (self.misfit(&levels), largest(&self.load));
         let finite = misfit.iter().all(|level| level.iter().all(|value| value.is_finite()));
-        let residual = if finite { largest(&misfit) / load } else { f64::INFINITY };
+        let residual = match (finite, load > 0.0) {
+            (false, _) => f64::INFINITY,
+            (true, true) => largest(&misfit) / load,
+            (true, false) => 0.0,
+        };
         Ok(Solution { levels, residual })
     }
 

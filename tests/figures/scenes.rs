@@ -1,8 +1,8 @@
 //! Scenes for the figure tests: frames of many shapes with forces that satisfy statics.
 
 use swaybound::report::figure::{
-    Cell, Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, QUICK_METHODS,
-    Series, Spread, SpreadRow, Svg, colour_limit,
+    Elevation, EndMoments, Figure, FootKind, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, QUICK_METHODS,
+    Series, Shade, Spread, SpreadRow, Svg, colour_limit,
 };
 use swaybound::units::ReportUnits;
 
@@ -69,11 +69,11 @@ fn design(moments: &[f64; 2]) -> f64 {
     moments[0].abs().max(moments[1].abs())
 }
 
-fn cells(exact: &[[f64; 2]], quick: &[[f64; 2]]) -> Vec<Cell> {
+fn cells(exact: &[[f64; 2]], quick: &[[f64; 2]]) -> Vec<Shade> {
     let error = |(exact, quick): (&[f64; 2], &[f64; 2])| 100.0 * (design(quick) - design(exact)) / design(exact);
-    let mut cells: Vec<Cell> = exact.iter().zip(quick).map(error).map(Cell::Error).collect();
+    let mut cells: Vec<Shade> = exact.iter().zip(quick).map(error).map(Shade::Error).collect();
     let last = cells.len() - 1;
-    cells[last] = Cell::NearZero;
+    cells[last] = Shade::NearZero;
     cells
 }
 
@@ -82,7 +82,7 @@ pub fn elevation(storeys: usize, bays: usize) -> Elevation {
     let (exact, quick) = (exact(&grid), portal(&grid));
     let (columns, beams) = (cells(&exact.columns, &quick.columns), cells(&exact.beams, &quick.beams));
     let errors = columns.iter().chain(&beams).filter_map(|cell| match cell {
-        Cell::Error(error) => Some(*error),
+        Shade::Error(error) => Some(*error),
         _ => None,
     });
     Elevation {

@@ -1,15 +1,15 @@
 //! The charts of a comparison.
 
-use super::{Findings, comparison_name, summary, words};
+use super::{Findings, words};
 use crate::compare::errors::{Flag, ValueError};
 use crate::compare::verdict::Subject;
-use crate::frame::line_name;
+use crate::frame::{Member, MemberKind, line_name};
 use crate::report::figure::{
-    self, Cell, Elevation, EndMoments, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series, colour_limit,
+    self, Elevation, EndMoments, Grid, MomentDiagram, OutlineMoments, Panel, Profiles, Series, Shade, colour_limit,
 };
 use crate::report::number::signed_percent;
 use crate::report::{Figure, say};
-use crate::response::{Member, Quantity, Response};
+use crate::response::{Quantity, Response};
 use crate::units::Unit;
 
 /// The most column lines that get a panel of their own.
@@ -62,35 +62,35 @@ fn chart(name: String, title: &str, caption: &str, figure: &dyn figure::Figure) 
 fn elevations(findings: &Findings) -> Vec<Chart> {
     let comparison = findings.comparison;
     let design = |error: &&ValueError| error.quantity == Quantity::DesignMoment;
-    let all = summary::quick_errors(comparison).flat_map(|(_, errors)| errors.iter().filter(design));
+    let all = comparison.quick_errors().flat_map(|(_, errors)| errors.iter().filter(design));
     let limit = colour_limit(all.filter_map(|error| error.storey_error_percent));
-    let one = |(method, errors): (&'static str, &Vec<ValueError>)| {
+    let one = |(method, errors): (&'static str, &[ValueError])| {
         let design: Vec<_> = errors.iter().filter(design).collect();
-        let cells = |kind: &str| {
+        let cells = |kind: MemberKind| {
             design.iter().filter(|error| error.member.kind() == kind).map(|error| cell(error)).collect::<Vec<_>>()
         };
-        let name = comparison_name(comparison, method);
+        let name = words::method_name(comparison, method);
         let title = format!("Error of design moments: {name}");
         let caption = elevation_caption(&design);
         let figure = Elevation {
             title: title.clone(),
             description: caption.clone(),
             grid: Grid::of(findings.frame()),
-            columns: cells("column"),
-            beams: cells("beam"),
+            columns: cells(MemberKind::Column),
+            beams: cells(MemberKind::Beam),
             limit,
             measure: "error of the design moment, % of the storey's largest exact value".into(),
         };
         chart(format!("{ELEVATION}{method}"), &title, &caption, &figure)
     };
-    summary::quick_errors(comparison).filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
+    comparison.quick_errors().filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
 }
 
-fn cell(error: &ValueError) -> Cell {
+fn cell(error: &ValueError) -> Shade {
     match error.storey_error_percent {
-        _ if error.flags.contains(&Flag::NearZero) => Cell::NearZero,
-        Some(percent) => Cell::Error(percent),
-        None => Cell::Missing,
+        _ if error.flags.contains(&Flag::NearZero) => Shade::NearZero,
+        Some(percent) => Shade::Error(percent),
+        None => Shade::Missing,
     }
 }
 
@@ -119,7 +119,7 @@ fn panel_lines(findings: &Findings) -> Vec<usize> {
         return lines;
     }
     let worst = |line: usize| {
-        let errors = summary::quick_errors(findings.comparison).flat_map(|(_, errors)| errors);
+        let errors = findings.comparison.quick_errors().flat_map(|(_, errors)| errors);
         let on_line = errors.filter(|error| matches!(error.member, Member::Column { line: own, .. } if own == line));
         let of_moments = on_line.filter(|error| error.quantity == Quantity::DesignMoment);
         of_moments.filter_map(|error| error.storey_error_percent).map(f64::abs).fold(0.0, f64::max)
@@ -134,15 +134,14 @@ fn panel_lines(findings: &Findings) -> Vec<usize> {
 
 /// The exact answer and the quick ones.
 fn drawn<'a>(findings: &Findings<'a>) -> Vec<&'a Response> {
-    let quick = findings.comparison.quick.iter().filter_map(|quick| quick.response.as_ref());
-    std::iter::once(findings.comparison.reference()).chain(quick).collect()
+    std::iter::once(&findings.comparison.reference).chain(findings.comparison.quick_responses()).collect()
 }
 
 fn panels(findings: &Findings, value: &dyn Fn(&Response, usize, usize) -> f64) -> Vec<Panel> {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     let series = |response: &Response, line: usize| Series {
         method: response.method.into(),
-        name: comparison_name(comparison, response.method),
+        name: words::method_name(comparison, response.method),
         values: (0..frame.storeys()).map(|storey| value(response, storey, line)).collect(),
     };
     let panel = |line: usize| Panel {
@@ -167,7 +166,7 @@ fn column_moments(findings: &Findings) -> Chart {
     let worst = comparison.ranked(Subject::ColumnMoments).first().map_or_else(String::new, |best| {
         format!(
             "Least short: {}, {} in {}.",
-            comparison_name(comparison, best.method),
+            words::method_name(comparison, best.method),
             signed_percent(best.lowest.percent, 0),
             words::member(best.lowest.member)
         )
@@ -211,8 +210,8 @@ fn end_moments(findings: &Findings, response: &Response) -> EndMoments {
 
 fn moment_diagram(findings: &Findings) -> Chart {
     let comparison = findings.comparison;
-    let reference = comparison.reference();
-    let name = comparison_name(comparison, reference.method);
+    let reference = &comparison.reference;
+    let name = words::method_name(comparison, reference.method);
     let title = "Moment diagram under the lateral forces";
     let best = comparison.ranked(Subject::ColumnMoments).first().map(|verdict| verdict.method);
     let quick = comparison.quick.iter().filter_map(|quick| quick.response.as_ref());
@@ -220,7 +219,7 @@ fn moment_diagram(findings: &Findings) -> Chart {
     let caption = match outline {
         Some(response) => format!(
             "Drawn on the side in tension. Filled: {name}. Outline: {}, the least short for column design moments.",
-            comparison_name(comparison, response.method)
+            words::method_name(comparison, response.method)
         ),
         None => format!("Drawn on the side in tension: {name}."),
     };
@@ -232,7 +231,7 @@ fn moment_diagram(findings: &Findings) -> Chart {
         exact: end_moments(findings, reference),
         quick: outline.map(|response| OutlineMoments {
             method: response.method.into(),
-            name: comparison_name(comparison, response.method),
+            name: words::method_name(comparison, response.method),
             moments: end_moments(findings, response),
         }),
         unit: findings.frame().report_units().moment(),

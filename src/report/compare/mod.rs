@@ -59,7 +59,7 @@ impl Findings<'_> {
             Sentence::default().strong(words::capital(&methods.join(", "))).then(format!(": {text}."))
         };
         let warnings = self.warnings.iter().map(|warning| say(words::capital(warning) + "."));
-        let flags = summary::quick_errors(self.comparison).filter_map(|(method, errors)| {
+        let flags = self.comparison.quick_errors().filter_map(|(method, errors)| {
             words::flags(&words::capital(&words::method_name(self.comparison, method)), errors)
         });
         let reasons = reasons.into_iter().map(sentence);
@@ -118,14 +118,15 @@ fn feet_table(comparison: &Comparison) -> Option<TableBlock> {
     (!comparison.feet.is_empty()).then(|| summary::judged(table, comparison))
 }
 
-fn comparison_name(comparison: &Comparison, method: &str) -> String {
-    words::method_name(comparison, method)
-}
-
 /// One card per verdict on `subject`, methods that repeat another left out.
 fn verdict_cards(report: &mut Document, findings: &Findings, subject: Subject) {
     let comparison = findings.comparison;
-    for verdict in comparison.ranked(subject).into_iter().filter(|verdict| words::own(comparison, verdict)) {
+    let verdicts: Vec<_> =
+        comparison.ranked(subject).into_iter().filter(|verdict| words::own(comparison, verdict)).collect();
+    if verdicts.is_empty() {
+        report.paragraph("Nothing to judge: the exact values are zero.");
+    }
+    for verdict in verdicts {
         let sentence = words::verdict(comparison, verdict, findings.frame().report_units());
         report.verdict_in_words(words::mark(verdict.state), words::word(verdict.state), sentence);
     }

@@ -2,10 +2,10 @@
 
 use super::charts::ELEVATION;
 use super::summary::{READING, Shown, by_storey, judged, percent_cell, short_name};
-use super::{Findings, comparison_name, feet_table, sheet, sizes, verdict_cards, words};
+use super::{Findings, feet_table, sheet, sizes, verdict_cards, words};
 use crate::compare::verdict::{Extreme, Subject, Verdict};
 use crate::compare::{Comparison, Quick};
-use crate::frame::Feet;
+use crate::frame::{Feet, MemberKind};
 use crate::report::number::{Form, decimals, signed_percent, significant};
 use crate::report::{Document, Figure, Record, Sentence, State, TableBlock, TableCell, say};
 use crate::response::statics::{Law, Statics};
@@ -62,7 +62,7 @@ fn ranking(findings: &Findings) -> TableBlock {
     }
     for quick in own_methods(comparison) {
         let id = quick.entry.info.id;
-        let mut cells = vec![TableCell::from(comparison_name(comparison, id))];
+        let mut cells = vec![TableCell::from(words::method_name(comparison, id))];
         for subject in Subject::ALL {
             let found = comparison.verdicts.iter().find(|verdict| verdict.method == id && verdict.subject == subject);
             let row = |verdict: &Verdict| extremes(comparison.options.tolerance, verdict);
@@ -178,9 +178,9 @@ fn storeys(report: &mut Document, findings: &Findings) {
 fn drift_table(findings: &Findings) -> Option<TableBlock> {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     let unit = Quantity::Drift.unit(frame.report_units());
-    comparison.reference().movement(0)?;
+    comparison.reference.movement(0)?;
     let mut table = TableBlock::new("drift", "Storey drift and sway of the exact analyses").name("storey");
-    for response in &comparison.exact {
+    for response in comparison.exact() {
         table = table.under(response.method).number("drift", unit.symbol, 3).text("height / drift").number(
             "sway",
             unit.symbol,
@@ -189,7 +189,7 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
     }
     for storey in (0..frame.storeys()).rev() {
         let mut cells = vec![TableCell::from((storey + 1).to_string())];
-        for response in &comparison.exact {
+        for response in comparison.exact() {
             let Some(movement) = response.movement(storey) else { continue };
             let ratio = frame.storey_height(storey) / movement.drift.abs();
             cells.extend([
@@ -219,7 +219,7 @@ fn statics(report: &mut Document, findings: &Findings) {
     report.verdict_in_words(state, word, say(text).refer("equilibrium").then("."));
     report.table(equilibrium(findings));
     for (method, statics) in &comparison.statics {
-        let name = words::capital(&comparison_name(comparison, method));
+        let name = words::capital(&words::method_name(comparison, method));
         report.details(format!("Storey sums: {name}"), |inner| {
             inner.table(storey_sums(findings, method, statics));
         });
@@ -250,7 +250,7 @@ fn equilibrium(findings: &Findings) -> TableBlock {
 fn storey_sums(findings: &Findings, method: &str, statics: &Statics) -> TableBlock {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     let (force, moment) = (frame.report_units().force(), frame.report_units().moment());
-    let caption = format!("Storey sums, {}", comparison_name(comparison, method));
+    let caption = format!("Storey sums, {}", words::method_name(comparison, method));
     let mut table = TableBlock::new(format!("statics-{method}"), caption.as_str())
         .name("storey")
         .under("shear")
@@ -356,12 +356,12 @@ fn assumptions(findings: &Findings) -> Vec<Sentence> {
         say("Places: ground, second, middle, below the top and top storey, by end and interior; in low frames ground \
              wins, then the top, then the second."),
     ];
-    list.extend(comparison.exact.iter().filter_map(|response: &Response| {
+    list.extend(comparison.exact().filter_map(|response: &Response| {
         let residual = Form::Significant(2).show(response.residual()?);
-        Some(say(format!("{}: relative residual {residual}.", comparison_name(comparison, response.method))))
+        Some(say(format!("{}: relative residual {residual}.", words::method_name(comparison, response.method))))
     }));
-    if let [first, second] = &comparison.exact[..] {
-        list.extend(strain_effect(findings, first, second));
+    if let Some(other) = &comparison.other_exact {
+        list.extend(strain_effect(findings, &comparison.reference, other));
     }
     list
 }
@@ -369,8 +369,9 @@ fn assumptions(findings: &Findings) -> Vec<Sentence> {
 /// How far the two exact analyses lie apart.
 fn strain_effect(findings: &Findings, first: &Response, second: &Response) -> Option<Sentence> {
     let (_, errors) = findings.comparison.errors.iter().find(|(method, _)| *method == second.method)?;
-    let of_columns =
-        errors.iter().filter(|error| error.quantity == Quantity::DesignMoment && error.member.kind() == "column");
+    let of_columns = errors
+        .iter()
+        .filter(|error| error.quantity == Quantity::DesignMoment && error.member.kind() == MemberKind::Column);
     let farthest = of_columns
         .filter_map(|error| Some((error, error.storey_error_percent?)))
         .max_by(|a, b| a.1.abs().total_cmp(&b.1.abs()))?;

@@ -1,7 +1,7 @@
 //! Hand calculations as blocks of the page.
 
 use crate::report::{Align, Column, Document, Form, TableBlock, TableCell};
-use crate::response::{Amount, Cell, Step, Worksheet};
+use crate::response::{Amount, SheetCell, Step, Worksheet};
 use crate::units::{ReportUnits, Unit};
 
 /// A number under this share of the largest of its kind is what rounding leaves of a zero.
@@ -37,9 +37,9 @@ fn table(key: &str, step: &Step, units: ReportUnits) -> TableBlock {
     for row in &step.rows {
         let cells = row.iter().zip(step.columns.iter().zip(&largest));
         table.row(cells.map(|(cell, (column, largest))| match cell {
-            Cell::Name(name) => TableCell::from(name.as_str()),
-            Cell::Number(value) => unit(column.amount, units).from_si(tidy(*value, *largest)).into(),
-            Cell::Blank => TableCell::blank(),
+            SheetCell::Name(name) => TableCell::from(name.as_str()),
+            SheetCell::Number(value) => unit(column.amount, units).from_si(tidy(*value, *largest)).into(),
+            SheetCell::Blank => TableCell::blank(),
         }));
     }
     table
@@ -49,7 +49,7 @@ fn table(key: &str, step: &Step, units: ReportUnits) -> TableBlock {
 fn largest(step: &Step, amount: Amount) -> f64 {
     let numbers = step.rows.iter().flat_map(|row| row.iter().zip(&step.columns));
     let of_kind = numbers.filter(|(_, column)| column.amount == amount).map(|(cell, _)| match cell {
-        Cell::Number(value) => value.abs(),
+        SheetCell::Number(value) => value.abs(),
         _ => 0.0,
     });
     of_kind.fold(0.0, f64::max)

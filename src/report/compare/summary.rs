@@ -3,9 +3,9 @@
 use super::words;
 use crate::compare::Comparison;
 use crate::compare::errors::ValueError;
-use crate::compare::places::{Class, Kind};
+use crate::compare::places::Class;
 use crate::compare::verdict::Subject;
-use crate::frame::Frame;
+use crate::frame::{Frame, MemberKind};
 use crate::report::number::Form;
 use crate::report::{State, TableBlock, TableCell, say};
 use crate::response::Quantity;
@@ -22,28 +22,28 @@ pub(super) const READING: &str = "Errors are in percent of the storey's largest 
 pub(super) struct Shown {
     /// What it is called.
     pub name: &'static str,
-    kind: Kind,
+    kind: MemberKind,
     quantity: Quantity,
 }
 
 impl Shown {
     /// Moments at the column feet: foundations and splices go by them.
     pub(super) const FOOT_MOMENTS: Self =
-        Self { name: "column foot moments", kind: Kind::Columns, quantity: Quantity::MomentFoot };
+        Self { name: "column foot moments", kind: MemberKind::Column, quantity: Quantity::MomentFoot };
     /// Moments at the column heads.
     pub(super) const HEAD_MOMENTS: Self =
-        Self { name: "column head moments", kind: Kind::Columns, quantity: Quantity::MomentHead };
+        Self { name: "column head moments", kind: MemberKind::Column, quantity: Quantity::MomentHead };
     /// Column axial forces.
-    pub(super) const AXIAL: Self = Self { name: "column axial forces", kind: Kind::Columns, quantity: Quantity::Axial };
+    pub(super) const AXIAL: Self =
+        Self { name: "column axial forces", kind: MemberKind::Column, quantity: Quantity::Axial };
 
     /// What a verdict is about.
     pub(super) fn subject(subject: Subject) -> Self {
-        let kind = if subject == Subject::BeamMoments { Kind::Beams } else { Kind::Columns };
-        Self { name: subject.name(), kind, quantity: subject.quantity() }
+        Self { name: subject.name(), kind: subject.kind(), quantity: subject.quantity() }
     }
 
     fn is_of_beams(self) -> bool {
-        self.kind == Kind::Beams
+        self.kind == MemberKind::Beam
     }
 
     fn class_head(self, class: Class) -> &'static str {
@@ -100,14 +100,14 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, mo
     let classes = shown.classes(frame);
     for class in &classes {
         table = table.under(shown.class_head(*class)).number("exact", unit.symbol, 3);
-        table = quick_errors(comparison).fold(table, |table, (method, _)| table.percent(short_name(method), 0));
+        table = comparison.quick_errors().fold(table, |table, (method, _)| table.percent(short_name(method), 0));
     }
     for group in groups(frame.storeys(), most).iter().rev() {
         let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), shown.is_of_beams()))];
         for class in &classes {
             let mut exact = None;
             let mut errors = Vec::new();
-            for (_, set) in quick_errors(comparison) {
+            for (_, set) in comparison.quick_errors() {
                 let found: Vec<_> = set.iter().filter(|error| shown.holds(error, *class, group)).collect();
                 exact = found.iter().map(|error| error.exact.abs()).reduce(f64::max).or(exact);
                 errors.push(telling(&found, comparison.options.tolerance));
@@ -118,12 +118,6 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, mo
         table.row(cells);
     }
     judged(table, comparison)
-}
-
-/// The error sets of the quick methods.
-pub(super) fn quick_errors(comparison: &Comparison) -> impl Iterator<Item = (&'static str, &Vec<ValueError>)> {
-    let is_quick = |method: &str| comparison.quick.iter().any(|quick| quick.entry.info.id == method);
-    comparison.errors.iter().filter(move |(method, _)| is_quick(method)).map(|(method, errors)| (*method, errors))
 }
 
 /// Name of a method over a narrow column.

@@ -43,7 +43,7 @@ fn values(frame: &Frame, comparison: &Comparison, units: ReportUnits) -> Table {
             let unit = value.quantity.unit(units);
             [
                 Cell::from(method),
-                value.member.kind().into(),
+                value.member.kind().id().into(),
                 (value.member.storey() + 1).into(),
                 value.member.at().into(),
                 value.quantity.id().into(),
@@ -72,14 +72,14 @@ fn errors(comparison: &Comparison, units: ReportUnits) -> Table {
         info("factor", "|exact| / |quick|: what the method's value must be multiplied by"),
         info("flag", "near-zero, zero, weak, sign: reasons to read the row with care"),
     ];
-    let reference = comparison.reference().method;
+    let reference = comparison.reference.method;
     let row = |method: &'static str, error: &ValueError| {
         let unit = error.quantity.unit(units);
         let flags: Vec<_> = error.flags.iter().map(|flag| flag.id()).collect();
         [
             Cell::from(method),
             reference.into(),
-            error.member.kind().into(),
+            error.member.kind().id().into(),
             (error.member.storey() + 1).into(),
             error.member.at().into(),
             error.quantity.id().into(),
@@ -123,7 +123,7 @@ fn verdicts(comparison: &Comparison) -> Table {
         let [band, class, members, state] = place;
         [
             Cell::from(verdict.method),
-            verdict.subject.member().into(),
+            verdict.subject.kind().id().into(),
             verdict.subject.quantity().id().into(),
             band,
             class,
@@ -167,7 +167,7 @@ fn feet(comparison: &Comparison) -> Table {
     let rows = comparison.feet.iter().map(|line| {
         [
             Cell::from(line.method),
-            line.subject.member().into(),
+            line.subject.kind().id().into(),
             line.subject.quantity().id().into(),
             line.fixed.into(),
             line.sprung[0].into(),
@@ -187,7 +187,7 @@ fn methods(comparison: &Comparison) -> Table {
         info("residual", "relative residual of the solved equations; blank for quick methods"),
         info("source", "where the method was published"),
     ];
-    let exact = comparison.exact.iter().map(|response| {
+    let exact = comparison.exact().map(|response| {
         let source = "equations of equilibrium, solved";
         [
             Cell::from(response.method),
@@ -275,7 +275,7 @@ fn equilibrium(comparison: &Comparison, units: ReportUnits) -> Table {
         Some([
             Cell::from(method),
             law.name().into(),
-            worst.member.kind().into(),
+            worst.member.kind().id().into(),
             (worst.member.storey() + 1).into(),
             worst.member.at().into(),
             unit.from_si(worst.sum).into(),

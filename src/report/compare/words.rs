@@ -3,12 +3,12 @@
 use crate::compare::Comparison;
 use crate::compare::errors::{Flag, ValueError};
 use crate::compare::places::{Class, Place};
-use crate::compare::verdict::{Extreme, State as Standing, Subject, Verdict};
+use crate::compare::verdict::{Extreme, Standing, Subject, Verdict};
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
-use crate::frame::{Feet, Frame, SizeSource};
+use crate::frame::{Feet, Frame, Member, SizeSource};
 use crate::report::number::{NO_BREAK, quantity, rounded_up, signed_percent};
 use crate::report::{Sentence, State, say};
-use crate::response::{Member, Quantity};
+use crate::response::Quantity;
 use crate::units::{ReportUnits, Unit};
 
 /// A number in N, m as three significant figures and its unit.
@@ -100,7 +100,7 @@ pub(super) fn outline(frame: &Frame) -> String {
 
 /// What errors are measured by, and what that leaves out.
 pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
-    let reference = comparison.reference();
+    let reference = &comparison.reference;
     let mut sentence = say("Errors are measured by ").strong(method_name(comparison, reference.method)).then(
         ", in percent of the largest exact value of the same storey (at least 5 % of the frame's largest). \
          Negative is short: the unsafe side for strength. A member that carries less than the largest can be short of \

@@ -17,7 +17,7 @@ const MANY_MEMBERS: usize = 3000;
 
 /// What is known of one member.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub enum Cell {
+pub enum Shade {
     /// Signed error in percent of the storey's reference; negative is short.
     Error(f64),
     /// The exact value is near zero, so that its error says little.
@@ -30,7 +30,7 @@ pub enum Cell {
 ///
 /// # Assumptions
 /// Columns stand storey by storey from the ground, within a storey from line A; beams floor by floor, within a floor
-/// from the left. Cells that are absent count as [`Cell::Missing`].
+/// from the left. Cells that are absent count as [`Shade::Missing`].
 #[derive(Debug, Clone, PartialEq)]
 pub struct Elevation {
     /// What the figure shows, in a few words.
@@ -40,9 +40,9 @@ pub struct Elevation {
     /// The frame.
     pub grid: Grid,
     /// `storeys x (bays + 1)` cells.
-    pub columns: Vec<Cell>,
+    pub columns: Vec<Shade>,
     /// `storeys x bays` cells.
-    pub beams: Vec<Cell>,
+    pub beams: Vec<Shade>,
     /// Percentage at the ends of the colour bar, the same for figures that are compared; see [`colour_limit`].
     pub limit: f64,
     /// What the percentage is, such as `error of the design moment, % of the storey's largest`.
@@ -102,11 +102,11 @@ enum Paint {
 }
 
 impl Elevation {
-    fn column(&self, storey: usize, line: usize) -> Cell {
+    fn column(&self, storey: usize, line: usize) -> Shade {
         cell(&self.columns, storey * self.grid.lines() + line)
     }
 
-    fn beam(&self, floor: usize, bay: usize) -> Cell {
+    fn beam(&self, floor: usize, bay: usize) -> Shade {
         cell(&self.beams, floor * self.grid.bays.len() + bay)
     }
 
@@ -114,15 +114,15 @@ impl Elevation {
         (self.grid.members() > MANY_MEMBERS).then_some(20.0)
     }
 
-    fn paint(&self, cell: Cell) -> Paint {
+    fn paint(&self, cell: Shade) -> Paint {
         match cell {
-            Cell::Error(error) => {
+            Shade::Error(error) => {
                 let share = error / self.limit.max(1e-9);
                 let share = self.steps().map_or(share, |steps| (share * steps).round() / steps);
                 Paint::Shade(signed_colour(share))
             }
-            Cell::NearZero => Paint::Hatch,
-            Cell::Missing => Paint::Blank,
+            Shade::NearZero => Paint::Hatch,
+            Shade::Missing => Paint::Blank,
         }
     }
 
@@ -130,7 +130,7 @@ impl Elevation {
         let left = bars.column / 2.0;
         let joint = if bars.outlined { bars.beam / 2.0 } else { 0.0 };
         for (line, x) in plan.x.iter().enumerate() {
-            let cells: Vec<Cell> = (0..self.grid.storeys.len()).map(|storey| self.column(storey, line)).collect();
+            let cells: Vec<Shade> = (0..self.grid.storeys.len()).map(|storey| self.column(storey, line)).collect();
             for (first, last, paint) in self.runs(&cells) {
                 let foot = if first == 0 { plan.ground() } else { plan.y[first] - joint };
                 let head = plan.y[last + 1] + joint;
@@ -145,7 +145,7 @@ impl Elevation {
     fn draw_beams(&self, canvas: &mut Canvas, plan: &Plan, bars: Bars) {
         for floor in 0..self.grid.storeys.len() {
             let top = plan.y[floor + 1] - bars.beam / 2.0;
-            let cells: Vec<Cell> = (0..self.grid.bays.len()).map(|bay| self.beam(floor, bay)).collect();
+            let cells: Vec<Shade> = (0..self.grid.bays.len()).map(|bay| self.beam(floor, bay)).collect();
             for (first, last, paint) in self.runs(&cells) {
                 let start = plan.x[first] + bars.column / 2.0;
                 let size = (plan.x[last + 1] - bars.column / 2.0 - start, bars.beam);
@@ -158,7 +158,7 @@ impl Elevation {
     }
 
     /// First and last of each run of bars painted alike; single bars unless the frame is very large.
-    fn runs(&self, cells: &[Cell]) -> Vec<(usize, usize, Paint)> {
+    fn runs(&self, cells: &[Shade]) -> Vec<(usize, usize, Paint)> {
         let mut runs: Vec<(usize, usize, Paint)> = Vec::new();
         for (at, cell) in cells.iter().enumerate() {
             let paint = self.paint(*cell);
@@ -170,22 +170,22 @@ impl Elevation {
         runs
     }
 
-    fn cells(&self) -> impl Iterator<Item = Cell> + '_ {
+    fn cells(&self) -> impl Iterator<Item = Shade> + '_ {
         let (storeys, bays) = (self.grid.storeys.len(), self.grid.bays.len());
         let columns = (0..storeys * (bays + 1)).map(|at| cell(&self.columns, at));
         columns.chain((0..storeys * bays).map(|at| cell(&self.beams, at)))
     }
 
     fn key(&self, canvas: &mut Canvas, plan: &Plan, y: f64) -> f64 {
-        let errors = || self.cells().filter_map(|cell| if let Cell::Error(error) = cell { Some(error) } else { None });
+        let errors = || self.cells().filter_map(|cell| if let Shade::Error(error) = cell { Some(error) } else { None });
         let beyond = (errors().any(|error| error < -self.limit), errors().any(|error| error > self.limit));
         let middle = plan.width / 2.0;
         let room = plan.width - 2.0 * MARGIN;
         let mut y = colour_bar(canvas, &self.measure, (middle, y), room, (self.limit, beyond));
         let left = middle - room.min(320.0) / 2.0;
         let swatches = [
-            (Cell::NearZero, Paint::Hatch, "near zero: under a tenth of the storey's reference"),
-            (Cell::Missing, Paint::Blank, "no value"),
+            (Shade::NearZero, Paint::Hatch, "near zero: under a tenth of the storey's reference"),
+            (Shade::Missing, Paint::Blank, "no value"),
         ];
         let bars = Bars { column: 14.0, beam: 14.0, outlined: true };
         for (kind, paint, words) in swatches {
@@ -198,7 +198,7 @@ impl Elevation {
     }
 
     fn note_missing(&self, canvas: &mut Canvas) {
-        let missing = self.cells().filter(|cell| *cell == Cell::Missing).count();
+        let missing = self.cells().filter(|cell| *cell == Shade::Missing).count();
         if missing > 0 {
             let members = if missing == 1 { "member has" } else { "members have" };
             canvas.note(format!("{missing} {members} no finite error and stay white."));
@@ -207,11 +207,11 @@ impl Elevation {
 }
 
 /// The cell at `at`; an error that is not finite is missing.
-fn cell(cells: &[Cell], at: usize) -> Cell {
+fn cell(cells: &[Shade], at: usize) -> Shade {
     match cells.get(at) {
-        Some(Cell::Error(error)) if !error.is_finite() => Cell::Missing,
+        Some(Shade::Error(error)) if !error.is_finite() => Shade::Missing,
         Some(cell) => *cell,
-        None => Cell::Missing,
+        None => Shade::Missing,
     }
 }
 
@@ -242,8 +242,8 @@ fn zigzag((x, y): Point, (width, height): Point) -> Vec<Point> {
 }
 
 /// Prints the percentage on its bar where it fits, turned where only that fits.
-fn label(canvas: &mut Canvas, corner: Point, size: Point, cell: Cell, paint: Paint) {
-    let (Cell::Error(error), Paint::Shade(colour)) = (cell, paint) else { return };
+fn label(canvas: &mut Canvas, corner: Point, size: Point, cell: Shade, paint: Paint) {
+    let (Shade::Error(error), Paint::Shade(colour)) = (cell, paint) else { return };
     let words = percent(error);
     let long = text_width(&words, SMALL, false) + 4.0;
     let high = SMALL + 1.0;

@@ -28,7 +28,7 @@ mod spread;
 mod svg;
 
 pub use colour::{Colour, INK, SERIES, contrast_on_white, signed_colour};
-pub use elevation::{Cell, Elevation, colour_limit};
+pub use elevation::{Elevation, Shade, colour_limit};
 pub use font::text_width;
 pub use grid::{FootKind, Grid};
 pub use look::{EXACT_METHODS, Look, Marker, QUICK_METHODS, look};
