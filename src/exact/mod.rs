@@ -1,5 +1,8 @@
 //! Exact linear elastic analyses of plain frames: two independent assemblies, one solver.
 
+mod bar;
+mod model;
+pub mod second_order;
 pub mod slope_deflection;
 pub mod stiffness;
 
@@ -35,6 +38,22 @@ pub enum Unsolvable {
         /// Column line of the joint.
         line: String,
     },
+    /// Gravity makes the frame buckle sideways.
+    #[error(
+        "the frame buckles under its gravity loads: multiplied by {factor:.3} they make storey {storey} sway without limit; stiffen the frame or correct the loads"
+    )]
+    Buckles {
+        /// Critical load factor of the gravity loads, at most 1.
+        factor: f64,
+        /// The lowest storey of the sway mode.
+        storey: usize,
+    },
+    /// The sway does not settle: lateral load and gravity together are too much.
+    #[error("the second-order sway does not settle after {iterations} rounds: the frame is too close to buckling")]
+    Unsettled {
+        /// Rounds of solution taken.
+        iterations: usize,
+    },
     /// The equations were solved too inaccurately to be used.
     #[error(
         "the solution misses equilibrium by {residual:.1e} of the frame's largest values (at most {LARGEST_RESIDUAL:.0e} is accepted): member stiffnesses differ too widely"
@@ -45,10 +64,10 @@ pub enum Unsolvable {
     },
 }
 
-/// `Ok` where a response closes: by the residual of its equations, and by statics, which see the same from outside.
-fn accept(frame: &Frame, response: Response) -> Result<Response, Unsolvable> {
+/// `Ok` where a response closes, in the deformed position where `gravity` is given per floor and line: by the residual of its equations, and by statics, which see the same from outside.
+fn accept(frame: &Frame, response: Response, gravity: Option<&[f64]>) -> Result<Response, Unsolvable> {
     let residual = response.residual().unwrap_or(f64::INFINITY);
-    let statics = statics::check(frame, &response);
+    let statics = statics::check_deformed(frame, &response, gravity);
     if residual <= LARGEST_RESIDUAL && statics.closes() {
         return Ok(response);
     }

@@ -31,7 +31,7 @@ pub fn analyse(frame: &Frame) -> Result<Response, Unsolvable> {
     let solution = assemble(frame, levels).solve().map_err(|singular| mechanism(frame, levels, &singular))?;
     let forces = recover(frame, levels, &solution);
     let response = Response::from_forces(ID, frame, &forces).with_residual(solution.residual);
-    let response = accept(frame, response)?;
+    let response = accept(frame, response, None)?;
     if !frame.has_real_stiffness() {
         return Ok(response);
     }

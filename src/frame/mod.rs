@@ -6,6 +6,7 @@ mod fault;
 pub mod file;
 mod member;
 mod names;
+pub mod options;
 pub mod sizes;
 pub mod template;
 

@@ -15,5 +15,5 @@ pub use forces::{Forces, Work, axial_from_beam_shears};
 pub use members::Members;
 pub use method::{Caution, Entry, Fit, Gives, Info, Method};
 pub use quantity::{Quantity, Value};
-pub use single::{BeamForces, ColumnForces, Movement, Response};
+pub use single::{BeamForces, ColumnForces, Faces, Movement, Response};
 pub use worksheet::{Amount, SheetCell, SheetColumn, Step, Worksheet};

@@ -20,6 +20,16 @@ pub enum Quantity {
     Axial,
     /// The larger of a member's two end moments, without sign.
     DesignMoment,
+    /// Moment at the foot of a column, at the face of the rigid zone.
+    MomentFootFace,
+    /// Moment at the head of a column, at the face of the rigid zone.
+    MomentHeadFace,
+    /// Moment at the left end of a beam, at the face of the rigid zone.
+    MomentLeftFace,
+    /// Moment at the right end of a beam, at the face of the rigid zone.
+    MomentRightFace,
+    /// The larger of a member's two face moments, without sign.
+    DesignMomentFace,
     /// Movement of a floor relative to the floor below.
     Drift,
     /// Movement of a floor relative to the ground.
@@ -37,6 +47,11 @@ impl Quantity {
             Self::Shear => "shear",
             Self::Axial => "axial",
             Self::DesignMoment => "design_moment",
+            Self::MomentFootFace => "moment_foot_face",
+            Self::MomentHeadFace => "moment_head_face",
+            Self::MomentLeftFace => "moment_left_face",
+            Self::MomentRightFace => "moment_right_face",
+            Self::DesignMomentFace => "design_moment_face",
             Self::Drift => "drift",
             Self::Sway => "sway",
         }
@@ -45,11 +60,9 @@ impl Quantity {
     /// Unit in files and reports.
     pub fn unit(self, units: ReportUnits) -> Unit {
         match self {
-            Self::MomentFoot | Self::MomentHead | Self::MomentLeft | Self::MomentRight | Self::DesignMoment => {
-                units.moment()
-            }
             Self::Shear | Self::Axial => units.force(),
             Self::Drift | Self::Sway => units.movement(),
+            _ => units.moment(),
         }
     }
 }
@@ -71,31 +84,10 @@ impl super::Response {
         let mut values = Vec::new();
         let with_forces = if self.has_forces() { frame.storeys() } else { 0 };
         for storey in 0..with_forces {
-            for line in 0..frame.lines() {
-                let member = Member::Column { storey, line };
-                let column = self.column(storey, line);
-                let numbers = [
-                    (Quantity::MomentFoot, column.foot),
-                    (Quantity::MomentHead, column.head),
-                    (Quantity::Shear, column.shear),
-                    (Quantity::Axial, column.axial),
-                    (Quantity::DesignMoment, column.design_moment()),
-                ];
-                values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
-            }
+            (0..frame.lines()).for_each(|line| self.push_column(&mut values, storey, line));
         }
         for floor in 0..with_forces {
-            for bay in 0..frame.bays() {
-                let member = Member::Beam { floor, bay };
-                let beam = self.beam(floor, bay);
-                let numbers = [
-                    (Quantity::MomentLeft, beam.left),
-                    (Quantity::MomentRight, beam.right),
-                    (Quantity::Shear, beam.shear),
-                    (Quantity::DesignMoment, beam.design_moment()),
-                ];
-                values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
-            }
+            (0..frame.bays()).for_each(|bay| self.push_beam(&mut values, floor, bay));
         }
         for storey in 0..frame.storeys() {
             let member = Member::Storey { storey };
@@ -109,4 +101,39 @@ impl super::Response {
         }
         values
     }
+
+    fn push_column(&self, values: &mut Vec<Value>, storey: usize, line: usize) {
+        let (member, column) = (Member::Column { storey, line }, self.column(storey, line));
+        let numbers = [
+            (Quantity::MomentFoot, column.foot),
+            (Quantity::MomentHead, column.head),
+            (Quantity::Shear, column.shear),
+            (Quantity::Axial, column.axial),
+            (Quantity::DesignMoment, column.design_moment()),
+        ];
+        values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
+        if let Some(face) = self.column_face(storey, line) {
+            values.extend(face_values(member, [Quantity::MomentFootFace, Quantity::MomentHeadFace], face));
+        }
+    }
+
+    fn push_beam(&self, values: &mut Vec<Value>, floor: usize, bay: usize) {
+        let (member, beam) = (Member::Beam { floor, bay }, self.beam(floor, bay));
+        let numbers = [
+            (Quantity::MomentLeft, beam.left),
+            (Quantity::MomentRight, beam.right),
+            (Quantity::Shear, beam.shear),
+            (Quantity::DesignMoment, beam.design_moment()),
+        ];
+        values.extend(numbers.map(|(quantity, value)| Value { member, quantity, value }));
+        if let Some(face) = self.beam_face(floor, bay) {
+            values.extend(face_values(member, [Quantity::MomentLeftFace, Quantity::MomentRightFace], face));
+        }
+    }
+}
+
+fn face_values(member: Member, quantities: [Quantity; 2], face: [f64; 2]) -> [Value; 3] {
+    let design = face[0].abs().max(face[1].abs());
+    let numbers = [(quantities[0], face[0]), (quantities[1], face[1]), (Quantity::DesignMomentFace, design)];
+    numbers.map(|(quantity, value)| Value { member, quantity, value })
 }

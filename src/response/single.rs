@@ -50,6 +50,15 @@ pub struct Movement {
     pub sway: f64,
 }
 
+/// Moments at the faces of rigid zones, N m, clockwise on the flexible part's end positive; stored like the members.
+#[derive(Debug, Clone, PartialEq, Default)]
+pub struct Faces {
+    /// Foot and head of each column.
+    pub columns: Vec<[f64; 2]>,
+    /// Left and right end of each beam.
+    pub beams: Vec<[f64; 2]>,
+}
+
 /// The answer of one method for one frame, exact or quick.
 ///
 /// # Panics
@@ -63,6 +72,7 @@ pub struct Response {
     beams: Vec<BeamForces>,
     movements: Option<Vec<Movement>>,
     residual: Option<f64>,
+    faces: Option<Faces>,
 }
 
 impl Response {
@@ -80,19 +90,23 @@ impl Response {
             let (left, right) = (forces.beam_left[index][0], forces.beam_right[index][0]);
             BeamForces { left, right, shear: (left + right) / frame.bay_width(index % frame.bays()) }
         };
-        Self {
-            method,
-            lines: frame.lines(),
-            columns: (0..forces.column_foot.len()).map(column).collect(),
-            beams: (0..forces.beam_left.len()).map(beam).collect(),
-            movements: None,
-            residual: None,
-        }
+        let columns = (0..forces.column_foot.len()).map(column).collect();
+        Self::from_members(method, frame, columns, (0..forces.beam_left.len()).map(beam).collect())
+    }
+
+    /// Makes the answer of a method from member forces, stored like [`crate::frame::FrameParts`].
+    pub fn from_members(
+        method: &'static str,
+        frame: &Frame,
+        columns: Vec<ColumnForces>,
+        beams: Vec<BeamForces>,
+    ) -> Self {
+        Self { method, lines: frame.lines(), columns, beams, movements: None, residual: None, faces: None }
     }
 
     /// The answer of a method that states no member forces.
     pub fn without_forces(method: &'static str, frame: &Frame) -> Self {
-        Self { method, lines: frame.lines(), columns: Vec::new(), beams: Vec::new(), movements: None, residual: None }
+        Self::from_members(method, frame, Vec::new(), Vec::new())
     }
 
     /// Whether the answer states member forces; where not, the accessors of columns and beams panic.
@@ -108,6 +122,44 @@ impl Response {
         };
         self.movements = Some(drifts.iter().scan(0.0, movement).collect());
         self
+    }
+
+    /// Adds the moments at the faces of rigid zones.
+    pub fn with_faces(mut self, faces: Faces) -> Self {
+        self.faces = Some(faces);
+        self
+    }
+
+    /// Adds the moments at the faces of rigid zones of these lengths (m), by statics: moments are straight lines.
+    ///
+    /// # Formula
+    /// M_face = M_end - (sum of both end moments) x zone / length.
+    pub fn with_zones(self, frame: &Frame, columns: &[[f64; 2]], beams: &[[f64; 2]]) -> Self {
+        let face = |ends: [f64; 2], zones: [f64; 2], length: f64| {
+            let slope = (ends[0] + ends[1]) / length;
+            [ends[0] - slope * zones[0], ends[1] - slope * zones[1]]
+        };
+        let column = |(index, column): (usize, &ColumnForces)| {
+            face([column.foot, column.head], columns[index], frame.storey_height(index / frame.lines()))
+        };
+        let beam = |(index, beam): (usize, &BeamForces)| {
+            face([beam.left, beam.right], beams[index], frame.bay_width(index % frame.bays()))
+        };
+        let faces = Faces {
+            columns: self.columns.iter().enumerate().map(column).collect(),
+            beams: self.beams.iter().enumerate().map(beam).collect(),
+        };
+        self.with_faces(faces)
+    }
+
+    /// Moments at foot and head of a column at the faces of its rigid zones, where zones are given.
+    pub fn column_face(&self, storey: usize, line: usize) -> Option<[f64; 2]> {
+        self.faces.as_ref().map(|faces| faces.columns[storey * self.lines + line])
+    }
+
+    /// Moments at the ends of a beam at the faces of its rigid zones, where zones are given.
+    pub fn beam_face(&self, floor: usize, bay: usize) -> Option<[f64; 2]> {
+        self.faces.as_ref().map(|faces| faces.beams[floor * (self.lines - 1) + bay])
     }
 
     /// Adds the relative residual of the equations the answer solves.

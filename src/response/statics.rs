@@ -125,6 +125,26 @@ impl Statics {
 /// # Units
 /// N, N m; relative imbalances have none.
 pub fn check(frame: &Frame, response: &Response) -> Statics {
+    check_deformed(frame, response, None)
+}
+
+/// Checks the equilibrium of `response` on `frame` in the deformed position under `gravity`, given per floor and line
+/// from the lowest floor and line A; without gravity, the same as [`check`].
+///
+/// # Formula
+/// As [`check`], with column shear V h + M_foot + M_head - (N - G) drift = 0 for the gravity G of a column, and the gravity
+/// W of each floor above a cut times its sway relative to the cut in the overturning moment. Axial forces of the response
+/// are those of the lateral load alone.
+///
+/// # Units
+/// N, N m; relative imbalances have none.
+pub fn check_deformed(frame: &Frame, response: &Response, gravity: Option<&[f64]>) -> Statics {
+    let sway = |floor: usize| response.movement(floor).map_or(0.0, |movement| movement.sway);
+    let floor_gravity =
+        |floor: usize| gravity.map_or(0.0, |loads| loads[floor * frame.lines()..][..frame.lines()].iter().sum::<f64>());
+    let column_gravity = |storey: usize, line: usize| {
+        gravity.map_or(0.0, |loads| (storey..frame.storeys()).map(|floor| loads[floor * frame.lines() + line]).sum())
+    };
     let scale = Scale::of(frame, response);
     let mut imbalances = Vec::new();
     let mut add = |law, member, sum: f64, scale: f64| {
@@ -133,7 +153,10 @@ pub fn check(frame: &Frame, response: &Response) -> Statics {
     };
     let mut storeys = Vec::new();
     for storey in 0..frame.storeys() {
-        let sums = storey_sums(frame, response, storey);
+        let mut sums = storey_sums(frame, response, storey);
+        let base_sway = if storey == 0 { 0.0 } else { sway(storey - 1) };
+        let leaning = (storey..frame.storeys()).map(|floor| floor_gravity(floor) * (sway(floor) - base_sway));
+        sums.overturning_applied += leaning.sum::<f64>();
         let whole = Member::Storey { storey };
         add(Law::StoreyShears, whole, sums.shear_found - sums.shear_applied, scale.shear);
         add(Law::StoreyVertical, whole, sums.axial_sum, scale.vertical);
@@ -142,7 +165,12 @@ pub fn check(frame: &Frame, response: &Response) -> Statics {
         for line in 0..frame.lines() {
             let joint = Member::Column { storey, line };
             let column = response.column(storey, line);
-            let member = column.shear * frame.storey_height(storey) + column.foot + column.head;
+            let drift = response.movement(storey).map_or(0.0, |movement| movement.drift);
+            let leaning = match gravity {
+                Some(_) => (column.axial - column_gravity(storey, line)) * drift,
+                None => 0.0,
+            };
+            let member = column.shear * frame.storey_height(storey) + column.foot + column.head - leaning;
             add(Law::JointMoments, joint, joint_moment(frame, response, storey, line), scale.moment);
             add(Law::JointVertical, joint, joint_vertical(frame, response, storey, line), scale.vertical);
             add(Law::MemberShears, joint, member, scale.moment);

@@ -97,6 +97,11 @@ impl BlockTridiagonal {
         Ok(Solution { levels, residual })
     }
 
+    /// Whether every movement is resisted.
+    pub fn is_positive_definite(&self) -> bool {
+        self.factorise().is_ok()
+    }
+
     fn factorise(&self) -> Result<Factors, Singular> {
         let mut factors = Factors { lower: Vec::new(), across: Vec::new() };
         for (level, diagonal) in self.diagonal.iter().enumerate() {
