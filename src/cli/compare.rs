@@ -4,7 +4,7 @@ use super::failure::Failure;
 use super::{Common, Format, complain, interrupt, output, report};
 use clap::{Args, ValueEnum};
 use std::iter::once;
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use std::time::{Instant, SystemTime};
 use swaybound::compare::verdict::Subject;
@@ -74,17 +74,15 @@ fn tolerance(text: &str) -> Result<f64, String> {
 
 /// Runs the command.
 pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
-    interrupt::listen();
+    interrupt::listen(args.common.quiet);
     let (start, clock) = (SystemTime::now(), Instant::now());
     let text = read_text(&args.frame)?;
     let file = read_frame(args, &text)?;
     let place = args.common.out.clone().unwrap_or_else(|| output::usual_place(&args.frame, "compare"));
-    let judged = ReportPlace::judge(&place, &args.frame)?;
-    interrupt::check()?;
+    let judged = judge(args, &place)?;
     let options = Options { tolerance: args.tolerance, exact: args.exact.choice() };
     let unsolvable = |fault| Failure::Unsolvable { fault, path: args.frame.clone() };
     let comparison = compare(&file.frame, options).map_err(unsolvable)?;
-    interrupt::check()?;
     let warnings: Vec<_> = comparison.warnings(&file.frame).iter().map(ToString::to_string).collect();
     if !args.common.quiet {
         warn(args, &file, &text, &warnings);
@@ -94,7 +92,6 @@ pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
     let tables = tables(&file.frame, &comparison);
     let host = format!("{} {}", std::env::consts::OS, std::env::consts::ARCH);
     let dataset = Dataset::new(record, Run::new(start, clock.elapsed(), 1, host), tables)?;
-    interrupt::check()?;
     report::write(&judged, &findings, &dataset, &args.common, args.png)?;
     if !args.common.quiet {
         output::note(&format!("report: {}", place.join("report.html").display()));
@@ -102,6 +99,14 @@ pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
     output::results(&standard_output(args.common.format, &findings, &dataset)?)?;
     let met = comparison.some_method_meets(Subject::ColumnMoments);
     Ok(if args.require && !met { ExitCode::from(1) } else { ExitCode::SUCCESS })
+}
+
+/// Judges the place of the report before anything is computed.
+fn judge(args: &CompareArgs, place: &Path) -> Result<ReportPlace, Failure> {
+    let _held_off = interrupt::HoldOff::begin();
+    let judged = ReportPlace::judge(place, &args.frame)?;
+    interrupt::check()?;
+    Ok(judged)
 }
 
 fn read_frame(args: &CompareArgs, text: &str) -> Result<FrameFile, Failure> {

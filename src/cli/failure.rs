@@ -46,7 +46,7 @@ pub(super) enum Failure {
     #[error("a picture could not be made: {0}")]
     Picture(#[from] PngError),
     /// The user stopped the run.
-    #[error("interrupted; no report was written")]
+    #[error("interrupted")]
     Interrupted,
     /// Standard output could not be written.
     #[error("standard output could not be written: {0}")]

@@ -42,7 +42,7 @@ pub(super) struct NewArgs {
     #[arg(long, value_name = "FORCE", value_delimiter = ',', allow_hyphen_values = true, conflicts_with_all = ["base_shear", "shape"])]
     forces: Vec<String>,
     /// Base shear, shared out over the height by --shape
-    #[arg(long, value_name = "FORCE")]
+    #[arg(long, value_name = "FORCE", allow_hyphen_values = true)]
     base_shear: Option<String>,
     /// How the base shear is shared out: uniform, triangular, or a power of the height such as 1.5
     #[arg(long, value_parser = shape)]

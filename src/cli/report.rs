@@ -18,6 +18,7 @@ pub(super) fn write(
     common: &Common,
     with_png: bool,
 ) -> Result<(), Failure> {
+    let _held_off = interrupt::HoldOff::begin();
     let folder = place.start()?;
     if let Some(other) = folder.other_input().filter(|_| !common.quiet) {
         let own = dataset.record().inputs.iter().map(|input| input.name.as_str()).collect::<Vec<_>>().join(", ");
@@ -30,7 +31,8 @@ pub(super) fn write(
     interrupt::check()?;
     folder.write("results.xlsx", &workbook::write(dataset, &about(findings))?)?;
     interrupt::check()?;
-    Ok(folder.finish()?)
+    folder.finish()?;
+    interrupt::check()
 }
 
 fn write_data(folder: &ReportFolder, dataset: &Dataset) -> Result<(), Failure> {

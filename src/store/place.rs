@@ -68,8 +68,8 @@ impl ReportPlace {
         if !nearest.is_dir() {
             return Err(StoreFault::NotFolder { path: nearest.into() });
         }
-        let refused = |(path, error)| StoreFault::system("create a folder for the report", path)(error);
-        let probe = self.siblings.create("part", nearest).map_err(refused)?;
+        let refused = StoreFault::system("create the report folder", &self.place);
+        let probe = self.siblings.create("part", nearest).map_err(|(_, error)| refused(error))?;
         fs::remove_dir(&probe).map_err(StoreFault::system("delete the folder", &probe))
     }
 
