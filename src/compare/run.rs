@@ -139,6 +139,12 @@ impl Comparison {
             .map(|(method, errors)| (*method, errors.as_slice()))
     }
 
+    /// The error sets of the quick methods that state member forces.
+    pub fn quick_force_errors(&self) -> impl Iterator<Item = (&'static str, &[ValueError])> {
+        let forces = |method: &str| self.quick.iter().any(|q| q.entry.info.id == method && q.entry.info.gives.forces());
+        self.quick_errors().filter(move |(method, _)| forces(method))
+    }
+
     /// The verdicts on one subject, the smallest shortfall first.
     pub fn ranked(&self, subject: Subject) -> Vec<&Verdict> {
         let mut verdicts: Vec<_> = self.verdicts.iter().filter(|verdict| verdict.subject == subject).collect();

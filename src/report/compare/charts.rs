@@ -62,7 +62,7 @@ fn chart(name: String, title: &str, caption: &str, figure: &dyn figure::Figure) 
 fn elevations(findings: &Findings) -> Vec<Chart> {
     let comparison = findings.comparison;
     let design = |error: &&ValueError| error.quantity == Quantity::DesignMoment;
-    let all = comparison.quick_errors().flat_map(|(_, errors)| errors.iter().filter(design));
+    let all = comparison.quick_force_errors().flat_map(|(_, errors)| errors.iter().filter(design));
     let limit = colour_limit(all.filter_map(|error| error.storey_error_percent));
     let one = |(method, errors): (&'static str, &[ValueError])| {
         let design: Vec<_> = errors.iter().filter(design).collect();
@@ -83,7 +83,7 @@ fn elevations(findings: &Findings) -> Vec<Chart> {
         };
         chart(format!("{ELEVATION}{method}"), &title, &caption, &figure)
     };
-    comparison.quick_errors().filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
+    comparison.quick_force_errors().filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
 }
 
 fn cell(error: &ValueError) -> Shade {
@@ -132,9 +132,10 @@ fn panel_lines(findings: &Findings) -> Vec<usize> {
     lines
 }
 
-/// The exact answer and the quick ones.
+/// The exact answer and the quick ones that state forces.
 fn drawn<'a>(findings: &Findings<'a>) -> Vec<&'a Response> {
-    std::iter::once(&findings.comparison.reference).chain(findings.comparison.quick_responses()).collect()
+    let quick = findings.comparison.quick_responses().filter(|response| response.has_forces());
+    std::iter::once(&findings.comparison.reference).chain(quick).collect()
 }
 
 fn panels(findings: &Findings, value: &dyn Fn(&Response, usize, usize) -> f64) -> Vec<Panel> {

@@ -60,7 +60,7 @@ fn ranking(findings: &Findings) -> TableBlock {
         table = table.under(subject.name()).percent("lowest", 0).percent("highest", 0);
         table = table.number("multiply by", "", 3).number("redistribution", "%", 2);
     }
-    for quick in own_methods(comparison) {
+    for quick in own_methods(comparison).filter(|quick| states_forces(quick)) {
         let id = quick.entry.info.id;
         let mut cells = vec![TableCell::from(words::method_name(comparison, id))];
         for subject in Subject::ALL {
@@ -84,6 +84,11 @@ fn ranking(findings: &Findings) -> TableBlock {
 /// The quick methods whose values are not those of an earlier one.
 fn own_methods(comparison: &Comparison) -> impl Iterator<Item = &Quick> {
     comparison.quick.iter().filter(|quick| comparison.repeats(quick.entry.info.id).is_none())
+}
+
+/// Whether the method has answered with member forces.
+fn states_forces(quick: &Quick) -> bool {
+    quick.response.as_ref().is_some_and(Response::has_forces)
 }
 
 fn extremes(tolerance: f64, verdict: &Verdict) -> Vec<TableCell> {
@@ -201,7 +206,7 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
         table.row(cells);
     }
     table.note(
-        "The quick methods of this comparison give no drifts. A drift that is too small is on the unsafe side for drift \
+        "A drift that is too small is on the unsafe side for drift \
          limits; one that is too large lengthens the period.",
     );
     Some(table)

@@ -100,14 +100,14 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, mo
     let classes = shown.classes(frame);
     for class in &classes {
         table = table.under(shown.class_head(*class)).number("exact", unit.symbol, 3);
-        table = comparison.quick_errors().fold(table, |table, (method, _)| table.percent(short_name(method), 0));
+        table = comparison.quick_force_errors().fold(table, |table, (method, _)| table.percent(short_name(method), 0));
     }
     for group in groups(frame.storeys(), most).iter().rev() {
         let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), shown.is_of_beams()))];
         for class in &classes {
             let mut exact = None;
             let mut errors = Vec::new();
-            for (_, set) in comparison.quick_errors() {
+            for (_, set) in comparison.quick_force_errors() {
                 let found: Vec<_> = set.iter().filter(|error| shown.holds(error, *class, group)).collect();
                 exact = found.iter().map(|error| error.exact.abs()).reduce(f64::max).or(exact);
                 errors.push(telling(&found, comparison.options.tolerance));
