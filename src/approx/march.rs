@@ -1,4 +1,4 @@
-//! Steps that several quick methods share: from shear shares to moments, and along a floor from the left.
+//! Steps that several quick methods share: from shear shares to moments, along a floor from the left, and joint by joint.
 
 use crate::lane::Lane;
 use crate::response::{Forces, Members, Work, axial_from_beam_shears};
@@ -51,7 +51,7 @@ fn beams_from_left<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mu
 }
 
 /// Sum of the column end moments at the joint of `floor` on `line`.
-fn column_moments_at_joint<L: Lane<W>, const W: usize>(
+pub(super) fn column_moments_at_joint<L: Lane<W>, const W: usize>(
     members: &Members<W>,
     forces: &Forces<W>,
     floor: usize,
@@ -62,4 +62,36 @@ fn column_moments_at_joint<L: Lane<W>, const W: usize>(
         true => below + L::load(&forces.column_foot[members.column(floor + 1, line)]),
         false => below,
     }
+}
+
+/// Turns weights, given in the places of the beam end moments, into end moments that balance every joint; then fills the
+/// axial forces.
+///
+/// # Formula
+/// M = -(column end moments at the joint) x weight / (weights of the beam ends at the joint).
+pub(super) fn forces_from_weights<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mut Forces<W>) {
+    for floor in 0..members.storeys {
+        for line in 0..members.lines() {
+            let left = (line > 0).then(|| members.beam(floor, line.wrapping_sub(1)));
+            let right = (line < members.bays).then(|| members.beam(floor, line));
+            let weight =
+                |beam: Option<usize>, weights: &[[f64; W]]| beam.map_or(L::splat(0.0), |beam| L::load(&weights[beam]));
+            let weights = weight(left, &forces.beam_right) + weight(right, &forces.beam_left);
+            let each = -column_moments_at_joint::<L, W>(members, forces, floor, line) / weights;
+            if let Some(beam) = left {
+                (L::load(&forces.beam_right[beam]) * each).store(&mut forces.beam_right[beam]);
+            }
+            if let Some(beam) = right {
+                (L::load(&forces.beam_left[beam]) * each).store(&mut forces.beam_left[beam]);
+            }
+        }
+    }
+    axial_from_beam_shears::<L, W>(members, forces);
+}
+
+/// Fills the beam moments from the column moments, shared at every joint by beam stiffness; then the axial forces.
+pub(super) fn forces_from_beam_stiffness<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mut Forces<W>) {
+    forces.beam_left.copy_from_slice(&members.beam_stiffness);
+    forces.beam_right.copy_from_slice(&members.beam_stiffness);
+    forces_from_weights::<L, W>(members, forces);
 }

@@ -1,19 +1,37 @@
 //! Quick methods, one file each in one shape. A new method is one file and one line in [`METHODS`].
 
 pub mod cantilever;
+mod chain;
+mod chord;
+pub mod d_value;
+pub mod factor;
+mod fit;
 mod march;
 pub mod portal;
 pub mod portal_tributary;
+pub mod racking;
+pub mod racking_chord;
 mod sheet;
+pub mod substitute_frame;
+mod sums;
+pub mod wilbur;
+pub mod wilbur_chord;
 
 use crate::frame::{Feet, Frame};
 use crate::response::{Caution, Entry, Fit};
 
 /// Every quick method, in the order of reports.
-pub static METHODS: [Entry; 3] = [
+pub static METHODS: [Entry; 10] = [
     Entry::of::<portal::Portal>(),
     Entry::of::<portal_tributary::PortalTributary>(),
     Entry::of::<cantilever::Cantilever>(),
+    Entry::of::<factor::Factor>(),
+    Entry::of::<d_value::DValue>(),
+    Entry::of::<substitute_frame::SubstituteFrame>(),
+    Entry::of::<racking::Racking>(),
+    Entry::of::<wilbur::Wilbur>(),
+    Entry::of::<racking_chord::RackingChord>(),
+    Entry::of::<wilbur_chord::WilburChord>(),
 ];
 
 /// The method called `id`.

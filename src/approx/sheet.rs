@@ -3,6 +3,10 @@
 //! Column moments, beam moments and shears are shown positive in their usual sense under load to the right (columns
 //! resist it, beams lift their left joints), axial forces positive in tension.
 
+mod sized;
+
+pub(super) use sized::*;
+
 use crate::frame::{Feet, Frame, SizeSource, bay_name, line_name};
 use crate::response::{Amount, Response, SheetCell, SheetColumn, Step, Worksheet};
 
@@ -109,7 +113,13 @@ fn floor_label(frame: &Frame, floor: usize) -> SheetCell {
 }
 
 /// A table with one row per storey from the roof and one column per line.
-fn by_line(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn Fn(usize, usize) -> f64) -> Step {
+pub(super) fn by_line(
+    frame: &Frame,
+    title: &str,
+    rule: &str,
+    amount: Amount,
+    value: &dyn Fn(usize, usize) -> f64,
+) -> Step {
     let lines = (0..frame.lines()).map(|line| column(line_name(line), amount));
     let row = |storey: usize| {
         let numbers = (0..frame.lines()).map(|line| SheetCell::Number(value(storey, line)));
@@ -139,14 +149,20 @@ fn by_bay(frame: &Frame, title: &str, rule: &str, amount: Amount, value: &dyn Fn
 }
 
 /// Adds a column at the right end of a step's table.
-fn with_column(mut step: Step, frame: &Frame, head: &str, amount: Amount, value: &dyn Fn(usize) -> f64) -> Step {
+pub(super) fn with_column(
+    mut step: Step,
+    frame: &Frame,
+    head: &str,
+    amount: Amount,
+    value: &dyn Fn(usize) -> f64,
+) -> Step {
     step.columns.push(column(head, amount));
     let levels = (0..frame.storeys()).rev();
     step.rows.iter_mut().zip(levels).for_each(|(row, level)| row.push(SheetCell::Number(value(level))));
     step
 }
 
-fn storey_shears(frame: &Frame) -> Step {
+pub(super) fn storey_shears(frame: &Frame) -> Step {
     let row = |storey: usize| {
         let numbers = [frame.lateral(storey), frame.storey_shear(storey)].map(SheetCell::Number);
         std::iter::once(storey_label(frame, storey)).chain(numbers).collect()
@@ -177,7 +193,7 @@ fn shares(frame: &Frame, rule: &str, part: Part, parts: &dyn Fn(usize) -> f64) -
     }
 }
 
-fn column_shears(frame: &Frame, response: &Response, rule: &str) -> Step {
+pub(super) fn column_shears(frame: &Frame, response: &Response, rule: &str) -> Step {
     let shear = |storey, line| response.column(storey, line).shear;
     let step = by_line(frame, "Column shears", rule, Amount::Force, &shear);
     with_column(step, frame, "sum", Amount::Force, &|storey| response.storey_shear(storey))

@@ -25,6 +25,8 @@ pub trait Lane<const W: usize>:
     fn max(self, other: Self) -> Self;
     /// The magnitude, lane by lane.
     fn abs(self) -> Self;
+    /// The square root, lane by lane; IEEE 754 rounds it once, so it has the same bits everywhere.
+    fn sqrt(self) -> Self;
 }
 
 impl Lane<1> for f64 {
@@ -45,6 +47,9 @@ impl Lane<1> for f64 {
     }
     fn abs(self) -> Self {
         f64::abs(self)
+    }
+    fn sqrt(self) -> Self {
+        f64::sqrt(self)
     }
 }
 
@@ -118,5 +123,8 @@ impl Lane<4> for Plain {
     }
     fn abs(self) -> Self {
         self.map(f64::abs)
+    }
+    fn sqrt(self) -> Self {
+        self.map(f64::sqrt)
     }
 }

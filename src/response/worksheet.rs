@@ -17,6 +17,16 @@ pub enum Amount {
     Area,
     /// 1/m.
     PerLength,
+    /// Stiffness of a member end against rotation, N m.
+    Stiffness,
+    /// Stiffness of a storey against drift, N/m.
+    StoreyStiffness,
+    /// Stiffness of the whole frame against bending, N m2.
+    BendingStiffness,
+    /// rad.
+    Rotation,
+    /// A drift or sway, m.
+    Movement,
 }
 
 /// One column of a step's table.

@@ -2,7 +2,7 @@
 
 use crate::report::{Align, Column, Document, Form, TableBlock, TableCell};
 use crate::response::{Amount, SheetCell, Step, Worksheet};
-use crate::units::{ReportUnits, Unit};
+use crate::units::{METRES_PER_FOOT, METRES_PER_INCH, NEWTONS_PER_POUND, ReportUnits, Unit};
 
 /// A number under this share of the largest of its kind is what rounding leaves of a zero.
 const ROUNDING: f64 = 1e-12;
@@ -79,6 +79,25 @@ fn unit(amount: Amount, units: ReportUnits) -> Unit {
         (Amount::Area, ReportUnits::Us) => Unit { symbol: "ft²", si: length.si * length.si },
         (Amount::PerLength, ReportUnits::Metric) => Unit { symbol: "1/m", si: 1.0 },
         (Amount::PerLength, ReportUnits::Us) => Unit { symbol: "1/ft", si: 1.0 / length.si },
+        (Amount::Rotation, _) => Unit { symbol: "mrad", si: 1e-3 },
+        (Amount::Movement, _) => units.movement(),
+        (Amount::Stiffness | Amount::StoreyStiffness | Amount::BendingStiffness, _) => stiffness_unit(amount, units),
+    }
+}
+
+/// Units in which stiffness times mrad gives a moment in its usual unit, and storey stiffness times
+/// movement a force in its usual unit.
+fn stiffness_unit(amount: Amount, units: ReportUnits) -> Unit {
+    const KIP: f64 = 1e3 * NEWTONS_PER_POUND;
+    match (amount, units) {
+        (Amount::StoreyStiffness, ReportUnits::Metric) => Unit { symbol: "kN/mm", si: 1e6 },
+        (Amount::StoreyStiffness, ReportUnits::Us) => Unit { symbol: "kip/in", si: KIP / METRES_PER_INCH },
+        (Amount::BendingStiffness, ReportUnits::Metric) => Unit { symbol: "GN m²", si: 1e9 },
+        (Amount::BendingStiffness, ReportUnits::Us) => {
+            Unit { symbol: "10⁶ kip ft²", si: 1e6 * KIP * METRES_PER_FOOT * METRES_PER_FOOT }
+        }
+        (_, ReportUnits::Metric) => Unit { symbol: "MN m", si: 1e6 },
+        (_, ReportUnits::Us) => Unit { symbol: "10³ kip ft", si: 1e3 * KIP * METRES_PER_FOOT },
     }
 }
 
@@ -88,6 +107,7 @@ fn form(amount: Amount) -> (Align, Form) {
         Amount::Name => (Align::Left, Form::Whole),
         Amount::Ratio | Amount::PerLength | Amount::Area => (Align::Right, Form::Significant(4)),
         Amount::Length => (Align::Right, Form::Decimals(3)),
-        Amount::Force | Amount::Moment => (Align::Right, Form::Significant(4)),
+        Amount::Force | Amount::Moment | Amount::Rotation | Amount::Movement => (Align::Right, Form::Significant(4)),
+        Amount::Stiffness | Amount::StoreyStiffness | Amount::BendingStiffness => (Align::Right, Form::Significant(4)),
     }
 }
