@@ -212,14 +212,16 @@ fn the_numbers_of_the_readme_are_current(readme: &str, report: &Path) {
     let sizeless = |method: &str| methods.iter().any(|row| row["method"] == method && row["needs_sizes"] == "no");
     let least_short = |quantity: &str, without_sizes: bool| {
         let whole = verdicts.iter().filter(|row| row["member"] == "column" && row["band"] == "all");
-        let of_quantity = whole.filter(|row| row["quantity"] == quantity && (!without_sizes || sizeless(&row["method"])));
+        let of_quantity =
+            whole.filter(|row| row["quantity"] == quantity && (!without_sizes || sizeless(&row["method"])));
         of_quantity.max_by(|a, b| number(a, "lowest_percent").total_cmp(&number(b, "lowest_percent"))).unwrap()
     };
     let words = readme.split_whitespace().collect::<Vec<_>>().join(" ");
     for without_sizes in [false, true] {
         let row = least_short("design_moment", without_sizes);
         let (short, at, storey) = (-number(row, "lowest_percent"), &row["lowest_at"], &row["lowest_storey"]);
-        let said = format!("`{}` comes closest, {} % short in column {at}, storey {storey}", row["method"], short.ceil());
+        let said =
+            format!("`{}` comes closest, {} % short in column {at}, storey {storey}", row["method"], short.ceil());
         assert!(words.contains(&said), "the README does not say: {said}");
     }
     let shears = least_short("shear", true);

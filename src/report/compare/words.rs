@@ -151,21 +151,17 @@ pub(super) fn finding(
             short_by(best)
         ))
     } else {
-        let names: Vec<_> = good
-            .iter()
-            .map(|verdict| {
-                format!(
-                    "{} ({} to {})",
-                    method_name(comparison, verdict.method),
-                    verdict_percent(verdict.lowest),
-                    verdict_percent(verdict.highest)
-                )
-            })
-            .collect();
+        let names = good.iter().map(|verdict| {
+            let name = method_name(comparison, verdict.method);
+            let sizes = if needs_sizes(comparison, verdict.method) { "needs sizes; " } else { "" };
+            format!("{name} ({sizes}{} to {})", verdict_percent(verdict.lowest), verdict_percent(verdict.highest))
+        });
+        let names: Vec<_> = names.collect();
         say(format!("{subject_name}{sizes}: nowhere short by more than {tolerance}: {}", names.join("; ")))
     };
     let standing = good.first().map_or(Standing::Short, |verdict| verdict.state);
-    Some((mark(standing), word(standing), start.then(".").then(cover(best, subject, frame.report_units()))))
+    let covered = format!(" The {} multiplied by", method_name(comparison, best.method));
+    Some((mark(standing), word(standing), start.then(".").then(cover(best, &covered, frame.report_units()))))
 }
 
 /// The tolerance as it was asked for.
@@ -181,6 +177,11 @@ fn for_sizes(frame: &Frame) -> &'static str {
 /// Whether the method's values are not those of an earlier method.
 pub(super) fn own(comparison: &Comparison, verdict: &Verdict) -> bool {
     comparison.repeats(verdict.method).is_none()
+}
+
+/// Whether a quick method needs member sizes.
+fn needs_sizes(comparison: &Comparison, method: &str) -> bool {
+    comparison.quick.iter().any(|quick| quick.entry.info.id == method && quick.entry.info.needs_sizes)
 }
 
 /// A signed storey error, rounded to whole percent.
@@ -226,14 +227,15 @@ pub(super) fn verdict(comparison: &Comparison, verdict: &Verdict, units: ReportU
         (!found.is_empty()).then(|| format!(" {head}: {}.", if all { "everywhere".into() } else { places(&found) }))
     });
     let start = Sentence::default().strong(name).then(format!(": {text}."));
-    lists.fold(start, Sentence::then).then(cover(verdict, verdict.subject, units))
+    lists.fold(start, Sentence::then).then(cover(verdict, " Multiplied by", units))
 }
 
 /// What covers every member: the factor and the member that sets it, and the members that no factor helps.
-fn cover(verdict: &Verdict, subject: Subject, units: ReportUnits) -> String {
+fn cover(verdict: &Verdict, start: &str, units: ReportUnits) -> String {
+    let subject = verdict.subject;
     let mut text = match verdict.governing() {
         Some(member) if needed(member.factor).is_some() => format!(
-            " Multiplied by {} no {} is short: {} sets this, {} short of its own exact value.",
+            "{start} {} no {} is short: {} sets this, {} short of its own exact value.",
             factor(member.factor),
             if subject == Subject::StoreyDrifts { "storey" } else { "member" },
             member_name(member),
