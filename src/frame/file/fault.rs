@@ -1,5 +1,6 @@
 //! What can be wrong with a frame file: one kind for each mistake, with its place and its remedy.
 
+use super::position::position;
 use super::select::SelectError;
 use crate::frame::FrameFault;
 use crate::units::UnitError;
@@ -34,6 +35,13 @@ impl FileFault {
     /// How to mend it.
     pub fn help(&self) -> String {
         super::help::help(&self.kind)
+    }
+
+    /// Line and column in `text`, the text that was read, where the fault begins: both from 1, the column in characters.
+    ///
+    /// `\r\n` is one line break. A fault at the end of a text that ends in a line break stands on the line after it.
+    pub fn position(&self, text: &str) -> (usize, usize) {
+        position(text, self.span.start)
     }
 }
 

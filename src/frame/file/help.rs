@@ -41,13 +41,23 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::SpringNeedsInertia => {
             "give sizes.end_column_inertia and material.modulus, or state the spring as sizes.foot_spring, a ratio to 4 E I_c/h of its column".into()
         }
-        FaultKind::Frame(FrameFault::NoLoad) => THREE_WAYS.into(),
-        FaultKind::Frame(_) => "check the numbers of the frame and their units".into(),
+        FaultKind::Frame(fault) => of_frame(fault).into(),
     }
 }
 
 /// The three forms of the table `[lateral]`.
 pub(super) const THREE_WAYS: &str = "write [lateral] with floors = [\"40 kN\", \"60 kN\"] from the lowest floor up, or base_shear = \"900 kN\" with shape = \"triangular\", or pressure = \"1.2 kPa\" with tributary = \"6 m\"";
+
+fn of_frame(fault: &FrameFault) -> &'static str {
+    match fault {
+        FrameFault::NoLoad => THREE_WAYS,
+        FrameFault::Negative { .. } => {
+            "give 0 or more; in a file, a beam that carries no moment takes stiffness_factor = 0"
+        }
+        FrameFault::NotPositive { .. } | FrameFault::NotFinite { .. } => "check the number, its unit and its factor",
+        _ => "check the numbers of the frame and their units",
+    }
+}
 
 fn unknown_key(key: &str, suggestion: Option<&str>, home: Option<&str>, known: &[String]) -> String {
     match (suggestion, home) {

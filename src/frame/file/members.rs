@@ -1,6 +1,7 @@
 //! Known sizes: the tables `[[columns]]` and `[[beams]]`, the later replacing the earlier member by member.
 
 use super::fault::{FaultKind, FileFault};
+use super::owners::{self, Owner, Selection};
 use super::scalar::{Scalar, Table};
 use super::select;
 use super::source::{Need, Source, require};
@@ -25,8 +26,7 @@ pub(super) struct Members {
 
 /// One table as checked.
 struct Checked {
-    levels: Vec<bool>,
-    places: Vec<bool>,
+    selection: Selection,
     section: Section,
     /// The factor as typed, where it is stated.
     factor: Option<(f64, String)>,
@@ -53,11 +53,12 @@ pub(super) fn columns(
         scale(&mut section, &mut typed, &factor);
         let what = format!("columns, storeys {}, lines {}", levels.1, places.1);
         let echo = Echo { what, typed };
-        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        let selection = Selection::new(&levels.0, &places.0);
+        checked.push(Checked { selection, section, factor, span: written.span(), echo });
     }
     let name =
         |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
-    assign(checked, "columns", name, warnings)
+    assign(checked, [storeys, lines], "columns", name, warnings)
 }
 
 /// Checks all `[[beams]]` tables.
@@ -82,10 +83,11 @@ pub(super) fn beams(
         scale(&mut section, &mut typed, &factor);
         let what = format!("beams, floors {}, bays {}", levels.1, places.1);
         let echo = Echo { what, typed };
-        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        let selection = Selection::new(&levels.0, &places.0);
+        checked.push(Checked { selection, section, factor, span: written.span(), echo });
     }
     let name = |index: usize| format!("the beam of floor {} in bay {}", index / bays + 1, bay_name(index % bays));
-    assign(checked, "beams", name, warnings)
+    assign(checked, [floors, bays], "beams", name, warnings)
 }
 
 /// Flags of a selection and the words it was made with; everything where it is left out.
@@ -211,50 +213,48 @@ fn scale(section: &mut Section, typed: &mut String, factor: &Option<(f64, String
 /// Gives every member the section of the last table that selects it.
 fn assign(
     tables: Vec<Checked>,
+    [levels, places]: [usize; 2],
     members: &'static str,
     name: impl Fn(usize) -> String,
     warnings: Vec<FileWarning>,
 ) -> Result<Members, FileFault> {
-    let Some(last) = tables.last() else {
-        return Err(FileFault::new(FaultKind::Unsized { first: name(0), more: 0, members }, 0..0));
-    };
-    let (levels, places) = (last.levels.len(), last.places.len());
-    let mut owners: Vec<Option<usize>> = vec![None; levels * places];
-    let mut warnings = warnings;
-    for (number, table) in tables.iter().enumerate() {
-        let mut lost = None;
-        for (index, owner) in owners.iter_mut().enumerate() {
-            if table.levels[index / places] && table.places[index % places] {
-                lost = lost.or(*owner);
-                *owner = Some(number);
-            }
-        }
-        warnings.extend(factor_lost(table, lost.map(|earlier| &tables[earlier])));
-    }
+    let selections: Vec<_> = tables.iter().map(|table| &table.selection).collect();
+    let owners = owners::owners(&selections, levels, places);
     let without: Vec<usize> = (0..owners.len()).filter(|index| owners[*index].is_none()).collect();
     if let Some(first) = without.first() {
         let kind = FaultKind::Unsized { first: name(*first), more: without.len() - 1, members };
-        return Err(FileFault::new(kind, last.span.clone()));
+        return Err(FileFault::new(kind, tables.last().map_or(0..0, |table| table.span.clone())));
     }
-    let unused = |number: usize| !owners.contains(&Some(number));
-    warnings.extend(
-        tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)),
-    );
-    let bare = |number: &usize| !unused(*number) && tables[*number].section.area.is_none();
-    let without_area = (0..tables.len()).find(bare).map(|number| tables[number].span.clone());
-    let sections = owners.iter().flatten().map(|number| tables[*number].section).collect();
+    let owners: Vec<Owner> = owners.into_iter().flatten().collect();
+    let mut used = vec![false; tables.len()];
+    owners.iter().for_each(|owner| used[owner.last] = true);
+    let mut warnings = warnings;
+    warnings.extend(factors_lost(&tables, &owners));
+    let unused = tables.iter().zip(&used).filter(|(_, used)| !**used);
+    warnings.extend(unused.map(|(table, _)| no_effect(table, members)));
+    let bare = tables.iter().zip(&used).find(|(table, used)| **used && table.section.area.is_none());
+    let without_area = bare.map(|(table, _)| table.span.clone());
+    let sections = owners.iter().map(|owner| tables[owner.last].section).collect();
     let echo = tables.into_iter().map(|table| table.echo).collect();
     Ok(Members { sections, echo, warnings, without_area })
 }
 
-fn factor_lost(table: &Checked, replaced: Option<&Checked>) -> Option<FileWarning> {
-    let (value, typed) = replaced?.factor.as_ref()?;
-    let lost = table.factor.is_none() && *value != 1.0;
-    lost.then(|| FileWarning::new(WarningKind::FactorLost { earlier: typed.clone() }, table.span.clone()))
+/// One warning for each table without a factor that takes members from one with a factor.
+fn factors_lost(tables: &[Checked], owners: &[Owner]) -> Vec<FileWarning> {
+    let mut lost: Vec<Option<&str>> = vec![None; tables.len()];
+    for owner in owners.iter().filter(|owner| tables[owner.last].factor.is_none()) {
+        let earlier = owner.replaced.and_then(|number| tables[number].factor.as_ref());
+        let earlier = earlier.filter(|(value, _)| *value != 1.0).map(|(_, typed)| typed.as_str());
+        lost[owner.last] = lost[owner.last].or(earlier);
+    }
+    let warn = |(table, earlier): (&Checked, Option<&str>)| {
+        Some(FileWarning::new(WarningKind::FactorLost { earlier: earlier?.into() }, table.span.clone()))
+    };
+    tables.iter().zip(lost).filter_map(warn).collect()
 }
 
 fn no_effect(table: &Checked, members: &'static str) -> FileWarning {
-    let selects = table.levels.contains(&true) && table.places.contains(&true);
-    let kind = if selects { WarningKind::Overridden { members } } else { WarningKind::SelectsNothing };
+    let nothing = table.selection.is_empty();
+    let kind = if nothing { WarningKind::SelectsNothing { members } } else { WarningKind::Overridden { members } };
     FileWarning::new(kind, table.span.clone())
 }

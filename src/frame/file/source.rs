@@ -33,7 +33,7 @@ impl Need {
             Self::Positive => (number > 0.0, "it must be more than 0"),
             Self::ZeroOrMore => (number >= 0.0, "it must be 0 or more"),
             Self::OneOrMore => (number >= 1.0, "it must be 1 or more"),
-            Self::Power => ((0.0..=10.0).contains(&number), "it must be 0 to 10"),
+            Self::Power => ((0.0..=10.0).contains(&number), "it must lie between 0 and 10"),
         };
         if !number.is_finite() {
             return Some("it must be a finite number");

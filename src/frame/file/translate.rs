@@ -1,7 +1,7 @@
 //! From the messages of the TOML reader to the faults of a frame file.
 
 use super::fault::{FaultKind, FileFault};
-use super::locate;
+use super::locate::Keys;
 use std::ops::Range;
 
 /// Tables of the file and their keys, to tell where a misplaced key belongs.
@@ -61,7 +61,7 @@ fn duplicate(text: &str, span: Range<usize>) -> FileFault {
     let line_start = text[..span.start].rfind('\n').map_or(0, |at| at + 1);
     let header = text[line_start..].lines().next().unwrap_or_default().trim();
     let same_header = || text[..line_start].find(header).map(|at| at..at + header.len());
-    let first = if header.starts_with('[') { same_header() } else { locate::earlier_key(text, &key, span.start) };
+    let first = if header.starts_with('[') { same_header() } else { Keys::read(text).earlier_key(&key, span.start) };
     let fault = FileFault::new(FaultKind::DuplicateKey { key }, span);
     match first {
         Some(first) => fault.beside(first, "given here first"),

@@ -160,7 +160,7 @@ pub(super) struct ColumnsWritten {
 }
 
 impl Expecting for ColumnsWritten {
-    const EXPECTING: &str = "a [[columns]] in double brackets";
+    const EXPECTING: &str = "[[columns]] in double brackets";
 }
 
 /// Beams of one size.
@@ -189,7 +189,7 @@ pub(super) struct BeamsWritten {
 }
 
 impl Expecting for BeamsWritten {
-    const EXPECTING: &str = "a [[beams]] in double brackets";
+    const EXPECTING: &str = "[[beams]] in double brackets";
 }
 
 /// A solid rectangle.
