@@ -5,6 +5,7 @@
 mod fault;
 pub mod file;
 mod names;
+pub mod options;
 pub mod sizes;
 pub mod template;
 

@@ -15,15 +15,15 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::WrongForm { expected, .. } => wrong_form(expected),
         FaultKind::Unit(error) => error.help(),
         FaultKind::OutOfRange { help, .. } => help.clone(),
-        FaultKind::Missing { help, .. } | FaultKind::Conflict { help, .. } => (*help).into(),
+        FaultKind::Missing { help, .. }
+        | FaultKind::Conflict { help, .. }
+        | FaultKind::Count { help, .. }
+        | FaultKind::ShareSum { help, .. } => (*help).into(),
         FaultKind::NoBays => "give the bay widths from the left, for example bays = [\"7.2 m\", \"8.4 m\"]".into(),
         FaultKind::NoStoreys => {
             "give the storey heights from the ground up, for example storeys = [\"4.8 m\", \"3.9 m\"]".into()
         }
         FaultKind::TooMany { .. } => "check the count; a frame of that size is outside what this tool checks".into(),
-        FaultKind::ForceCount { .. } => {
-            "give one force for each floor from the lowest to the roof; a floor without force takes \"0 kN\"".into()
-        }
         FaultKind::RangeLength { .. } => "write [low, high], or a single value to fix it".into(),
         FaultKind::RangeReversed { low, high } => format!("write [{high}, {low}]"),
         FaultKind::Select(error) => error.help(),
@@ -41,6 +41,14 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::SpringNeedsInertia => {
             "give sizes.end_column_inertia and material.modulus, or state the spring as sizes.foot_spring, a ratio to 4 E I_c/h of its column".into()
         }
+        FaultKind::NoDepth { .. } => {
+            "state lengths in place of the share, column = \"0.3 m\" and beam = \"0.25 m\", or give every member a rectangle".into()
+        }
+        FaultKind::ZonesTooLong { .. } => "make the rigid zones shorter, and check their units".into(),
+        FaultKind::GravityNeedsInertia => {
+            "give sizes.end_column_inertia and material.modulus, or leave [gravity] out".into()
+        }
+        FaultKind::Options(_) => "check the numbers of the options and their units".into(),
         FaultKind::Frame(fault) => of_frame(fault).into(),
     }
 }

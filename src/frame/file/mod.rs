@@ -6,10 +6,13 @@
 mod assemble;
 mod fault;
 mod feet;
+mod gravity;
 mod grid;
 mod help;
+mod joints;
 mod lateral;
 mod locate;
+mod material;
 mod members;
 mod model;
 mod owners;
@@ -17,6 +20,8 @@ mod position;
 mod scalar;
 mod schema;
 mod select;
+mod size;
+mod sized;
 mod source;
 mod translate;
 mod warning;
@@ -28,6 +33,7 @@ pub use select::SelectError;
 pub use warning::{FileWarning, WarningKind};
 
 use super::Frame;
+use super::options::AnalysisOptions;
 use super::sizes::{SizeModel, Within};
 use locate::Keys;
 
@@ -40,6 +46,8 @@ pub struct FrameFile {
     pub echo: Vec<Echo>,
     /// Whether sizes are known, and how far they may vary.
     pub sizes: SizeStatement,
+    /// What the exact analyses are to take into account beyond plain members.
+    pub options: AnalysisOptions,
     /// What is allowed but looks like a slip.
     pub warnings: Vec<FileWarning>,
 }

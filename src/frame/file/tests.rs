@@ -3,6 +3,7 @@ use crate::frame::sizes::Range;
 use crate::frame::{Feet, SizeSource};
 
 mod mutations;
+mod options;
 
 const GRID: &str =
     "[grid]\nbays = [\"6 m\", \"9 m\"]\nstoreys = [\"5 m\", \"4 m\", \"4 m\"]\n[material]\nmodulus = \"30 GPa\"\n";
@@ -35,7 +36,9 @@ fn a_later_table_replaces_the_whole_size_of_its_members() {
     assert_eq!(echoed(&file, "columns, storeys all, lines all"), "rectangle 400 mm x 600 mm, stiffness factor 0.7");
     assert_eq!(echoed(&file, "beams, floors roof, bays B-C"), "rectangle 300 mm x 1 m, stiffness factor 0");
     let kinds: Vec<_> = file.warnings.iter().map(|warning| warning.kind.clone()).collect();
-    assert!(kinds.contains(&WarningKind::FactorLost { earlier: "0.7".into() }), "{kinds:?}");
+    let instead = "take the factor 1";
+    let dropped = WarningKind::Dropped { key: "stiffness_factor", instead, earlier: "0.7".into() };
+    assert!(kinds.contains(&dropped), "{kinds:?}");
     assert!(kinds.iter().any(|kind| matches!(kind, WarningKind::Frame(_))), "{kinds:?}");
     assert_eq!(file.sizes, SizeStatement::Stated { within: None });
 }

@@ -38,9 +38,15 @@ impl FileWarning {
             WarningKind::SelectsNothing { .. } => {
                 "two lines have no interior line, and one or two bays no interior bay: take the table out"
             }
-            WarningKind::FactorLost { .. } => {
-                "a later table replaces the whole size: repeat stiffness_factor in it, or write stiffness_factor = 1 if that is meant"
-            }
+            WarningKind::Dropped { key, .. } => match key {
+                "stiffness_factor" => {
+                    "a later table replaces the whole size: repeat stiffness_factor in it, or write stiffness_factor = 1 if that is meant"
+                }
+                "end_spring" => {
+                    "a later table replaces the whole size: repeat end_spring in it, or write end_spring = \"rigid\" if that is meant"
+                }
+                _ => "a later table replaces the whole size: repeat the key in it, or take it out of the earlier table",
+            },
             WarningKind::Growing => {
                 "members usually get smaller up the height: write a ratio of 1 or less unless this is meant"
             }
@@ -75,10 +81,14 @@ pub enum WarningKind {
         /// `columns` or `beams`.
         members: &'static str,
     },
-    /// A stiffness factor that a later table drops by not repeating it.
-    #[error("this table states no stiffness factor, so its members take 1, but the table it replaces had {earlier}")]
-    FactorLost {
-        /// The factor of the replaced table, as typed.
+    /// A stiffness factor, shear area or end spring that a later table drops by not repeating it.
+    #[error("this table states no {key}, so its members {instead}, but the table it replaces has {key} {earlier}")]
+    Dropped {
+        /// The key.
+        key: &'static str,
+        /// What the members do without it.
+        instead: &'static str,
+        /// The value in the replaced table, as typed.
         earlier: String,
     },
     /// Sizes that grow upward.
@@ -136,6 +146,14 @@ pub(super) fn lengths(source: Source, grid: &Grid) -> Vec<FileWarning> {
 pub(super) fn modulus(source: Source, value: f64, span: Range<usize>) -> Option<FileWarning> {
     let usual = Usual { low: 5e9, high: 2.5e11, words: "5 to 250 GPa (730 to 36000 ksi)" };
     unusual(value, &usual, || "the modulus of elasticity".into(), source, span)
+}
+
+/// A shear modulus that does not go with the modulus of elasticity, the usual slip being MPa for GPa. Isotropic materials
+/// have E/3 to E/2, timber about E/16 (common practice).
+pub(super) fn shear_modulus(source: Source, value: f64, modulus: f64, span: Range<usize>) -> Option<FileWarning> {
+    let words = "a third to a half of the modulus of elasticity, for timber about a sixteenth,";
+    let usual = Usual { low: modulus / 25.0, high: modulus / 1.99, words };
+    unusual(value, &usual, || "the shear modulus".into(), source, span)
 }
 
 fn unusual(

@@ -3,11 +3,12 @@
 use super::*;
 use proptest::prelude::*;
 
-const STUDIES: [&str; 4] = [
+const STUDIES: [&str; 5] = [
     include_str!("../../../../studies/research-institute.toml"),
     include_str!("../../../../studies/us-office.toml"),
     include_str!("../../../../studies/workshop-sprung-feet.toml"),
     include_str!("../../../../studies/sizes-unknown.toml"),
+    options::FULL,
 ];
 
 /// One slip; places are shares of the text so that every part of it is met.
@@ -50,6 +51,10 @@ fn slips() -> impl Strategy<Value = Vec<Slip>> {
         "\"\\u0000\"",
         "[[[[\"4 m\"]]]]",
         "{ spring = { spring = 1 } }",
+        "{ left = \"é\" }",
+        "\"5/6\"",
+        "\"hinge\"",
+        "[0.5, nan]",
         "'12''-6\"'",
         "\"\"\"7 m\n\"\"\"",
     ];
