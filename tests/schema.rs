@@ -98,6 +98,20 @@ fn the_schema_refuses_what_the_reader_refuses() {
         "within-below-one",
         "single-brackets",
         "pressure-wrong-kind",
+        "poisson-percent",
+        "shear-modulus-wrong-kind",
+        "shear-area-other-share",
+        "shear-area-number",
+        "end-spring-word",
+        "end-spring-key",
+        "end-spring-number-left",
+        "end-spring-of-columns",
+        "joints-share-percent",
+        "joints-length-number",
+        "gravity-empty",
+        "gravity-number",
+        "gravity-shares-percent",
+        "gravity-shares-number",
     ];
     for name in refused {
         let text = fs::read_to_string(path("tests/broken").join(name).with_extension("toml")).unwrap();

@@ -11,7 +11,6 @@ use swaybound::approx::METHODS;
 use swaybound::compare::verdict::Subject;
 use swaybound::compare::{Comparison, ExactChoice, Options, compare};
 use swaybound::frame::file::{FrameFile, parse};
-use swaybound::frame::options::AnalysisOptions;
 use swaybound::report::compare::{Findings, brief, tables};
 use swaybound::report::{Dataset, Input, Record, Run, command_line, csv, json, text};
 use swaybound::store::{ReportPlace, read_text};
@@ -94,7 +93,7 @@ pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
     let judged = judge(args, &place)?;
     let options = Options { tolerance: args.tolerance, exact: args.exact.choice(), methods: args.methods.clone() };
     let unsolvable = |fault| Failure::Unsolvable { fault, path: args.frame.clone() };
-    let comparison = compare(&file.frame, &AnalysisOptions::plain(&file.frame), options).map_err(unsolvable)?;
+    let comparison = compare(&file.frame, &file.options, options).map_err(unsolvable)?;
     let warnings: Vec<_> = comparison.warnings(&file.frame).iter().map(ToString::to_string).collect();
     if !args.common.quiet {
         warn(args, &file, &text, &warnings);

@@ -36,6 +36,14 @@ pub enum FrameFault {
         /// The number, in N and m.
         value: f64,
     },
+    /// A number that may be 0 or more is negative.
+    #[error("{what} is {value}, but must not be negative")]
+    Negative {
+        /// What the number is, with its place.
+        what: String,
+        /// The number, in N and m.
+        value: f64,
+    },
     /// A number that must be finite is not.
     #[error("{what} is {value}, but must be a finite number")]
     NotFinite {
@@ -62,7 +70,7 @@ pub enum FrameFault {
 pub enum FrameWarning {
     /// A storey of unusual height.
     #[error(
-        "storey {storey} is {height} m high; storeys over {TALL_STOREY} m are unusual: check the number and its unit"
+        "storey {storey} is {height:.2} m high; storeys over {TALL_STOREY} m are unusual: check the number and its unit"
     )]
     TallStorey {
         /// The storey, from 1.
@@ -72,7 +80,7 @@ pub enum FrameWarning {
     },
     /// Some columns have an area and some have none, so areas are not used.
     #[error(
-        "the column of storey {storey} on line {line} has no area while others have: column axial strain is left out and the cantilever method takes equal areas; give every column an area, or none"
+        "the column of storey {storey} on line {line} has no area although other columns have one: axial strain of columns is then left out, and the cantilever method takes all areas as equal; give every column an area, or none"
     )]
     SomeAreas {
         /// The first storey with such a column, from 1.
@@ -132,11 +140,9 @@ fn check_members(parts: &FrameParts) -> Result<(), FrameFault> {
     }
     for (index, beam) in parts.beams.iter().enumerate() {
         let bays = parts.bays.len();
-        let place =
+        let what =
             || format!("the inertia of the beam of floor {} in bay {}", index / bays + 1, bay_name(index % bays));
-        if beam.inertia < 0.0 || !beam.inertia.is_finite() {
-            return Err(FrameFault::NotPositive { what: place(), value: beam.inertia });
-        }
+        not_negative(beam.inertia, what)?;
     }
     Ok(())
 }
@@ -154,16 +160,22 @@ fn check_feet(feet: &Feet, lines: usize) -> Result<(), FrameFault> {
 
 fn check_forces(lateral: &[f64]) -> Result<(), FrameFault> {
     for (floor, force) in lateral.iter().enumerate() {
-        if !force.is_finite() {
-            let what = format!("the lateral force at floor {}", floor + 1);
-            return Err(FrameFault::NotFinite { what, value: *force });
-        }
+        finite(*force, || format!("the lateral force at floor {}", floor + 1))?;
     }
     if lateral.iter().all(|force| *force == 0.0) { Err(FrameFault::NoLoad) } else { Ok(()) }
 }
 
 fn count(what: &'static str, found: usize, needed: usize) -> Result<(), FrameFault> {
     if found == needed { Ok(()) } else { Err(FrameFault::Count { what, found, needed }) }
+}
+
+fn finite(value: f64, what: impl FnOnce() -> String) -> Result<(), FrameFault> {
+    if value.is_finite() { Ok(()) } else { Err(FrameFault::NotFinite { what: what(), value }) }
+}
+
+fn not_negative(value: f64, what: impl Fn() -> String) -> Result<(), FrameFault> {
+    finite(value, &what)?;
+    if value >= 0.0 { Ok(()) } else { Err(FrameFault::Negative { what: what(), value }) }
 }
 
 fn positive(value: f64, what: impl FnOnce() -> String) -> Result<(), FrameFault> {

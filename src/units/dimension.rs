@@ -19,7 +19,9 @@ pub enum Dimension {
     Pressure,
     /// Modulus of elasticity; the same units as a pressure.
     Modulus,
-    /// Rotational springs at the feet.
+    /// Shear modulus; the same units as a pressure.
+    ShearModulus,
+    /// Rotational springs at feet and beam ends.
     RotationalStiffness,
 }
 
@@ -34,6 +36,7 @@ impl Dimension {
             Self::ForcePerLength => "a force per length",
             Self::Pressure => "a pressure",
             Self::Modulus => "a modulus of elasticity",
+            Self::ShearModulus => "a shear modulus",
             Self::RotationalStiffness => "a rotational stiffness",
         }
     }
@@ -47,7 +50,7 @@ impl Dimension {
             Self::Force => ["kN", "kip"],
             Self::ForcePerLength => ["kN/m", "kip/ft"],
             Self::Pressure => ["kPa", "psf"],
-            Self::Modulus => ["GPa", "ksi"],
+            Self::Modulus | Self::ShearModulus => ["GPa", "ksi"],
             Self::RotationalStiffness => ["MN m/rad", "kip ft/rad"],
         }
     }
@@ -55,8 +58,8 @@ impl Dimension {
     /// A metric and a US unit in which a bare `number` may have been meant.
     pub(super) fn units_for(self, number: f64) -> [&'static str; 2] {
         match self {
-            Self::Modulus if number >= 1e6 => ["Pa", "psi"],
-            Self::Modulus if number >= 1e3 => ["MPa", "ksi"],
+            Self::Modulus | Self::ShearModulus if number >= 1e6 => ["Pa", "psi"],
+            Self::Modulus | Self::ShearModulus if number >= 1e3 => ["MPa", "ksi"],
             _ => self.usual_units(),
         }
     }
@@ -71,6 +74,7 @@ impl Dimension {
             Self::ForcePerLength => ["3 kN/m", "0.2 kip/ft"],
             Self::Pressure => ["1.2 kPa", "25 psf"],
             Self::Modulus => ["30 GPa", "29000 ksi"],
+            Self::ShearModulus => ["12 GPa", "11200 ksi"],
             Self::RotationalStiffness => ["150 MN m/rad", "110000 kip ft/rad"],
         }
     }
@@ -82,7 +86,7 @@ impl Dimension {
             Self::Inertia => Powers::new(0, 4, 0),
             Self::Force => Powers::new(1, 0, 0),
             Self::ForcePerLength => Powers::new(1, -1, 0),
-            Self::Pressure | Self::Modulus => Powers::new(1, -2, 0),
+            Self::Pressure | Self::Modulus | Self::ShearModulus => Powers::new(1, -2, 0),
             Self::RotationalStiffness => Powers::new(1, 1, -1),
         }
     }

@@ -1,71 +1,63 @@
 //! Puts the checked parts together to a frame.
 
 use super::fault::{FaultKind, FileFault};
-use super::feet::CheckedFeet;
 use super::grid::Grid;
 use super::lateral::Lateral;
-use super::scalar::Table;
+use super::sized::Stated;
 use super::source::{Source, require};
-use super::warning::{self, FileWarning};
-use super::written::{SizesWritten, Written};
-use super::{Echo, FrameFile, SizeStatement, feet, grid, lateral, members, model};
-use crate::frame::{Feet, Frame, FrameFault, FrameParts, SizeSource};
-use crate::units::{Dimension, ReportUnits};
+use super::written::Written;
+use super::{Echo, FrameFile, feet, gravity, grid, joints, lateral, material, sized, warning};
+use crate::frame::options::AnalysisOptions;
+use crate::frame::{Frame, FrameFault, FrameParts};
+use crate::units::ReportUnits;
 use std::ops::Range;
-use toml::Spanned;
-
-/// Members, feet and modulus, from either way of stating sizes.
-struct Sized {
-    columns: Vec<crate::frame::Section>,
-    beams: Vec<crate::frame::Section>,
-    feet: Feet,
-    source: SizeSource,
-    statement: SizeStatement,
-    echo: Vec<Echo>,
-    warnings: Vec<FileWarning>,
-    /// Where a fault of the sizes as a whole is shown.
-    span: Range<usize>,
-}
 
 /// Checks everything that is written.
 pub(super) fn assemble(source: Source, written: &Written) -> Result<FrameFile, FileFault> {
-    let end = || source.0.trim_end().len()..source.0.trim_end().len();
+    let end = source.0.trim_end().len();
     let report_units = report_units(source, written)?;
     let table = require(
         &written.grid,
-        end(),
+        end..end,
         "the table [grid]",
         "add [grid] with bays = [\"7.2 m\", \"8.4 m\"] and storeys = [\"4.8 m\", \"3.9 m\"]",
     )?;
     let grid = grid::grid(source, table)?;
-    let feet = feet::feet(source, &written.feet, grid.bays.lengths.len() + 1)?;
-    let modulus = modulus(source, written)?;
-    let sized = match &written.sizes {
-        Some(sizes) => unknown_sizes(source, written, sizes, &grid, &feet, modulus.as_ref().map(|(value, _)| *value))?,
-        None => known_sizes(source, written, &grid, &feet, modulus.is_some(), end())?,
+    let (bays, storeys) = (&grid.bays.lengths, &grid.storeys.lengths);
+    let stated = Stated {
+        material: material::material(source, written)?,
+        feet: feet::feet(source, &written.feet, bays.len() + 1)?,
+        joints: joints::joints(source, &written.joints)?,
+        gravity: gravity::gravity(source, &written.gravity, bays, storeys.len())?,
     };
-    let load = written.lateral.as_ref().ok_or_else(|| lateral::missing(end()))?;
-    let load = lateral::lateral(source, load, &grid.storeys.lengths)?;
+    let sized = sized::sized(source, written, &grid, &stated, end..end)?;
+    let load = written.lateral.as_ref().ok_or_else(|| lateral::missing(end..end))?;
+    let load = lateral::lateral(source, load, storeys)?;
     let parts = FrameParts {
         title: title(written),
         report_units,
-        bays: grid.bays.lengths.clone(),
-        storeys: grid.storeys.lengths.clone(),
+        bays: bays.clone(),
+        storeys: storeys.clone(),
         feet: sized.feet,
-        modulus: modulus.as_ref().map_or(1.0, |(value, _)| *value),
+        modulus: stated.modulus().unwrap_or(1.0),
         columns: sized.columns,
         beams: sized.beams,
         lateral: load.forces.clone(),
         sizes: sized.source,
     };
     let frame = Frame::new(parts).map_err(|fault| place(fault, &load, &sized.span, report_units))?;
+    let gravity = stated.gravity.as_ref().map(|gravity| gravity.loads.clone());
+    let options = AnalysisOptions { gravity, ..sized.options };
+    let options = AnalysisOptions::new(&frame, options).map_err(|fault| match &stated.joints {
+        Some(joints) => joints.place(fault, report_units.length()),
+        None => FileFault::new(fault, sized.span.clone()),
+    })?;
     let mut warnings = warning::lengths(source, &grid);
-    warnings.extend(modulus.as_ref().and_then(|(value, span)| warning::modulus(source, *value, span.clone())));
+    warnings.extend(stated.material.iter().flat_map(|material| material.warnings.clone()));
     warnings.extend(sized.warnings);
     warnings.extend(warning::of_frame(&frame, sized.span));
-    let modulus = modulus.map(|(_, span)| source.typed(span));
-    let echo = echo(&frame, &grid, &feet.typed, modulus, &sized.echo, &load);
-    Ok(FrameFile { frame, echo, sizes: sized.statement, warnings })
+    let echo = echo(&frame, &grid, &stated, &sized.echo, &load);
+    Ok(FrameFile { frame, echo, sizes: sized.statement, options, warnings })
 }
 
 /// The title on one line, without control characters.
@@ -84,115 +76,6 @@ fn report_units(source: Source, written: &Written) -> Result<ReportUnits, FileFa
     }
 }
 
-fn modulus(source: Source, written: &Written) -> Result<Option<(f64, Range<usize>)>, FileFault> {
-    let Some(table) = &written.material else { return Ok(None) };
-    let value = require(&table.get_ref().modulus, table.span(), "the modulus of elasticity", MODULUS)?;
-    Ok(Some((source.positive(value, Dimension::Modulus)?, value.span())))
-}
-
-const MODULUS: &str = "add [material] with modulus = \"30 GPa\" (concrete) or modulus = \"29000 ksi\" (steel)";
-
-fn known_sizes(
-    source: Source,
-    written: &Written,
-    grid: &Grid,
-    feet: &CheckedFeet,
-    has_modulus: bool,
-    end: Range<usize>,
-) -> Result<Sized, FileFault> {
-    let missing = |what, help| FileFault::new(FaultKind::Missing { what, help }, end.clone());
-    let columns = written.columns.as_ref().filter(|tables| !tables.get_ref().0.is_empty());
-    let beams = written.beams.as_ref().filter(|tables| !tables.get_ref().0.is_empty());
-    let columns = columns.ok_or_else(|| {
-        missing("the size of the columns", "add [[columns]] with an inertia or a rectangle; or, while sizes are unknown, [sizes] in place of [[columns]] and [[beams]]")
-    })?;
-    let beams = beams.ok_or_else(|| {
-        missing("the size of the beams", "add [[beams]] with an inertia or a rectangle; or, while sizes are unknown, [sizes] in place of [[columns]] and [[beams]]")
-    })?;
-    let made = members::columns(source, &columns.get_ref().0, grid)?;
-    let made_beams = members::beams(source, &beams.get_ref().0, grid)?;
-    if !has_modulus {
-        return Err(missing("the modulus of elasticity", MODULUS));
-    }
-    let within = model::within(source, &written.within)?;
-    let mut echo = made.echo;
-    echo.extend(made_beams.echo);
-    echo.extend(
-        written
-            .within
-            .as_ref()
-            .map(|table| Echo { what: "sizes within".into(), typed: model::echo_within(source, table.get_ref()) }),
-    );
-    Ok(Sized {
-        columns: made.sections,
-        beams: made_beams.sections,
-        feet: feet.feet.clone(),
-        source: SizeSource::Stated,
-        statement: SizeStatement::Stated { within },
-        echo,
-        warnings: made.warnings.into_iter().chain(made_beams.warnings).collect(),
-        span: made.without_area.unwrap_or(columns.span()),
-    })
-}
-
-fn unknown_sizes(
-    source: Source,
-    written: &Written,
-    sizes: &Spanned<Table<SizesWritten>>,
-    grid: &Grid,
-    feet: &CheckedFeet,
-    modulus: Option<f64>,
-) -> Result<Sized, FileFault> {
-    no_known_sizes(written, sizes)?;
-    model::one_statement(&written.within, sizes)?;
-    let table = sizes.get_ref();
-    if let Some(ratio) = &table.foot_spring {
-        feet::one_statement(feet, ratio.span())?;
-    }
-    let model = model::model(source, table, grid.storeys.lengths.len())?;
-    let real = model.end_column_inertia.is_some();
-    if let (Some(inertia), false) = (&table.end_column_inertia, modulus.is_some()) {
-        let kind = FaultKind::Missing {
-            what: "the modulus of elasticity, which a real inertia needs beside it,",
-            help: MODULUS,
-        };
-        return Err(FileFault::new(kind, inertia.span()));
-    }
-    if let (Some(spring), false) = (feet.spring(), real) {
-        return Err(FileFault::new(FaultKind::SpringNeedsInertia, spring));
-    }
-    let (bays, storeys) = (&grid.bays.lengths, &grid.storeys.lengths);
-    let assumed = model.assumed();
-    let made = assumed.sections(bays, storeys, |_| 1.0);
-    let springs = assumed.foot_springs(&made.columns[..=bays.len()], modulus.unwrap_or(1.0), storeys[0]);
-    Ok(Sized {
-        columns: made.columns,
-        beams: made.beams,
-        feet: springs.map_or_else(|| feet.feet.clone(), Feet::Springs),
-        source: if real { SizeSource::Assumed } else { SizeSource::AssumedRelative },
-        statement: SizeStatement::Model(model),
-        echo: model::echo(source, table, &model),
-        warnings: model::growing(table, &model),
-        span: sizes.span(),
-    })
-}
-
-fn no_known_sizes(written: &Written, sizes: &Spanned<Table<SizesWritten>>) -> Result<(), FileFault> {
-    let columns = written
-        .columns
-        .as_ref()
-        .and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[columns]]")));
-    let beams =
-        written.beams.as_ref().and_then(|tables| tables.get_ref().0.first().map(|table| (table.span(), "[[beams]]")));
-    let Some((span, second)) = columns.or(beams) else { return Ok(()) };
-    let kind = FaultKind::Conflict {
-        first: "[sizes]",
-        second,
-        help: "keep [[columns]] and [[beams]] where sizes are known, [sizes] alone where they are not",
-    };
-    Err(FileFault::new(kind, span).beside(sizes.span(), "given here"))
-}
-
 /// The place in the file of a fault that the frame itself found.
 fn place(fault: FrameFault, load: &Lateral, sizes: &Range<usize>, units: ReportUnits) -> FileFault {
     match fault {
@@ -206,16 +89,18 @@ fn place(fault: FrameFault, load: &Lateral, sizes: &Range<usize>, units: ReportU
     }
 }
 
-fn echo(frame: &Frame, grid: &Grid, feet: &str, modulus: Option<String>, sizes: &[Echo], load: &Lateral) -> Vec<Echo> {
+fn echo(frame: &Frame, grid: &Grid, stated: &Stated, sizes: &[Echo], load: &Lateral) -> Vec<Echo> {
     let line = |what: &str, typed: &str| Echo { what: what.into(), typed: typed.into() };
     let mut lines = vec![
         line("title", frame.title()),
         line("bays", &grid.bays.typed),
         line("storeys", &grid.storeys.typed),
-        line("feet", feet),
+        line("feet", &stated.feet.typed),
     ];
-    lines.extend(modulus.map(|typed| line("modulus", &typed)));
+    lines.extend(stated.material.iter().flat_map(|material| material.echo.clone()));
     lines.extend_from_slice(sizes);
+    lines.extend(stated.joints.iter().map(|joints| line("joints", &joints.typed)));
+    lines.extend(stated.gravity.iter().map(|gravity| line("vertical loads", &gravity.typed)));
     lines.push(line("lateral forces", &load.typed));
     lines
 }

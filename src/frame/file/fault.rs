@@ -1,7 +1,9 @@
 //! What can be wrong with a frame file: one kind for each mistake, with its place and its remedy.
 
+use super::position::position;
 use super::select::SelectError;
 use crate::frame::FrameFault;
+use crate::frame::options::OptionsFault;
 use crate::units::UnitError;
 use std::ops::Range;
 use thiserror::Error;
@@ -34,6 +36,13 @@ impl FileFault {
     /// How to mend it.
     pub fn help(&self) -> String {
         super::help::help(&self.kind)
+    }
+
+    /// Line and column in `text`, the text that was read, where the fault begins: both from 1, the column in characters.
+    ///
+    /// `\r\n` is one line break. A fault at the end of a text that ends in a line break stands on the line after it.
+    pub fn position(&self, text: &str) -> (usize, usize) {
+        position(text, self.span.start)
     }
 }
 
@@ -114,13 +123,27 @@ pub enum FaultKind {
         /// How many are allowed.
         most: usize,
     },
-    /// A list of floor forces of the wrong length.
-    #[error("{found} forces are given for {needed} storeys")]
-    ForceCount {
-        /// Forces in the list.
+    /// A list with another number of entries than the grid asks for.
+    #[error("{found} {what} are given for {needed} {of}")]
+    Count {
+        /// What the list holds, such as `forces`.
+        what: &'static str,
+        /// Entries in the list.
         found: usize,
-        /// Storeys in the grid.
+        /// What each entry is for, such as `storeys`.
+        of: &'static str,
+        /// How many the grid has of them.
         needed: usize,
+        /// What to write.
+        help: &'static str,
+    },
+    /// Shares of the column lines that do not make a whole.
+    #[error("the shares of the column lines must add up to 1; these add up to {}", rounded(*sum))]
+    ShareSum {
+        /// Their sum.
+        sum: f64,
+        /// What to write.
+        help: &'static str,
     },
     /// A range that is not two values.
     #[error("a range has two values, low and high; {found} given")]
@@ -185,12 +208,44 @@ pub enum FaultKind {
         /// A table that may stand in its place.
         table: Option<&'static str>,
     },
+    /// Rigid joints by a share of the joint, where a member's depth is not known.
+    #[error("joints.rigid is a share of the depths of members, and that of {member} is not known")]
+    NoDepth {
+        /// The first such member.
+        member: String,
+    },
+    /// Rigid zones that leave too little of a member.
+    #[error(
+        "the rigid zones of {member} take {zones:.3} {unit} of its {length:.3} {unit}; at least a tenth of the length must stay clear"
+    )]
+    ZonesTooLong {
+        /// The first such member.
+        member: String,
+        /// Both zones together, in the unit of the reports.
+        zones: f64,
+        /// The member's length between joint centres.
+        length: f64,
+        /// That unit.
+        unit: &'static str,
+    },
+    /// Vertical loads on a frame whose inertias are relative.
+    #[error("vertical loads need real column inertias, and [sizes] gives relative ones")]
+    GravityNeedsInertia,
     /// A foot spring in N m/rad on a frame whose inertias are relative.
     #[error("a foot spring in units needs real column inertias, and [sizes] gives relative ones")]
     SpringNeedsInertia,
     /// A fault of the frame itself that the checks above let through.
     #[error(transparent)]
     Frame(#[from] FrameFault),
+    /// A fault of the analysis options that the checks above let through.
+    #[error(transparent)]
+    Options(#[from] OptionsFault),
+}
+
+/// A sum with as many digits as its difference from 1 needs to be seen.
+fn rounded(sum: f64) -> String {
+    let text = format!("{sum:.9}");
+    text.trim_end_matches('0').trim_end_matches('.').into()
 }
 
 fn others(more: usize, members: &str) -> String {

@@ -15,15 +15,15 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::WrongForm { expected, .. } => wrong_form(expected),
         FaultKind::Unit(error) => error.help(),
         FaultKind::OutOfRange { help, .. } => help.clone(),
-        FaultKind::Missing { help, .. } | FaultKind::Conflict { help, .. } => (*help).into(),
+        FaultKind::Missing { help, .. }
+        | FaultKind::Conflict { help, .. }
+        | FaultKind::Count { help, .. }
+        | FaultKind::ShareSum { help, .. } => (*help).into(),
         FaultKind::NoBays => "give the bay widths from the left, for example bays = [\"7.2 m\", \"8.4 m\"]".into(),
         FaultKind::NoStoreys => {
             "give the storey heights from the ground up, for example storeys = [\"4.8 m\", \"3.9 m\"]".into()
         }
         FaultKind::TooMany { .. } => "check the count; a frame of that size is outside what this tool checks".into(),
-        FaultKind::ForceCount { .. } => {
-            "give one force for each floor from the lowest to the roof; a floor without force takes \"0 kN\"".into()
-        }
         FaultKind::RangeLength { .. } => "write [low, high], or a single value to fix it".into(),
         FaultKind::RangeReversed { low, high } => format!("write [{high}, {low}]"),
         FaultKind::Select(error) => error.help(),
@@ -41,13 +41,31 @@ pub(super) fn help(kind: &FaultKind) -> String {
         FaultKind::SpringNeedsInertia => {
             "give sizes.end_column_inertia and material.modulus, or state the spring as sizes.foot_spring, a ratio to 4 E I_c/h of its column".into()
         }
-        FaultKind::Frame(FrameFault::NoLoad) => THREE_WAYS.into(),
-        FaultKind::Frame(_) => "check the numbers of the frame and their units".into(),
+        FaultKind::NoDepth { .. } => {
+            "state lengths in place of the share, column = \"0.3 m\" and beam = \"0.25 m\", or give every member a rectangle".into()
+        }
+        FaultKind::ZonesTooLong { .. } => "make the rigid zones shorter, and check their units".into(),
+        FaultKind::GravityNeedsInertia => {
+            "give sizes.end_column_inertia and material.modulus, or leave [gravity] out".into()
+        }
+        FaultKind::Options(_) => "check the numbers of the options and their units".into(),
+        FaultKind::Frame(fault) => of_frame(fault).into(),
     }
 }
 
 /// The three forms of the table `[lateral]`.
 pub(super) const THREE_WAYS: &str = "write [lateral] with floors = [\"40 kN\", \"60 kN\"] from the lowest floor up, or base_shear = \"900 kN\" with shape = \"triangular\", or pressure = \"1.2 kPa\" with tributary = \"6 m\"";
+
+fn of_frame(fault: &FrameFault) -> &'static str {
+    match fault {
+        FrameFault::NoLoad => THREE_WAYS,
+        FrameFault::Negative { .. } => {
+            "give 0 or more; in a file, a beam that carries no moment takes stiffness_factor = 0"
+        }
+        FrameFault::NotPositive { .. } | FrameFault::NotFinite { .. } => "check the number, its unit and its factor",
+        _ => "check the numbers of the frame and their units",
+    }
+}
 
 fn unknown_key(key: &str, suggestion: Option<&str>, home: Option<&str>, known: &[String]) -> String {
     match (suggestion, home) {

@@ -81,7 +81,9 @@ fn by_floor(source: Source, floors: &Spanned<Repeated<Scalar>>, storeys: usize) 
     let forces: Vec<f64> =
         list.iter().map(|entry| source.quantity(entry, Dimension::Force)).collect::<Result<_, _>>()?;
     if list.len() != storeys {
-        return Err(FileFault::new(FaultKind::ForceCount { found: list.len(), needed: storeys }, floors.span()));
+        let help = "give one force for each floor from the lowest to the roof; a floor without force takes \"0 kN\"";
+        let kind = FaultKind::Count { what: "forces", found: list.len(), of: "storeys", needed: storeys, help };
+        return Err(FileFault::new(kind, floors.span()));
     }
     let typed: Vec<_> = list.iter().map(|entry| source.typed(entry.span())).collect();
     Ok(Lateral { forces, spans: list.iter().map(Spanned::span).collect(), span: floors.span(), typed: runs(&typed) })

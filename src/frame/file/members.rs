@@ -1,37 +1,60 @@
 //! Known sizes: the tables `[[columns]]` and `[[beams]]`, the later replacing the earlier member by member.
 
 use super::fault::{FaultKind, FileFault};
+use super::owners::{self, Owner, Selection};
 use super::scalar::{Scalar, Table};
-use super::select;
-use super::source::{Need, Source, require};
-use super::warning::{FileWarning, SIDE, WarningKind};
-use super::written::{BeamsWritten, ColumnsWritten, Maybe, RectangleWritten};
-use super::{Echo, grid::Grid};
+use super::size::{self, Size};
+use super::source::{Need, Source};
+use super::warning::{FileWarning, WarningKind};
+use super::written::{BeamsWritten, ColumnsWritten, Maybe};
+use super::{Echo, grid::Grid, select};
+use crate::frame::options::EndSpring;
 use crate::frame::{Section, bay_name, line_name};
-use crate::units::Dimension;
 use std::ops::Range;
 use toml::Spanned;
 
-/// Members of one kind, sized.
+/// Members of one kind, sized, in the order of [`crate::frame::FrameParts`].
 #[derive(Debug)]
 pub(super) struct Members {
-    /// In the order of [`crate::frame::FrameParts`].
     pub sections: Vec<Section>,
+    /// Effective shear areas, m2.
+    pub shear_areas: Vec<Option<f64>>,
+    /// Depths of rectangles, m.
+    pub depths: Vec<Option<f64>>,
+    /// Springs at the left and right end; rigid for columns.
+    pub springs: Vec<[EndSpring; 2]>,
     pub echo: Vec<Echo>,
     pub warnings: Vec<FileWarning>,
     /// The first table with an effect that states no area.
     pub without_area: Option<Range<usize>>,
+    /// The first member whose table states no rectangle, and that table.
+    pub without_depth: Option<(String, Range<usize>)>,
 }
 
 /// One table as checked.
 struct Checked {
-    levels: Vec<bool>,
-    places: Vec<bool>,
+    selection: Selection,
     section: Section,
-    /// The factor as typed, where it is stated.
-    factor: Option<(f64, String)>,
+    depth: Option<f64>,
+    shear_area: Option<f64>,
+    springs: [EndSpring; 2],
+    stated: [Option<Stated>; KEYS.len()],
     span: Range<usize>,
     echo: Echo,
+}
+
+/// Keys that a later table drops by not repeating them, and what its members then do.
+const KEYS: [(&str, &str); 3] = [
+    ("stiffness_factor", "take the factor 1"),
+    ("shear_area", "do not deform in shear"),
+    ("end_spring", "are joined rigidly"),
+];
+
+/// One of [`KEYS`] as a table states it.
+struct Stated {
+    typed: String,
+    /// Whether leaving it out would change anything.
+    matters: bool,
 }
 
 /// Checks all `[[columns]]` tables.
@@ -48,16 +71,23 @@ pub(super) fn columns(
         let table = written.get_ref();
         let levels = selected(source, &table.storeys, |text| select::levels(text, storeys, "storey"))?;
         let places = selected(source, &table.lines, |text| select::lines(text, lines))?;
-        let (mut section, mut typed) = column_size(source, table, written.span(), &mut warnings)?;
-        let factor = factor(source, &table.stiffness_factor, Need::Positive)?;
-        scale(&mut section, &mut typed, &factor);
-        let what = format!("columns, storeys {}, lines {}", levels.1, places.1);
-        let echo = Echo { what, typed };
-        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        let mut size = size::of_columns(source, table, written.span(), &mut warnings)?;
+        let factor = factor(source, &table.stiffness_factor, Need::Positive, &mut size)?;
+        let (shear_area, shear) = shear_area(source, &table.shear_area, &mut size, &mut warnings)?;
+        checked.push(Checked {
+            selection: Selection::new(&levels.0, &places.0),
+            section: size.section,
+            depth: size.sides.map(|[_, depth]| depth),
+            shear_area,
+            springs: [EndSpring::Rigid; 2],
+            stated: [factor, shear, None],
+            span: written.span(),
+            echo: Echo { what: format!("columns, storeys {}, lines {}", levels.1, places.1), typed: size.typed },
+        });
     }
     let name =
         |index: usize| format!("the column of storey {} on line {}", index / lines + 1, line_name(index % lines));
-    assign(checked, "columns", name, warnings)
+    assign(checked, [storeys, lines], "columns", name, warnings)
 }
 
 /// Checks all `[[beams]]` tables.
@@ -77,15 +107,23 @@ pub(super) fn beams(
         }
         let levels = selected(source, &table.floors, |text| select::levels(text, floors, "floor"))?;
         let places = selected(source, &table.bays, |text| select::bays(text, bays))?;
-        let (mut section, mut typed) = beam_size(source, table, written.span(), &mut warnings)?;
-        let factor = factor(source, &table.stiffness_factor, Need::ZeroOrMore)?;
-        scale(&mut section, &mut typed, &factor);
-        let what = format!("beams, floors {}, bays {}", levels.1, places.1);
-        let echo = Echo { what, typed };
-        checked.push(Checked { levels: levels.0, places: places.0, section, factor, span: written.span(), echo });
+        let mut size = size::of_beams(source, table, written.span(), &mut warnings)?;
+        let factor = factor(source, &table.stiffness_factor, Need::ZeroOrMore, &mut size)?;
+        let (shear_area, shear) = shear_area(source, &table.shear_area, &mut size, &mut warnings)?;
+        let (springs, spring) = end_springs(source, table, &mut size)?;
+        checked.push(Checked {
+            selection: Selection::new(&levels.0, &places.0),
+            section: size.section,
+            depth: size.sides.map(|[_, depth]| depth),
+            shear_area,
+            springs,
+            stated: [factor, shear, spring],
+            span: written.span(),
+            echo: Echo { what: format!("beams, floors {}, bays {}", levels.1, places.1), typed: size.typed },
+        });
     }
     let name = |index: usize| format!("the beam of floor {} in bay {}", index / bays + 1, bay_name(index % bays));
-    assign(checked, "beams", name, warnings)
+    assign(checked, [floors, bays], "beams", name, warnings)
 }
 
 /// Flags of a selection and the words it was made with; everything where it is left out.
@@ -101,160 +139,104 @@ fn selected(
     read(&text).map(|flags| (flags, text)).map_err(|error| FileFault::new(error, span))
 }
 
-const SIZE_HELP: &str = "each table states the whole size of the members it selects: add inertia = \"9e-4 m4\" or rectangle = { width = \"400 mm\", depth = \"600 mm\" }";
-
-fn column_size(
-    source: Source,
-    table: &ColumnsWritten,
-    span: Range<usize>,
-    warnings: &mut Vec<FileWarning>,
-) -> Result<(Section, String), FileFault> {
-    let keep_one = |second: &Spanned<Scalar>, name| {
-        let first = table.rectangle.as_ref().map_or(0..0, Spanned::span);
-        conflict(
-            "rectangle",
-            name,
-            "a rectangle gives both inertia and area: keep it, or inertia with area",
-            first,
-            second.span(),
-        )
-    };
-    match (&table.rectangle, &table.inertia, &table.area) {
-        (Some(_), Some(inertia), _) => Err(keep_one(inertia, "inertia")),
-        (Some(_), None, Some(area)) => Err(keep_one(area, "area")),
-        (Some(rectangle), None, None) => {
-            let ([width, depth], typed) = sides(source, rectangle, warnings)?;
-            Ok((Section { inertia: width * depth * depth * depth / 12.0, area: Some(width * depth) }, typed))
-        }
-        (None, inertia, area) => {
-            let inertia = require(inertia, span, "the size of these columns", SIZE_HELP)?;
-            let mut typed = format!("inertia {}", source.typed(inertia.span()));
-            let mut section = Section { inertia: source.positive(inertia, Dimension::Inertia)?, area: None };
-            if let Some(area) = area {
-                section.area = Some(source.positive(area, Dimension::Area)?);
-                typed += &format!(", area {}", source.typed(area.span()));
-            }
-            Ok((section, typed))
-        }
-    }
+/// Scales the inertia of `size` by the factor, where one is stated.
+fn factor(source: Source, written: &Maybe<Scalar>, need: Need, size: &mut Size) -> Result<Option<Stated>, FileFault> {
+    let Some(value) = written else { return Ok(None) };
+    let (number, typed) = (source.number(value, need)?, source.typed(value.span()));
+    size.section.inertia *= number;
+    size.typed += &format!(", stiffness factor {typed}");
+    Ok(Some(Stated { typed, matters: number != 1.0 }))
 }
 
-fn beam_size(
+fn shear_area(
+    source: Source,
+    written: &Maybe<Scalar>,
+    size: &mut Size,
+    warnings: &mut Vec<FileWarning>,
+) -> Result<(Option<f64>, Option<Stated>), FileFault> {
+    let Some(value) = written else { return Ok((None, None)) };
+    let area = size::shear_area(source, value, size, warnings)?;
+    let typed = source.typed(value.span());
+    size.typed += &format!(", shear area {typed}");
+    Ok((Some(area), Some(Stated { typed, matters: true })))
+}
+
+fn end_springs(
     source: Source,
     table: &BeamsWritten,
-    span: Range<usize>,
-    warnings: &mut Vec<FileWarning>,
-) -> Result<(Section, String), FileFault> {
-    match (&table.rectangle, &table.inertia) {
-        (Some(first), Some(second)) => Err(conflict(
-            "rectangle",
-            "inertia",
-            "a rectangle gives the inertia: keep one of the two",
-            first.span(),
-            second.span(),
-        )),
-        (Some(rectangle), None) => {
-            let ([width, depth], typed) = sides(source, rectangle, warnings)?;
-            Ok((Section { inertia: width * depth * depth * depth / 12.0, area: None }, typed))
-        }
-        (None, inertia) => {
-            let inertia = require(inertia, span, "the size of these beams", SIZE_HELP)?;
-            if let Ok(0.0) = source.quantity(inertia, Dimension::Inertia) {
-                let help = "a beam that carries no moment takes its inertia and stiffness_factor = 0";
-                return Err(source.out_of_range(inertia.span(), "an inertia must be more than 0", help));
-            }
-            let typed = format!("inertia {}", source.typed(inertia.span()));
-            Ok((Section { inertia: source.positive(inertia, Dimension::Inertia)?, area: None }, typed))
-        }
-    }
+    size: &mut Size,
+) -> Result<([EndSpring; 2], Option<Stated>), FileFault> {
+    let rigid = [EndSpring::Rigid; 2];
+    let Some(value) = &table.end_spring else { return Ok((rigid, None)) };
+    let (springs, typed) = size::end_springs(source, value)?;
+    size.typed += &format!(", end spring {typed}");
+    Ok((springs, Some(Stated { typed, matters: springs != rigid })))
 }
 
-fn conflict(
-    first: &'static str,
-    second: &'static str,
-    help: &'static str,
-    at: Range<usize>,
-    span: Range<usize>,
-) -> FileFault {
-    FileFault::new(FaultKind::Conflict { first, second, help }, span).beside(at, "given here")
-}
-
-/// Width and depth, m, and how they were typed.
-fn sides(
-    source: Source,
-    rectangle: &Spanned<Table<RectangleWritten>>,
-    warnings: &mut Vec<FileWarning>,
-) -> Result<([f64; 2], String), FileFault> {
-    let help = "write rectangle = { width = \"400 mm\", depth = \"600 mm\" }, the depth in the frame's plane";
-    let width = require(&rectangle.get_ref().width, rectangle.span(), "the width of the rectangle", help)?;
-    let depth = require(&rectangle.get_ref().depth, rectangle.span(), "the depth of the rectangle", help)?;
-    let mut lengths = [0.0; 2];
-    for (length, (side, name)) in lengths.iter_mut().zip([(width, "the width"), (depth, "the depth")]) {
-        *length = source.positive(side, Dimension::Length)?;
-        warnings.extend(SIDE.check(*length, &format!("{name} of the rectangle"), source, side.span()));
-    }
-    Ok((lengths, format!("rectangle {} x {}", source.typed(width.span()), source.typed(depth.span()))))
-}
-
-fn factor(source: Source, written: &Maybe<Scalar>, need: Need) -> Result<Option<(f64, String)>, FileFault> {
-    let read = |value: &Spanned<Scalar>| Ok((source.number(value, need)?, source.typed(value.span())));
-    written.as_ref().map(read).transpose()
-}
-
-fn scale(section: &mut Section, typed: &mut String, factor: &Option<(f64, String)>) {
-    if let Some((value, text)) = factor {
-        section.inertia *= value;
-        *typed += &format!(", stiffness factor {text}");
-    }
-}
-
-/// Gives every member the section of the last table that selects it.
+/// Gives every member the size of the last table that selects it.
 fn assign(
     tables: Vec<Checked>,
+    [levels, places]: [usize; 2],
     members: &'static str,
     name: impl Fn(usize) -> String,
     warnings: Vec<FileWarning>,
 ) -> Result<Members, FileFault> {
-    let Some(last) = tables.last() else {
-        return Err(FileFault::new(FaultKind::Unsized { first: name(0), more: 0, members }, 0..0));
-    };
-    let (levels, places) = (last.levels.len(), last.places.len());
-    let mut owners: Vec<Option<usize>> = vec![None; levels * places];
-    let mut warnings = warnings;
-    for (number, table) in tables.iter().enumerate() {
-        let mut lost = None;
-        for (index, owner) in owners.iter_mut().enumerate() {
-            if table.levels[index / places] && table.places[index % places] {
-                lost = lost.or(*owner);
-                *owner = Some(number);
-            }
-        }
-        warnings.extend(factor_lost(table, lost.map(|earlier| &tables[earlier])));
-    }
+    let selections: Vec<_> = tables.iter().map(|table| &table.selection).collect();
+    let owners = owners::owners(&selections, levels, places);
     let without: Vec<usize> = (0..owners.len()).filter(|index| owners[*index].is_none()).collect();
     if let Some(first) = without.first() {
         let kind = FaultKind::Unsized { first: name(*first), more: without.len() - 1, members };
-        return Err(FileFault::new(kind, last.span.clone()));
+        return Err(FileFault::new(kind, tables.last().map_or(0..0, |table| table.span.clone())));
     }
-    let unused = |number: usize| !owners.contains(&Some(number));
-    warnings.extend(
-        tables.iter().enumerate().filter(|(number, _)| unused(*number)).map(|(_, table)| no_effect(table, members)),
-    );
-    let bare = |number: &usize| !unused(*number) && tables[*number].section.area.is_none();
-    let without_area = (0..tables.len()).find(bare).map(|number| tables[number].span.clone());
-    let sections = owners.iter().flatten().map(|number| tables[*number].section).collect();
-    let echo = tables.into_iter().map(|table| table.echo).collect();
-    Ok(Members { sections, echo, warnings, without_area })
+    let owners: Vec<Owner> = owners.into_iter().flatten().collect();
+    let mut used = vec![false; tables.len()];
+    owners.iter().for_each(|owner| used[owner.last] = true);
+    let mut warnings = warnings;
+    warnings.extend(dropped(&tables, &owners));
+    let unused = tables.iter().zip(&used).filter(|(_, used)| !**used);
+    warnings.extend(unused.map(|(table, _)| no_effect(table, members)));
+    let bare = tables.iter().zip(&used).find(|(table, used)| **used && table.section.area.is_none());
+    let without_area = bare.map(|(table, _)| table.span.clone());
+    let owner = |index: usize| &tables[owners[index].last];
+    let shallow = (0..owners.len()).find(|index| owner(*index).depth.is_none());
+    let without_depth = shallow.map(|index| (name(index), owner(index).span.clone()));
+    Ok(Members {
+        sections: owners.iter().map(|owner| tables[owner.last].section).collect(),
+        shear_areas: owners.iter().map(|owner| tables[owner.last].shear_area).collect(),
+        depths: owners.iter().map(|owner| tables[owner.last].depth).collect(),
+        springs: owners.iter().map(|owner| tables[owner.last].springs).collect(),
+        echo: tables.into_iter().map(|table| table.echo).collect(),
+        warnings,
+        without_area,
+        without_depth,
+    })
 }
 
-fn factor_lost(table: &Checked, replaced: Option<&Checked>) -> Option<FileWarning> {
-    let (value, typed) = replaced?.factor.as_ref()?;
-    let lost = table.factor.is_none() && *value != 1.0;
-    lost.then(|| FileWarning::new(WarningKind::FactorLost { earlier: typed.clone() }, table.span.clone()))
+/// One warning for each table and key that it drops by taking members from a table that states the key.
+fn dropped(tables: &[Checked], owners: &[Owner]) -> Vec<FileWarning> {
+    let mut lost: Vec<[Option<usize>; KEYS.len()]> = vec![[None; KEYS.len()]; tables.len()];
+    for owner in owners {
+        let Some(replaced) = owner.replaced else { continue };
+        for (key, lost) in lost[owner.last].iter_mut().enumerate() {
+            let states = |number: usize| tables[number].stated[key].as_ref();
+            if states(owner.last).is_none() && states(replaced).is_some_and(|stated| stated.matters) {
+                lost.get_or_insert(replaced);
+            }
+        }
+    }
+    let warn = |(table, lost): (&Checked, [Option<usize>; KEYS.len()])| {
+        let each = lost.into_iter().enumerate().filter_map(|(key, replaced)| {
+            let earlier = tables[replaced?].stated[key].as_ref()?.typed.clone();
+            let (key, instead) = KEYS[key];
+            Some(FileWarning::new(WarningKind::Dropped { key, instead, earlier }, table.span.clone()))
+        });
+        each.collect::<Vec<_>>()
+    };
+    tables.iter().zip(lost).flat_map(warn).collect()
 }
 
 fn no_effect(table: &Checked, members: &'static str) -> FileWarning {
-    let selects = table.levels.contains(&true) && table.places.contains(&true);
-    let kind = if selects { WarningKind::Overridden { members } } else { WarningKind::SelectsNothing };
+    let nothing = table.selection.is_empty();
+    let kind = if nothing { WarningKind::SelectsNothing { members } } else { WarningKind::Overridden { members } };
     FileWarning::new(kind, table.span.clone())
 }

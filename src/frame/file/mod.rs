@@ -6,15 +6,22 @@
 mod assemble;
 mod fault;
 mod feet;
+mod gravity;
 mod grid;
 mod help;
+mod joints;
 mod lateral;
 mod locate;
+mod material;
 mod members;
 mod model;
+mod owners;
+mod position;
 mod scalar;
 mod schema;
 mod select;
+mod size;
+mod sized;
 mod source;
 mod translate;
 mod warning;
@@ -26,7 +33,9 @@ pub use select::SelectError;
 pub use warning::{FileWarning, WarningKind};
 
 use super::Frame;
+use super::options::AnalysisOptions;
 use super::sizes::{SizeModel, Within};
+use locate::Keys;
 
 /// A frame read from a file, with what reports tell about the file.
 #[derive(Debug, Clone, PartialEq)]
@@ -37,6 +46,8 @@ pub struct FrameFile {
     pub echo: Vec<Echo>,
     /// Whether sizes are known, and how far they may vary.
     pub sizes: SizeStatement,
+    /// What the exact analyses are to take into account beyond plain members.
+    pub options: AnalysisOptions,
     /// What is allowed but looks like a slip.
     pub warnings: Vec<FileWarning>,
 }
@@ -72,28 +83,26 @@ pub fn parse(text: &str) -> Result<FrameFile, FileFault> {
         let written = written(text)?;
         assemble::assemble(source::Source(text), &written)
     };
-    let named =
-        |span: &std::ops::Range<usize>| if span.is_empty() { String::new() } else { locate::key_at(text, span) };
     match read() {
+        Ok(file) if file.warnings.is_empty() => Ok(file),
         Ok(mut file) => {
+            let keys = Keys::read(text);
             file.warnings.sort_by_key(|warning| warning.span.start);
-            for warning in &mut file.warnings {
-                warning.key = named(&warning.span);
-            }
+            file.warnings.iter_mut().for_each(|warning| warning.key = keys.name(&warning.span));
             Ok(file)
         }
         Err(fault) if matches!(*fault.kind, FaultKind::Syntax { .. }) => Err(fault),
-        Err(fault) => Err(FileFault { key: named(&fault.span), ..fault }),
+        Err(fault) => Err(FileFault { key: Keys::read(text).name(&fault.span), ..fault }),
     }
 }
 
 fn written(text: &str) -> Result<written::Written, FileFault> {
-    let document = toml::Deserializer::parse(text).map_err(|error| translate::translate(&error, text))?;
-    let empty = toml::de::DeTable::parse(text).is_ok_and(|table| table.get_ref().is_empty());
-    if empty {
+    let fault = |error| translate::translate(&error, text);
+    let document = toml::de::DeTable::parse(text).map_err(fault)?;
+    if document.get_ref().is_empty() {
         return Err(FileFault::new(FaultKind::Empty, 0..0));
     }
-    serde::Deserialize::deserialize(document).map_err(|error| translate::translate(&error, text))
+    serde::Deserialize::deserialize(toml::Deserializer::from(document)).map_err(fault)
 }
 
 #[cfg(test)]

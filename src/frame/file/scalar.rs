@@ -66,6 +66,20 @@ impl Expecting for Scalar {
     const EXPECTING: &str = "a list such as [\"40 kN\", \"60 kN\"] with a force for each floor";
 }
 
+/// One of a list of shares: a number without unit.
+#[derive(Debug)]
+pub(super) struct Share(pub Scalar);
+
+impl<'de> Deserialize<'de> for Share {
+    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
+        Scalar::deserialize(deserializer).map(Self)
+    }
+}
+
+impl Expecting for Share {
+    const EXPECTING: &str = "a list such as [0.2, 0.3, 0.3, 0.2] with a share for each column line";
+}
+
 /// A list of values, or a table that stands for one.
 #[derive(Debug)]
 pub(super) enum ListOr<T> {

@@ -1,6 +1,6 @@
 //! The JSON schema of the frame file, for editors.
 
-use super::written::{EqualBays, EqualStoreys, PowerWritten, SpringWritten, Written};
+use super::written::{EndSpringsWritten, EqualBays, EqualStoreys, PowerWritten, SpringWritten, Written};
 use crate::frame::{MAX_BAYS, MAX_STOREYS};
 use schemars::generate::SchemaSettings;
 use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
@@ -72,6 +72,34 @@ pub(super) fn modulus(_: &mut SchemaGenerator) -> Schema {
 fn pressure_like(examples: [&str; 2]) -> Schema {
     let quotient = r"[kMG]?N\s*/\s*[cm]?m\^?[2²]|(kips?|lbf?|lbs|kgf|tf)\s*/\s*(in|ft|c?m)\^?[2²]";
     composed(&format!("[kMG]?Pa|psi|ksi|psf|ksf|{quotient}"), examples)
+}
+
+pub(super) fn shear_modulus(_: &mut SchemaGenerator) -> Schema {
+    pressure_like(["12 GPa", "11200 ksi"])
+}
+
+pub(super) fn poisson(_: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "type": "number", "minimum": 0, "maximum": 0.5 })
+}
+
+pub(super) fn shear_area(generator: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "anyOf": [{ "const": "5/6" }, area(generator)] })
+}
+
+pub(super) fn one_end_spring(generator: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "anyOf": [{ "enum": ["rigid", "hinge"] }, rotational_stiffness(generator)] })
+}
+
+pub(super) fn end_spring(generator: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "anyOf": [one_end_spring(generator), generator.subschema_for::<EndSpringsWritten>()] })
+}
+
+pub(super) fn share(_: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "type": "number", "minimum": 0, "maximum": 1 })
+}
+
+pub(super) fn shares(generator: &mut SchemaGenerator) -> Schema {
+    json_schema!({ "type": "array", "items": share(generator), "minItems": 2, "maxItems": MAX_BAYS + 1 })
 }
 
 pub(super) fn rotational_stiffness(_: &mut SchemaGenerator) -> Schema {

@@ -24,6 +24,10 @@ pub(super) enum Need {
     OneOrMore,
     /// 0 to 10.
     Power,
+    /// 0 to 1.
+    Share,
+    /// 0 to 0.5.
+    Poisson,
 }
 
 impl Need {
@@ -33,7 +37,9 @@ impl Need {
             Self::Positive => (number > 0.0, "it must be more than 0"),
             Self::ZeroOrMore => (number >= 0.0, "it must be 0 or more"),
             Self::OneOrMore => (number >= 1.0, "it must be 1 or more"),
-            Self::Power => ((0.0..=10.0).contains(&number), "it must be 0 to 10"),
+            Self::Power => ((0.0..=10.0).contains(&number), "it must lie between 0 and 10"),
+            Self::Share => ((0.0..=1.0).contains(&number), "it is a share and must lie between 0 and 1"),
+            Self::Poisson => ((0.0..=0.5).contains(&number), "Poisson's ratio must lie between 0 and 0.5"),
         };
         if !number.is_finite() {
             return Some("it must be a finite number");
@@ -51,6 +57,8 @@ impl Need {
             Self::ZeroOrMore => "write a number without unit, such as 0.35; 0 is a beam that carries no moment",
             Self::OneOrMore => "it is a factor either way: 1.15 means from 1/1.15 to 1.15 times, 1 means exact",
             Self::Power => "write a number without unit, such as 1.5",
+            Self::Share => "write a number without unit, such as 0.5",
+            Self::Poisson => "write a number without unit: about 0.2 for concrete, 0.3 for steel",
         }
     }
 }
@@ -119,7 +127,8 @@ impl Source<'_> {
         self.number_at(value.get_ref(), value.span(), need)
     }
 
-    fn number_at(&self, value: &Scalar, span: Range<usize>, need: Need) -> Result<f64, FileFault> {
+    /// The same for a number at a place.
+    pub fn number_at(&self, value: &Scalar, span: Range<usize>, need: Need) -> Result<f64, FileFault> {
         let Scalar::Number(number) = value else {
             let found = format!("the text \"{}\"", self.typed(span.clone()));
             return Err(FileFault::new(

@@ -2,6 +2,9 @@ use super::*;
 use crate::frame::sizes::Range;
 use crate::frame::{Feet, SizeSource};
 
+mod mutations;
+mod options;
+
 const GRID: &str =
     "[grid]\nbays = [\"6 m\", \"9 m\"]\nstoreys = [\"5 m\", \"4 m\", \"4 m\"]\n[material]\nmodulus = \"30 GPa\"\n";
 const MEMBERS: &str = "[[columns]]\ninertia = \"3e-3 m4\"\narea = \"0.2 m2\"\n[[beams]]\ninertia = \"5e-3 m4\"\n";
@@ -33,7 +36,9 @@ fn a_later_table_replaces_the_whole_size_of_its_members() {
     assert_eq!(echoed(&file, "columns, storeys all, lines all"), "rectangle 400 mm x 600 mm, stiffness factor 0.7");
     assert_eq!(echoed(&file, "beams, floors roof, bays B-C"), "rectangle 300 mm x 1 m, stiffness factor 0");
     let kinds: Vec<_> = file.warnings.iter().map(|warning| warning.kind.clone()).collect();
-    assert!(kinds.contains(&WarningKind::FactorLost { earlier: "0.7".into() }), "{kinds:?}");
+    let instead = "take the factor 1";
+    let dropped = WarningKind::Dropped { key: "stiffness_factor", instead, earlier: "0.7".into() };
+    assert!(kinds.contains(&dropped), "{kinds:?}");
     assert!(kinds.iter().any(|kind| matches!(kind, WarningKind::Frame(_))), "{kinds:?}");
     assert_eq!(file.sizes, SizeStatement::Stated { within: None });
 }
@@ -48,10 +53,10 @@ fn tables_without_effect_and_unusual_numbers_are_warned_about() {
     let file = read(&text);
     let messages: Vec<_> = file.warnings.iter().map(|warning| format!("{} [{}]", warning, warning.key)).collect();
     let expected = [
-        "the height of storey 1 is `50 ft`; usual is 2 to 15 m (7 to 50 ft) [grid.storeys, entry 1]",
-        "the modulus of elasticity is `30 MPa`; usual is 5 to 250 GPa (700 to 36000 ksi) [material.modulus]",
+        "the height of storey 1 is `50 ft`; 2 to 15 m (7 to 49 ft) is usual [grid.storeys, entry 1]",
+        "the modulus of elasticity is `30 MPa`; 5 to 250 GPa (730 to 36000 ksi) is usual [material.modulus]",
         "this table has no effect: later tables replace the size of all beams it selects [beams, table 1]",
-        "this table selects nothing [beams, table 3]",
+        "this table selects no beams: the frame has none of those it names [beams, table 3]",
     ];
     assert_eq!(messages, expected);
 }
@@ -159,6 +164,38 @@ fn places_are_named_and_lie_in_the_text() {
     let windows = text.replace('\n', "\r\n");
     let fault = parse(&windows).unwrap_err();
     assert_eq!(&windows[fault.span.clone()], "\"0.2 m\"");
+}
+
+#[test]
+fn faults_and_warnings_have_a_line_and_a_column() {
+    let text = format!("title = \"Wïng\"\n{GRID}{}[[beams]]\ninertia = \"6e-3 m4\"\n{LOAD}", MEMBERS);
+    let find = |text: &str, part: &str| 1 + text[..text.find(part).unwrap()].matches('\n').count();
+    for text in [text.clone(), text.replace('\n', "\r\n")] {
+        let warning = &read(&text).warnings[0];
+        assert_eq!((warning.key.as_str(), warning.position(&text)), ("beams, table 1", (find(&text, "[[beams]]"), 1)));
+        let broken = text.replace("area = ", "stiffness_factor = 1 # Fläche\narea = ").replace("0.2 m2", "0,2 m2");
+        assert_eq!(parse(&broken).unwrap_err().position(&broken), (find(&broken, "0,2 m2"), 8));
+        let letters = broken.replace("area = ", "rectangle = { width = \"ä\", depth = ").replace("m2\"", "m2\" }");
+        let fault = parse(&letters).unwrap_err();
+        assert_eq!((fault.key.as_str(), fault.position(&letters).1), ("columns, table 1, inertia", 11));
+    }
+    let end = format!("{GRID}{MEMBERS}# Ende ß");
+    let line = end.lines().count();
+    assert_eq!(parse(&end).unwrap_err().position(&end), (line, 9));
+}
+
+#[test]
+fn a_negative_inertia_of_a_beam_is_called_negative() {
+    let mut parts = read(&format!("{GRID}{MEMBERS}{LOAD}")).frame.parts().clone();
+    parts.beams[3].inertia = -1e-3;
+    let fault = crate::frame::Frame::new(parts.clone()).unwrap_err();
+    assert_eq!(fault.to_string(), "the inertia of the beam of floor 2 in bay B-C is -0.001, but must not be negative");
+    assert!(help::help(&fault.into()).contains("stiffness_factor = 0"));
+    parts.beams[3].inertia = f64::NAN;
+    let fault = crate::frame::Frame::new(parts.clone()).unwrap_err();
+    assert_eq!(fault.to_string(), "the inertia of the beam of floor 2 in bay B-C is NaN, but must be a finite number");
+    parts.beams[3].inertia = 0.0;
+    assert!(crate::frame::Frame::new(parts).is_ok());
 }
 
 #[test]

@@ -1,7 +1,7 @@
 //! From the messages of the TOML reader to the faults of a frame file.
 
 use super::fault::{FaultKind, FileFault};
-use super::locate;
+use super::locate::Keys;
 use std::ops::Range;
 
 /// Tables of the file and their keys, to tell where a misplaced key belongs.
@@ -9,9 +9,12 @@ const HOMES: &[(&str, &[&str])] = &[
     ("before the first [table], at the top of the file", &["title", "report_units", "within"]),
     ("in the table [grid]", &["storeys", "bays"]),
     ("in the table [feet]", &["fixity"]),
-    ("in the table [material]", &["modulus"]),
+    ("in the table [material]", &["modulus", "shear_modulus", "poisson"]),
+    ("in the table [joints]", &["rigid"]),
+    ("inside { left = \"80 MN m/rad\", right = \"hinge\" }, the value of end_spring", &["left", "right"]),
     ("in the table [lateral]", &["base_shear", "shape", "pressure", "tributary"]),
-    ("in a table [[columns]] or [[beams]]", &["inertia", "rectangle", "stiffness_factor"]),
+    ("in a table [[columns]] or [[beams]]", &["inertia", "rectangle", "stiffness_factor", "shear_area"]),
+    ("in a table [[beams]]", &["end_spring"]),
     (
         "in the table [sizes]",
         &["beam_to_column", "interior_to_end", "tier", "taper", "beam_taper", "roof_beam", "span_power", "scatter"],
@@ -61,7 +64,7 @@ fn duplicate(text: &str, span: Range<usize>) -> FileFault {
     let line_start = text[..span.start].rfind('\n').map_or(0, |at| at + 1);
     let header = text[line_start..].lines().next().unwrap_or_default().trim();
     let same_header = || text[..line_start].find(header).map(|at| at..at + header.len());
-    let first = if header.starts_with('[') { same_header() } else { locate::earlier_key(text, &key, span.start) };
+    let first = if header.starts_with('[') { same_header() } else { Keys::read(text).earlier_key(&key, span.start) };
     let fault = FileFault::new(FaultKind::DuplicateKey { key }, span);
     match first {
         Some(first) => fault.beside(first, "given here first"),

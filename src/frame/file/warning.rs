@@ -1,6 +1,7 @@
 //! What is allowed in a frame file but looks like a slip.
 
 use super::grid::Grid;
+use super::position::position;
 use super::source::Source;
 use crate::frame::{Frame, FrameWarning, TALL_STOREY, bay_name};
 use std::ops::Range;
@@ -23,16 +24,32 @@ impl FileWarning {
         Self { kind, span, key: String::new() }
     }
 
+    /// Line and column in `text`, the text that was read, where the warning belongs: both from 1, the column in
+    /// characters, `\r\n` being one line break.
+    pub fn position(&self, text: &str) -> (usize, usize) {
+        position(text, self.span.start)
+    }
+
     /// What to look at.
     pub fn help(&self) -> &'static str {
         match self.kind {
             WarningKind::Unusual { .. } => "check the number and its unit",
             WarningKind::Overridden { .. } => "take the table out, or put it after the tables that replace it",
-            WarningKind::SelectsNothing => "the frame has no such members; take the table out",
-            WarningKind::FactorLost { .. } => {
-                "a later table replaces the whole size: repeat stiffness_factor in it, or write stiffness_factor = 1"
+            WarningKind::SelectsNothing { .. } => {
+                "two lines have no interior line, and one or two bays no interior bay: take the table out"
             }
-            WarningKind::Growing => "members usually get smaller up the height",
+            WarningKind::Dropped { key, .. } => match key {
+                "stiffness_factor" => {
+                    "a later table replaces the whole size: repeat stiffness_factor in it, or write stiffness_factor = 1 if that is meant"
+                }
+                "end_spring" => {
+                    "a later table replaces the whole size: repeat end_spring in it, or write end_spring = \"rigid\" if that is meant"
+                }
+                _ => "a later table replaces the whole size: repeat the key in it, or take it out of the earlier table",
+            },
+            WarningKind::Growing => {
+                "members usually get smaller up the height: write a ratio of 1 or less unless this is meant"
+            }
             WarningKind::Frame(FrameWarning::SomeAreas { .. }) => "add area to the tables of columns that have none",
             WarningKind::Frame(_) => "check the numbers of the frame",
         }
@@ -43,7 +60,7 @@ impl FileWarning {
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum WarningKind {
     /// A quantity outside the usual range.
-    #[error("{what} is `{typed}`; usual is {usual}")]
+    #[error("{what} is `{typed}`; {usual} is usual")]
     Unusual {
         /// The quantity.
         what: String,
@@ -59,16 +76,23 @@ pub enum WarningKind {
         members: &'static str,
     },
     /// A table that selects no member.
-    #[error("this table selects nothing")]
-    SelectsNothing,
-    /// A stiffness factor that a later table drops by not repeating it.
-    #[error("this table states no stiffness factor and takes 1, but it replaces a size that had {earlier}")]
-    FactorLost {
-        /// The factor of the replaced table, as typed.
+    #[error("this table selects no {members}: the frame has none of those it names")]
+    SelectsNothing {
+        /// `columns` or `beams`.
+        members: &'static str,
+    },
+    /// A stiffness factor, shear area or end spring that a later table drops by not repeating it.
+    #[error("this table states no {key}, so its members {instead}, but the table it replaces has {key} {earlier}")]
+    Dropped {
+        /// The key.
+        key: &'static str,
+        /// What the members do without it.
+        instead: &'static str,
+        /// The value in the replaced table, as typed.
         earlier: String,
     },
     /// Sizes that grow upward.
-    #[error("values above 1 make members grow from one tier to the next")]
+    #[error("a taper above 1 makes members larger from each tier to the one above")]
     Growing,
     /// A warning of the frame itself.
     #[error(transparent)]
@@ -82,8 +106,8 @@ struct Usual {
     words: &'static str,
 }
 
-const HEIGHT: Usual = Usual { low: 2.0, high: TALL_STOREY, words: "2 to 15 m (7 to 50 ft)" };
-const WIDTH: Usual = Usual { low: 1.5, high: 40.0, words: "1.5 to 40 m (5 to 130 ft)" };
+const HEIGHT: Usual = Usual { low: 2.0, high: TALL_STOREY, words: "2 to 15 m (7 to 49 ft)" };
+const WIDTH: Usual = Usual { low: 1.5, high: 40.0, words: "1.5 to 40 m (5 to 131 ft)" };
 pub(super) const SIDE: UsualSide = UsualSide;
 
 /// Usual sides of a solid rectangle. Common practice.
@@ -120,8 +144,16 @@ pub(super) fn lengths(source: Source, grid: &Grid) -> Vec<FileWarning> {
 
 /// A modulus outside that of timber, concrete and steel, the usual slip being MPa for GPa.
 pub(super) fn modulus(source: Source, value: f64, span: Range<usize>) -> Option<FileWarning> {
-    let usual = Usual { low: 5e9, high: 2.5e11, words: "5 to 250 GPa (700 to 36000 ksi)" };
+    let usual = Usual { low: 5e9, high: 2.5e11, words: "5 to 250 GPa (730 to 36000 ksi)" };
     unusual(value, &usual, || "the modulus of elasticity".into(), source, span)
+}
+
+/// A shear modulus that does not go with the modulus of elasticity, the usual slip being MPa for GPa. Isotropic materials
+/// have E/3 to E/2, timber about E/16 (common practice).
+pub(super) fn shear_modulus(source: Source, value: f64, modulus: f64, span: Range<usize>) -> Option<FileWarning> {
+    let words = "a third to a half of the modulus of elasticity, for timber about a sixteenth,";
+    let usual = Usual { low: modulus / 25.0, high: modulus / 1.99, words };
+    unusual(value, &usual, || "the shear modulus".into(), source, span)
 }
 
 fn unusual(

@@ -2,7 +2,7 @@
 //!
 //! The comments on the keys are the descriptions in the JSON schema.
 
-use super::scalar::{Expecting, ListOr, Repeated, Scalar, Spread, Table, TextOr};
+use super::scalar::{Expecting, ListOr, Repeated, Scalar, Share, Spread, Table, TextOr};
 use super::schema;
 use schemars::JsonSchema;
 use serde::Deserialize;
@@ -44,6 +44,13 @@ pub(super) struct Written {
     /// What the sizes may be while they are unknown, in place of [[columns]] and [[beams]]. Every key has a default.
     #[schemars(schema_with = "schema::table::<SizesWritten>")]
     pub sizes: Maybe<Table<SizesWritten>>,
+    /// Joints of a size: the parts of the members inside them do not bend. For the exact analyses. Left out, joints are
+    /// points.
+    #[schemars(schema_with = "schema::table::<JointsWritten>")]
+    pub joints: Maybe<Table<JointsWritten>>,
+    /// Vertical loads. Given, a second-order analysis is run beside the first-order one.
+    #[schemars(schema_with = "schema::table::<GravityWritten>")]
+    pub gravity: Maybe<Table<GravityWritten>>,
     /// Lateral forces, to the right: `floors`, or `base_shear` with `shape`, or `pressure` with `tributary`.
     #[schemars(schema_with = "schema::table::<LateralWritten>")]
     pub lateral: Maybe<Table<LateralWritten>>,
@@ -132,6 +139,12 @@ pub(super) struct MaterialWritten {
     /// Modulus of elasticity.
     #[schemars(schema_with = "schema::modulus")]
     pub modulus: Maybe<Scalar>,
+    /// Shear modulus, or `poisson` in its place. Needed only where a shear area is given.
+    #[schemars(schema_with = "schema::shear_modulus")]
+    pub shear_modulus: Maybe<Scalar>,
+    /// Poisson's ratio, 0 to 0.5, in place of `shear_modulus`: G = E/(2(1 + ratio)).
+    #[schemars(schema_with = "schema::poisson")]
+    pub poisson: Maybe<Scalar>,
 }
 
 /// Columns of one size.
@@ -157,10 +170,14 @@ pub(super) struct ColumnsWritten {
     /// Multiplies the inertia, not the area, for cracked concrete. More than 0, default 1.
     #[schemars(schema_with = "schema::positive_number")]
     pub stiffness_factor: Maybe<Scalar>,
+    /// Area effective in shear; with `rectangle` also "5/6" of it. The stiffness factor leaves it alone. Left out, the
+    /// columns do not deform in shear.
+    #[schemars(schema_with = "schema::shear_area")]
+    pub shear_area: Maybe<Scalar>,
 }
 
 impl Expecting for ColumnsWritten {
-    const EXPECTING: &str = "a [[columns]] in double brackets";
+    const EXPECTING: &str = "[[columns]] in double brackets";
 }
 
 /// Beams of one size.
@@ -183,13 +200,77 @@ pub(super) struct BeamsWritten {
     /// Multiplies the inertia, for cracked concrete. Default 1; 0 for a beam that carries no moment.
     #[schemars(schema_with = "schema::factor")]
     pub stiffness_factor: Maybe<Scalar>,
+    /// Area effective in shear; with `rectangle` also "5/6" of it. The stiffness factor leaves it alone. Left out, the
+    /// beams do not deform in shear.
+    #[schemars(schema_with = "schema::shear_area")]
+    pub shear_area: Maybe<Scalar>,
+    /// Rotational spring at both ends: a stiffness, "rigid" or "hinge"; or { left = "80 MN m/rad", right = "hinge" }.
+    /// Default "rigid".
+    #[schemars(schema_with = "schema::end_spring")]
+    pub end_spring: Maybe<TextOr<EndSpringsWritten>>,
     /// Refused with a reason; here so that the reason can be given.
     #[schemars(skip)]
     pub area: Maybe<Scalar>,
 }
 
 impl Expecting for BeamsWritten {
-    const EXPECTING: &str = "a [[beams]] in double brackets";
+    const EXPECTING: &str = "[[beams]] in double brackets";
+}
+
+/// Springs at the two ends of a beam.
+#[derive(Debug, Default, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields, default)]
+#[schemars(rename = "EndSprings")]
+pub(super) struct EndSpringsWritten {
+    /// Left end: a stiffness, "rigid" or "hinge". Default "rigid".
+    #[schemars(schema_with = "schema::one_end_spring")]
+    pub left: Maybe<Scalar>,
+    /// Right end: a stiffness, "rigid" or "hinge". Default "rigid".
+    #[schemars(schema_with = "schema::one_end_spring")]
+    pub right: Maybe<Scalar>,
+}
+
+impl Expecting for EndSpringsWritten {
+    const EXPECTING: &str =
+        "\"80 MN m/rad\", \"rigid\", \"hinge\" or a table such as { left = \"80 MN m/rad\", right = \"hinge\" }";
+}
+
+/// Rigid zones where members meet: `rigid`, or `column` and `beam`.
+#[derive(Debug, Default, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Joints")]
+pub(super) struct JointsWritten {
+    /// Share of the joint that is rigid, 0 to 1: half the column depth into beams and half the beam depth into columns,
+    /// times the share. Needs a rectangle for every member.
+    #[schemars(schema_with = "schema::share")]
+    pub rigid: Maybe<Scalar>,
+    /// Length of the rigid zone at each end of the columns; the feet at the ground have none.
+    #[schemars(schema_with = "schema::length")]
+    pub column: Maybe<Scalar>,
+    /// Length of the rigid zone at each end of the beams.
+    #[schemars(schema_with = "schema::length")]
+    pub beam: Maybe<Scalar>,
+}
+
+impl Expecting for JointsWritten {
+    const EXPECTING: &str = "the table [joints]";
+}
+
+/// Vertical loads for the second-order analysis.
+#[derive(Debug, Default, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields, default)]
+#[schemars(rename = "Gravity", extend("required" = ["floors"]))]
+pub(super) struct GravityWritten {
+    /// Total vertical load added at each floor, from the lowest up to the roof, 0 or more.
+    #[schemars(schema_with = "schema::forces")]
+    pub floors: Maybe<Repeated<Scalar>>,
+    /// Share of each column line from the left; they add up to 1. Left out, lines carry their tributary width.
+    #[schemars(schema_with = "schema::shares")]
+    pub lines: Maybe<Repeated<Share>>,
+}
+
+impl Expecting for GravityWritten {
+    const EXPECTING: &str = "the table [gravity]";
 }
 
 /// A solid rectangle.

@@ -7,7 +7,7 @@ use crate::units::{self, Dimension, ReportUnits};
 pub(super) fn text(options: &TemplateOptions) -> String {
     let schema = if options.schema_line { "#:schema ./frame.schema.json\n" } else { "" };
     let sizes = if options.sizes_known { known(options) } else { unknown(options) };
-    [schema.into(), head(options), grid(options), feet(options), sizes, lateral(options)].concat()
+    [schema.into(), head(options), grid(options), feet(options), sizes, exact(options), lateral(options)].concat()
 }
 
 fn head(options: &TemplateOptions) -> String {
@@ -83,24 +83,31 @@ fn known(options: &TemplateOptions) -> String {
         ReportUnits::Metric => concrete(options),
         ReportUnits::Us => steel(options),
     };
+    let [shear, shear_area, spring] = match options.units {
+        ReportUnits::Metric => ["poisson = 0.2", "shear_area = \"5/6\"", "end_spring = \"80 MN m/rad\""],
+        ReportUnits::Us => ["poisson = 0.3", "shear_area = \"20 in2\"", "end_spring = \"60000 kip ft/rad\""],
+    };
     let interior = if options.bays > 1 {
-        format!("[[columns]]\nstoreys = \"all\"\nlines   = \"interior\"\n{column_interior}\n\n")
+        format!("[[columns]]\nstoreys = \"all\"\nlines   = \"interior\"\n{column_interior}\n# {shear_area}\n\n")
     } else {
         String::new()
     };
     format!(
         r#"[material]
 modulus = "{}"                  # concrete about 30 GPa, steel 200 GPa or 29000 ksi
+# {shear}                     # or shear_modulus; needed beside a shear_area
 
 # THE SIZES BELOW ARE PROPOSALS TO BE REPLACED BY YOURS.
 # Each table states the whole size of the members it selects; a later table replaces an earlier one.
 # storeys: "all", "2", "1-3", "4-roof"; lines: "all", "end", "interior", "A", "A,D", "B-C".
 # Size: inertia = "9e-4 m4" with area = "0.24 m2", or rectangle = {{ width = "400 mm", depth = "600 mm" }}, the depth in
-# the frame's plane. stiffness_factor scales the inertia for cracked concrete.
+# the frame's plane. stiffness_factor scales the inertia for cracked concrete. Members deform in shear where shear_area is
+# given: an area such as "0.2 m2" or "29 in2", or "5/6" of a rectangle.
 [[columns]]
 storeys = "all"
 lines   = "end"
 {column_end}
+# {shear_area}
 
 {interior}# floors: "all", "1-3", "roof"; bays: "all", "end", "interior", "A-B" for one bay, "A-D" for the bays between.
 # Beams take no area: floors are rigid in their own plane.
@@ -108,6 +115,8 @@ lines   = "end"
 floors = "all"
 bays   = "all"
 {beam}
+# {shear_area}
+# {spring}   # of both ends; or "hinge"; or {{ left = "hinge", right = "rigid" }}
 
 "#,
         modulus(options.units)
@@ -168,6 +177,36 @@ fn unknown(options: &TemplateOptions) -> String {
 
 "#,
         modulus(options.units)
+    )
+}
+
+/// Tables for the exact analyses that may be left out, as comments.
+fn exact(options: &TemplateOptions) -> String {
+    let [column, beam, load] = match options.units {
+        ReportUnits::Metric => ["\"0.3 m\"", "\"0.3 m\"", "900 kN"],
+        ReportUnits::Us => ["\"9 in\"", "\"7 in\"", "200 kip"],
+    };
+    let rigid = if options.sizes_known && options.units == ReportUnits::Metric {
+        "# rigid  = 0.5      # a share of the joint, where every member is a rectangle; or lengths:\n"
+    } else {
+        ""
+    };
+    let loads = match options.storeys {
+        1..=12 => list(&vec![load.to_string(); options.storeys]),
+        _ => format!("[\"{load}\", \"{load}\", ...]"),
+    };
+    let needs = if options.sizes_known { "" } else { "; needs end_column_inertia" };
+    format!(
+        r#"# The exact analyses can take more into account; take the # away where it applies.
+# [joints]           # the parts of members inside the joints do not bend
+{rigid}# column = {column:<8} # rigid length at each end of the columns, up to half the beam depth
+# beam   = {beam:<8} # rigid length at each end of the beams, up to half the column depth
+# [gravity]          # adds a second-order analysis{needs}
+# floors = {loads}
+# ... the total vertical load of each floor, from the lowest up to the roof, shared to the column lines by tributary width
+# or by shares of your own beside it, such as lines = [0.2, 0.3, 0.3, 0.2], which add up to 1.
+
+"#
     )
 }
 

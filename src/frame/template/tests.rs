@@ -64,6 +64,47 @@ fn the_commented_defaults_are_the_defaults() {
 }
 
 #[test]
+fn the_commented_examples_of_the_exact_analyses_are_live() {
+    let cases: [(ReportUnits, bool, &[&str]); 6] = [
+        (
+            ReportUnits::Metric,
+            true,
+            &["poisson", "shear_area", "end_spring", "[joints]", "rigid", "[gravity]", "floors"],
+        ),
+        (ReportUnits::Metric, true, &["[joints]", "column", "beam"]),
+        (
+            ReportUnits::Us,
+            true,
+            &["poisson", "shear_area", "end_spring", "[joints]", "column", "beam", "[gravity]", "floors"],
+        ),
+        (ReportUnits::Us, false, &["[joints]", "column", "beam"]),
+        (
+            ReportUnits::Us,
+            false,
+            &["end_column_inertia", "[material]", "modulus", "[joints]", "[gravity]", "beam", "floors"],
+        ),
+        (ReportUnits::Metric, false, &["end_column_inertia", "[material]", "modulus", "[gravity]", "floors"]),
+    ];
+    for (units, sizes_known, keys) in cases {
+        let text = write(&TemplateOptions { sizes_known, ..TemplateOptions::new(units) }).unwrap();
+        let live = |line: &str| {
+            let bare = line.strip_prefix("# ").filter(|bare| {
+                let name = bare.split(['=', ' ']).next().unwrap_or_default();
+                keys.contains(&name) && toml::from_str::<toml::Table>(bare).is_ok()
+            });
+            bare.unwrap_or(line).to_string() + "\n"
+        };
+        let lines: String = text.lines().map(live).collect();
+        let read = file::parse(&lines).unwrap_or_else(|fault| panic!("{fault}; {}\n{lines}", fault.key));
+        assert_eq!(read.warnings, [], "{lines}");
+        assert!(!read.options.is_plain());
+        assert_eq!(read.options.gravity.is_some(), keys.contains(&"floors"));
+        assert_eq!(read.options.has_shear(), keys.contains(&"shear_area"));
+        assert!(file::parse(&text).unwrap().options.is_plain());
+    }
+}
+
+#[test]
 fn options_that_make_no_frame_are_refused() {
     let base = || TemplateOptions::new(ReportUnits::Metric);
     let cases = [
