@@ -21,7 +21,7 @@ use crate::compare::verdict::{Subject, Verdict};
 use crate::compare::{Comparison, FOOT_RATIOS};
 use crate::frame::Frame;
 use crate::frame::file::{FrameFile, SizeStatement};
-use crate::response::Fit;
+use crate::response::{Caution, Fit};
 
 /// What a comparison's reports are made from.
 #[derive(Debug, Clone, Copy)]
@@ -47,7 +47,7 @@ impl Findings<'_> {
             let cautions = match &quick.fit {
                 Fit::Suits => continue,
                 Fit::Doubtful(cautions) => cautions.clone(),
-                Fit::Refused(reason) => vec![reason.clone()],
+                Fit::Refused(reason) => vec![Caution(format!("not run: {}", reason.0))],
             };
             for caution in cautions {
                 match reasons.iter_mut().find(|(text, _)| *text == caution.0) {

@@ -157,8 +157,17 @@ pub(super) fn percent_cell(percent: f64, tolerance: f64) -> TableCell {
         _ => None,
     };
     let rounded = percent.abs().round();
-    let hidden = (rounded > tolerance) != state.is_some() || rounded == tolerance && state.is_some();
-    let cell = if hidden { TableCell::formed(percent, Form::Signed(1)) } else { TableCell::from(percent) };
+    // The fewest decimals that show on which side of the tolerance the value lies; two are enough to be honest.
+    let shows = |places: i32| {
+        let scale = 10_f64.powi(places);
+        let rounded = (percent.abs() * scale).round() / scale;
+        (rounded > tolerance) == state.is_some()
+    };
+    let places = (0..2).find(|places| shows(*places)).unwrap_or(2);
+    let cell = match places {
+        0 => TableCell::from(percent),
+        places => TableCell::formed(percent, Form::Signed(places as usize)),
+    };
     cell.marked(state)
 }
 
@@ -192,7 +201,15 @@ mod tests {
             Content::Formed(value, form) => form.show(value),
             other => panic!("{other:?}"),
         };
-        let cases = [(-20.3, "−20.3"), (-19.7, "−20"), (-20.6, "−21"), (20.4, "+20.4"), (20.0, "+20"), (3.2, "+3")];
+        let cases = [
+            (-20.3, "−20.3"),
+            (-20.04, "−20.04"),
+            (-19.7, "−20"),
+            (-20.6, "−21"),
+            (20.4, "+20.4"),
+            (20.0, "+20"),
+            (3.2, "+3"),
+        ];
         for (percent, text) in cases {
             assert_eq!(shown(percent), text);
             assert_eq!(percent_cell(percent, 20.0).state.is_some(), f64::abs(percent) > 20.0);
