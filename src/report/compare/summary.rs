@@ -156,7 +156,6 @@ pub(super) fn percent_cell(percent: f64, tolerance: f64) -> TableCell {
         over if over > tolerance + 1e-7 => Some(State::SafeSide),
         _ => None,
     };
-    let rounded = percent.abs().round();
     // The fewest decimals that show on which side of the tolerance the value lies; two are enough to be honest.
     let shows = |places: i32| {
         let scale = 10_f64.powi(places);
