@@ -16,7 +16,8 @@ use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method
 /// # Assumptions
 /// The joints around a joint turn as much as it does and neighbouring storeys lean equally. So shear shares are exact
 /// where all joints of a floor have equal g. Pinned feet are an extension derived for this project, c = -c_above / 2 at
-/// the foot, under which **the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the median**.
+/// the foot, under which **the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the median**
+/// and up to 2.5 with flexible beams.
 /// Foot springs are refused. No column axial strain.
 ///
 /// # References
@@ -41,7 +42,7 @@ impl Method for Factor {
 
     fn fit(frame: &Frame) -> Fit {
         let text = "on pinned feet the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the \
-                    median: do not use them. Pinned feet are an extension of the published rules";
+                    median and up to 2.5 with flexible beams: do not use them. Pinned feet are an extension of the published rules";
         let pinned = *frame.feet() == Feet::Pinned && frame.storeys() > 1;
         fit::judge([fit::springs(frame), fit::loose_joint(frame)], [pinned.then(|| Caution(text.into()))])
     }
