@@ -152,7 +152,7 @@ fn pictures_have_size_and_ink() {
         assert!(inked * 100 > picture.pixels().len(), "{}: {inked} dark pixels", path.display());
         pictures += 1;
     }
-    assert_eq!(pictures, 6);
+    assert_eq!(pictures, 9);
 }
 
 #[test]
