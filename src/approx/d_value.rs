@@ -8,7 +8,7 @@ use crate::frame::{Frame, line_name};
 use crate::lane::Lane;
 use crate::response::{Caution, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
 
-/// The lowest beam to column ratio K of the published tables.
+/// The lowest beam to column ratio K of the published tables (from memory).
 const LOWEST_RATIO: f64 = 0.1;
 
 /// The D-value method: storey shear shared by sway stiffness, inflection heights from standard frames.
@@ -127,5 +127,5 @@ fn low_ratio(frame: &Frame) -> Option<Caution> {
         line_name(line),
         storey + 1
     );
-    (lowest < LOWEST_RATIO).then(|| Caution(text))
+    (lowest < LOWEST_RATIO).then_some(Caution(text))
 }

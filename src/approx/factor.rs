@@ -13,10 +13,14 @@ use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method
 /// (c there + c at the other end / 2) k. Column end moment = column factor x A, A = V h / (sum of the column factors of
 /// the storey); beam end moment = beam factor x B, B = (column end moments at the joint) / (beam factors at the joint).
 ///
+/// # Units
+/// N m; A is a rotation, B as well.
+///
 /// # Assumptions
 /// The joints around a joint turn as much as it does and neighbouring storeys lean equally. So shear shares are exact
 /// where all joints of a floor have equal g. Pinned feet are an extension derived for this project, c = -c_above / 2 at
-/// the foot, under which **the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the median**.
+/// the foot, under which **the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the median**
+/// and up to 2.5 with flexible beams.
 /// Foot springs are refused. No column axial strain.
 ///
 /// # References
@@ -41,7 +45,7 @@ impl Method for Factor {
 
     fn fit(frame: &Frame) -> Fit {
         let text = "on pinned feet the design moments of storey 2 come out too small, by a factor of 1.3 to 1.6 in the \
-                    median: do not use them. Pinned feet are an extension of the published rules";
+                    median and up to 2.5 with flexible beams: do not use them. Pinned feet are an extension of the published rules";
         let pinned = *frame.feet() == Feet::Pinned && frame.storeys() > 1;
         fit::judge([fit::springs(frame), fit::loose_joint(frame)], [pinned.then(|| Caution(text.into()))])
     }
@@ -145,7 +149,6 @@ fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
             &[
                 ("V h", Amount::Moment, &turning),
                 ("sum of column factors", amount, &sum),
-                // With k in N m both terms are, and A is a ratio; times a unit of k it stays a moment per that unit.
                 ("A", sheet::per_stiffness(frame), &|storey| turning(storey) / sum(storey)),
             ],
         ),

@@ -65,7 +65,7 @@ fn unsound(ratio: f64, place: &str) -> Option<Caution> {
              can bear"
         ),
     };
-    (!SOUND_RATIOS.contains(&ratio)).then(|| Caution(text))
+    (!SOUND_RATIOS.contains(&ratio)).then_some(Caution(text))
 }
 
 /// Sizes from which no drift follows.
@@ -86,5 +86,5 @@ pub(super) fn slender_drift(frame: &Frame) -> Option<Caution> {
     let text = format!(
         "height over width is {slenderness:.1}: drifts of this method leave out column axial strain, which counts there"
     );
-    (slenderness > SLENDER && frame.has_real_stiffness()).then(|| Caution(text))
+    (slenderness > SLENDER && frame.has_real_stiffness()).then_some(Caution(text))
 }

@@ -73,7 +73,7 @@ pub(super) fn doubts(frame: &Frame) -> Option<Caution> {
         "on fixed feet the formula makes the drift of the first storey too small where beams are flexible: 2 G/C is \
          {ratio:.2} there; at 0.5 a tall frame's first storey is short by 15 %, at 0.2 by 32 %"
     );
-    (*frame.feet() == Feet::Fixed && frame.storeys() > 2 && ratio < FLEXIBLE).then(|| Caution(text))
+    (*frame.feet() == Feet::Fixed && frame.storeys() > 2 && ratio < FLEXIBLE).then_some(Caution(text))
 }
 
 /// Racking drift of a storey.

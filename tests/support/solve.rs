@@ -46,3 +46,8 @@ pub fn every(frame: &Frame) -> Vec<Response> {
     responses.push(strained(frame));
     responses
 }
+
+/// Those of the answers that state member forces.
+pub fn with_forces(responses: Vec<Response>) -> impl Iterator<Item = Response> {
+    responses.into_iter().filter(Response::has_forces)
+}
