@@ -6,6 +6,7 @@ mod support;
 use support::{Sizes, Within, build, close, parts};
 use swaybound::approx::{METHODS, find};
 use swaybound::compare::{Options, compare};
+use swaybound::frame::options::AnalysisOptions;
 use swaybound::frame::{Feet, Frame, FrameParts, SizeSource};
 use swaybound::response::{Amount, Fit, SheetCell, Step};
 
@@ -128,7 +129,7 @@ fn what_each_method_doubts() {
 #[test]
 fn a_comparison_passes_over_refused_methods() {
     let frame = build(sound().feet(Feet::Springs(vec![1e5; 3])));
-    let comparison = compare(&frame, Options::default()).expect("the frame stands");
+    let comparison = compare(&frame, &AnalysisOptions::plain(&frame), Options::default()).expect("the frame stands");
     assert_eq!(comparison.quick.len(), METHODS.len());
     for quick in &comparison.quick {
         let refused = matches!(quick.fit, Fit::Refused(_));
