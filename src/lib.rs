@@ -6,7 +6,8 @@
 //!
 //! # Flow
 //! text of a frame file -> [`frame::Frame`] -> [`response::Response`], one per method -> errors and verdicts ->
-//! dataset -> files, text and page. A module may use only the ones before it in the list below.
+//! dataset -> files, text and page. Modules use each other in one direction: units, frame, lane, response, solve, exact and
+//! approx, compare, report, store.
 //!
 //! # Words
 //! *Storey* i lies between two floors, *floor* i on top of storey i, 1 = lowest; the top floor is the *roof*. *Bays*
@@ -26,6 +27,33 @@
 //! The column shears of a storey add up to the storey shear V; with loads to the right the column end moments are
 //! negative and add up to -V h. Beam shear = (M_left + M_right) / L. Floors are rigid in their own plane: one sway per
 //! floor.
+//!
+//! # Example
+//! ```
+//! use swaybound::compare::verdict::Subject;
+//! use swaybound::compare::{Options, compare};
+//! use swaybound::frame::options::AnalysisOptions;
+//! use swaybound::frame::{Feet, Frame, FrameParts, Section, SizeSource};
+//!
+//! // Two storeys of 3.5 m, two bays of 6 m, one size of column and beam.
+//! let frame = Frame::new(FrameParts {
+//!     title: "Sketch".into(),
+//!     report_units: Default::default(),
+//!     bays: vec![6.0, 6.0],
+//!     storeys: vec![3.5, 3.5],
+//!     feet: Feet::Fixed,
+//!     modulus: 30e9,
+//!     columns: vec![Section { inertia: 2.1e-3, area: Some(0.16) }; 6],
+//!     beams: vec![Section { inertia: 1.8e-3, area: None }; 4],
+//!     lateral: vec![20e3, 30e3],
+//!     sizes: SizeSource::Stated,
+//! })?;
+//! let found = compare(&frame, &AnalysisOptions::plain(&frame), Options::default())?;
+//! let best = found.ranked(Subject::ColumnMoments)[0];
+//! println!("{}: {:.0} % of the storey's largest", best.method, best.lowest.percent);
+//! assert!(found.statics.iter().all(|(_, statics)| statics.closes()));
+//! # Ok::<(), Box<dyn std::error::Error>>(())
+//! ```
 pub mod approx;
 pub mod compare;
 pub mod exact;

@@ -6,9 +6,11 @@ use clap::{Args, ValueEnum};
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use std::time::{Instant, SystemTime};
+use swaybound::approx::METHODS;
 use swaybound::compare::verdict::Subject;
 use swaybound::compare::{Comparison, ExactChoice, Options, compare};
 use swaybound::frame::file::{FrameFile, parse};
+use swaybound::frame::options::AnalysisOptions;
 use swaybound::report::compare::{Findings, about, brief, charts, page, tables};
 use swaybound::report::figure::png;
 use swaybound::report::{Dataset, Figure, Input, Record, Run, command_line, csv, html, json, text, workbook};
@@ -29,6 +31,9 @@ pub(super) struct CompareArgs {
     /// The exact analysis that errors are measured by
     #[arg(long, value_enum, default_value_t = Exact::Auto)]
     exact: Exact,
+    /// The quick methods to run, by name as in the files, such as portal,factor [default: all that apply]
+    #[arg(long, value_name = "METHODS", value_delimiter = ',', value_parser = method)]
+    methods: Vec<&'static str>,
     /// Exit with 1 where no quick method meets the tolerance for column design moments
     #[arg(long)]
     require: bool,
@@ -75,14 +80,21 @@ fn tolerance(text: &str) -> Result<f64, String> {
     }
 }
 
+fn method(text: &str) -> Result<&'static str, String> {
+    let names = || METHODS.iter().map(|entry| entry.info.id);
+    names()
+        .find(|name| *name == text.trim())
+        .ok_or_else(|| format!("the quick methods are {}", names().collect::<Vec<_>>().join(", ")))
+}
+
 /// Runs the command.
 pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
     let (start, clock) = (SystemTime::now(), Instant::now());
     let text = read_text(&args.frame)?;
     let file = read_frame(args, &text)?;
-    let options = Options { tolerance: args.tolerance, exact: args.exact.choice() };
+    let options = Options { tolerance: args.tolerance, exact: args.exact.choice(), methods: args.methods.clone() };
     let unsolvable = |fault| Failure::Unsolvable { fault, path: args.frame.clone() };
-    let comparison = compare(&file.frame, options).map_err(unsolvable)?;
+    let comparison = compare(&file.frame, &AnalysisOptions::plain(&file.frame), options).map_err(unsolvable)?;
     let warnings: Vec<_> = comparison.warnings(&file.frame).iter().map(ToString::to_string).collect();
     if !args.common.quiet {
         warn(args, &file, &text, &warnings);

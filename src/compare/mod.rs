@@ -2,6 +2,7 @@
 //!
 //! Borrows responses, never alters them.
 
+pub mod amplify;
 pub mod errors;
 pub mod formulas;
 pub mod places;

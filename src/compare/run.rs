@@ -1,9 +1,12 @@
 //! One whole comparison: every analysis of a frame, their statics, errors and verdicts.
 
+use super::amplify::{Amplification, amplifications};
 use super::errors::{ValueError, errors};
 use super::verdict::{Standing, Subject, Verdict, by_shortfall, judge};
 use crate::approx::METHODS;
+use crate::exact::second_order::{self, SecondOrder};
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
+use crate::frame::options::AnalysisOptions;
 use crate::frame::{Feet, Frame};
 use crate::response::statics::{self, Statics};
 use crate::response::{Entry, Fit, Response};
@@ -40,7 +43,8 @@ pub enum ResultWarning {
 /// Which exact analysis the quick methods are measured by.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
 pub enum ExactChoice {
-    /// `stiffness` for tall or slender frames whose columns have areas, else `slope-deflection`.
+    /// `stiffness` for tall or slender frames whose columns have areas and wherever options go beyond plain members, else
+    /// `slope-deflection`.
     #[default]
     Automatic,
     /// Inextensible members.
@@ -50,18 +54,20 @@ pub enum ExactChoice {
 }
 
 /// What a comparison is asked for.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, PartialEq)]
 pub struct Options {
     /// How far a value may be off before the method does not suffice, percent of the storey's reference; positive.
     pub tolerance: f64,
     /// Which exact analysis is the measure.
     pub exact: ExactChoice,
+    /// Names of the quick methods to run, as in files; empty for all.
+    pub methods: Vec<&'static str>,
 }
 
 impl Default for Options {
     /// A tolerance of 20 %, the exact analysis chosen by the frame.
     fn default() -> Self {
-        Self { tolerance: 20.0, exact: ExactChoice::Automatic }
+        Self { tolerance: 20.0, exact: ExactChoice::Automatic, methods: Vec::new() }
     }
 }
 
@@ -102,6 +108,10 @@ pub struct Comparison {
     pub no_stiffness: Option<Unsolvable>,
     /// True where the frame is tall or slender but the measure leaves out column axial strain.
     pub axial_strain_missing: bool,
+    /// True where the exact analysis has options beyond plain members.
+    pub has_options: bool,
+    /// The answer in the deformed position, where gravity is given, and its amplification by storey.
+    pub second_order: Option<(SecondOrder, Vec<Amplification>)>,
     /// The quick methods.
     pub quick: Vec<Quick>,
     /// Errors against the measure: of each quick method, then of the other exact answer.
@@ -125,9 +135,10 @@ impl Comparison {
         self.quick.iter().filter_map(|quick| quick.response.as_ref())
     }
 
-    /// Every answer: the exact ones first.
+    /// Every answer: the exact ones first, then that in the deformed position.
     pub fn responses(&self) -> impl Iterator<Item = &Response> {
-        self.exact().chain(self.quick_responses())
+        let deformed = self.second_order.iter().map(|(answer, _)| &answer.response);
+        self.exact().chain(deformed).chain(self.quick_responses())
     }
 
     /// The error sets of the quick methods.
@@ -168,34 +179,44 @@ impl Comparison {
     }
 }
 
-/// Runs every analysis that applies to `frame` and compares them.
+/// Runs every analysis that applies to `frame` and compares them; `analysis` must have been made for `frame`.
 ///
 /// # Errors
-/// [`Unsolvable`] where the frame cannot stand, or where the exact analysis that is the measure has no answer.
-pub fn compare(frame: &Frame, options: Options) -> Result<Comparison, Unsolvable> {
+/// [`Unsolvable`] where the frame cannot stand or buckles, or where the exact analysis that is the measure has no answer.
+pub fn compare(frame: &Frame, analysis: &AnalysisOptions, options: Options) -> Result<Comparison, Unsolvable> {
     let tall = frame.height() > SLENDER * frame.width() || frame.storeys() > TALL;
-    let (plain, with_strain) = (slope_deflection::analyse(frame), stiffness::analyse(frame));
+    let has_options = !analysis.is_plain();
+    let (plain, with_strain) = (slope_deflection::analyse(frame), stiffness::analyse_with(frame, analysis));
     let strain_wanted = match options.exact {
-        ExactChoice::Automatic => tall && with_strain.is_ok(),
+        ExactChoice::Automatic => has_options || tall && with_strain.is_ok(),
         ExactChoice::SlopeDeflection => false,
         ExactChoice::Stiffness => true,
     };
+    let deformed = second_order::analyse(frame, analysis)?;
     let no_stiffness = with_strain.as_ref().err().cloned();
+    let first_order = with_strain.clone().ok();
     let (reference, other_exact) = if strain_wanted { (with_strain?, plain.ok()) } else { (plain?, with_strain.ok()) };
-    let quick: Vec<_> = METHODS.iter().map(|entry| run_quick(frame, entry)).collect();
+    let second_order = deformed.zip(first_order).map(|(answer, first)| {
+        let gravity = analysis.gravity.as_deref().unwrap_or_default();
+        let storeys = amplifications(frame, &first, &answer, gravity);
+        (answer, storeys)
+    });
+    let chosen = METHODS.iter().filter(|entry| options.methods.is_empty() || options.methods.contains(&entry.info.id));
     let mut comparison = Comparison {
-        options,
         axial_strain_missing: tall && !strain_wanted,
+        quick: chosen.map(|entry| run_quick(frame, entry)).collect(),
+        options,
+        has_options,
         no_stiffness,
+        second_order,
         errors: Vec::new(),
         verdicts: Vec::new(),
         feet: Vec::new(),
         statics: Vec::new(),
         reference,
         other_exact,
-        quick,
     };
-    comparison.evaluate(frame);
+    comparison.evaluate(frame, analysis);
     Ok(comparison)
 }
 
@@ -207,8 +228,12 @@ fn run_quick(frame: &Frame, entry: &'static Entry) -> Quick {
 
 impl Comparison {
     /// Fills in what follows from the answers.
-    fn evaluate(&mut self, frame: &Frame) {
-        let measured = self.quick_responses().chain(&self.other_exact);
+    fn evaluate(&mut self, frame: &Frame, analysis: &AnalysisOptions) {
+        if analysis.has_zones() {
+            self.state_faces(frame, analysis);
+        }
+        let deformed = self.second_order.iter().map(|(answer, _)| &answer.response);
+        let measured = self.quick_responses().chain(&self.other_exact).chain(deformed);
         self.errors = measured.map(|response| (response.method, errors(frame, &self.reference, response))).collect();
         let tolerance = self.options.tolerance;
         let judged = self.quick_errors().flat_map(|(method, errors)| {
@@ -216,21 +241,42 @@ impl Comparison {
         });
         self.verdicts = judged.collect();
         let with_forces = self.responses().filter(|response| response.has_forces());
-        self.statics = with_forces.map(|response| (response.method, statics::check(frame, response))).collect();
-        self.feet = foot_lines(frame, self);
+        let check = |response: &Response| match response.method {
+            second_order::ID => statics::check_deformed(frame, response, analysis.gravity.as_deref()),
+            _ => statics::check(frame, response),
+        };
+        self.statics = with_forces.map(|response| (response.method, check(response))).collect();
+        self.feet = foot_lines(frame, analysis, self);
+    }
+
+    /// Adds the moments at the faces of rigid zones to the answers that know joint centres only.
+    fn state_faces(&mut self, frame: &Frame, analysis: &AnalysisOptions) {
+        let quick = self.quick.iter_mut().map(|quick| &mut quick.response);
+        for response in quick.chain([&mut self.other_exact]) {
+            let plain = |answer: &Response| answer.has_forces() && answer.method != stiffness::ID;
+            if let Some(answer) = response.take_if(|answer| plain(answer)) {
+                *response = Some(answer.with_zones(frame, &analysis.column_zones, &analysis.beam_zones));
+            }
+        }
+        if self.reference.method == slope_deflection::ID {
+            let faced = self.reference.clone().with_zones(frame, &analysis.column_zones, &analysis.beam_zones);
+            self.reference = faced;
+        }
     }
 }
 
 /// The second line of a fixed-foot report: the lowest storeys against feet that turn a little.
-fn foot_lines(frame: &Frame, comparison: &Comparison) -> Vec<FootLine> {
+fn foot_lines(frame: &Frame, analysis: &AnalysisOptions, comparison: &Comparison) -> Vec<FootLine> {
     let exact = &comparison.reference;
     if *frame.feet() != Feet::Fixed {
         return Vec::new();
     }
-    let analyse = if exact.method == stiffness::ID { stiffness::analyse } else { slope_deflection::analyse };
     let sprung = FOOT_RATIOS.map(|ratio| {
         let frame = frame.with_feet(Feet::Springs(frame.foot_springs(ratio))).ok()?;
-        analyse(&frame).ok()
+        match exact.method {
+            stiffness::ID => stiffness::analyse_with(&frame, analysis).ok(),
+            _ => slope_deflection::analyse(&frame).ok(),
+        }
     });
     let [Some(stiff), Some(soft)] = &sprung else { return Vec::new() };
     let lines = |response: &Response| {
@@ -247,7 +293,7 @@ fn foot_lines(frame: &Frame, comparison: &Comparison) -> Vec<FootLine> {
                 sprung: [lowest(stiff)?, lowest(soft)?],
             })
         };
-        Subject::ALL.into_iter().filter_map(line).collect::<Vec<_>>()
+        Subject::FORCES.into_iter().filter_map(line).collect::<Vec<_>>()
     };
     comparison.quick_responses().flat_map(lines).collect()
 }

@@ -19,11 +19,16 @@ pub enum Subject {
     BeamMoments,
     /// The shear of each column.
     ColumnShears,
+    /// The drift of each storey.
+    StoreyDrifts,
 }
 
 impl Subject {
     /// Every subject, in the order of reports.
-    pub const ALL: [Self; 3] = [Self::ColumnMoments, Self::BeamMoments, Self::ColumnShears];
+    pub const ALL: [Self; 4] = [Self::ColumnMoments, Self::BeamMoments, Self::ColumnShears, Self::StoreyDrifts];
+
+    /// The subjects that are member forces.
+    pub const FORCES: [Self; 3] = [Self::ColumnMoments, Self::BeamMoments, Self::ColumnShears];
 
     /// The subject in words.
     pub fn name(self) -> &'static str {
@@ -31,6 +36,7 @@ impl Subject {
             Self::ColumnMoments => "column design moments",
             Self::BeamMoments => "beam design moments",
             Self::ColumnShears => "column shears",
+            Self::StoreyDrifts => "storey drifts",
         }
     }
 
@@ -39,6 +45,7 @@ impl Subject {
         match self {
             Self::ColumnMoments | Self::ColumnShears => MemberKind::Column,
             Self::BeamMoments => MemberKind::Beam,
+            Self::StoreyDrifts => MemberKind::Storey,
         }
     }
 
@@ -47,6 +54,7 @@ impl Subject {
         match self {
             Self::ColumnMoments | Self::BeamMoments => Quantity::DesignMoment,
             Self::ColumnShears => Quantity::Shear,
+            Self::StoreyDrifts => Quantity::Drift,
         }
     }
 

@@ -1,13 +1,18 @@
 //! The terminal report of a comparison: tables first, verdicts last.
 
+use super::ranking::{amplification, detailed, ranking, stated};
 use super::summary::{READING, Shown, by_storey};
 use super::words;
 use super::{Findings, feet_table, verdict_cards};
+use crate::compare::Comparison;
 use crate::compare::verdict::Subject;
 use crate::report::{Document, say};
 
 /// The most rows of a table on a terminal.
 const MOST_ROWS: usize = 20;
+
+/// The most methods shown in detail on a terminal.
+const MOST_METHODS: usize = 2;
 
 /// Builds the terminal report.
 pub fn brief(findings: &Findings) -> Document {
@@ -18,17 +23,21 @@ pub fn brief(findings: &Findings) -> Document {
         report.paragraph(notice);
     }
     report.paragraph(words::measure(frame, comparison));
+    report.table(ranking(findings, false));
+    let methods = detailed(comparison, MOST_METHODS);
     report.paragraph(READING);
-    for subject in Subject::ALL {
-        report.table(by_storey(frame, comparison, Shown::subject(subject), MOST_ROWS));
+    for subject in stated(comparison) {
+        let methods = if subject == Subject::StoreyDrifts { drift_methods(comparison) } else { methods.clone() };
+        report.table(by_storey(frame, comparison, Shown::subject(subject), MOST_ROWS, &methods));
     }
-    if let Some(table) = feet_table(comparison) {
+    for table in [amplification(findings), feet_table(comparison, &methods)].into_iter().flatten() {
         report.table(table);
     }
     report.section(format!("Verdicts at a tolerance of {}", words::tolerance(comparison)));
-    for subject in Subject::ALL {
+    for subject in stated(comparison) {
         report.subsection(words::capital(subject.name()));
-        verdict_cards(&mut report, findings, subject);
+        let methods = if subject == Subject::StoreyDrifts { drift_methods(comparison) } else { methods.clone() };
+        verdict_cards(&mut report, findings, subject, &methods);
     }
     let cautions = findings.cautions_of_methods();
     if !cautions.is_empty() {
@@ -45,4 +54,9 @@ pub fn brief(findings: &Findings) -> Document {
          engineer and the code in force decide.",
     );
     report
+}
+
+/// The least short methods for drifts.
+fn drift_methods(comparison: &Comparison) -> Vec<&'static str> {
+    comparison.ranked(Subject::StoreyDrifts).into_iter().map(|verdict| verdict.method).take(MOST_METHODS).collect()
 }

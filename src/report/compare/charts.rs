@@ -1,5 +1,6 @@
 //! The charts of a comparison.
 
+use super::ranking::detailed;
 use super::{Findings, words};
 use crate::compare::errors::{Flag, ValueError};
 use crate::compare::verdict::Subject;
@@ -14,6 +15,8 @@ use crate::units::Unit;
 
 /// The most column lines that get a panel of their own.
 const MOST_PANELS: usize = 12;
+/// The most quick methods drawn beside the exact answer.
+const MOST_SERIES: usize = 3;
 /// How the names of elevations begin.
 pub(super) const ELEVATION: &str = "elevation-";
 /// Percent, for shares of one.
@@ -50,6 +53,7 @@ pub fn charts(findings: &Findings) -> Vec<Chart> {
     charts.push(column_moments(findings));
     charts.push(shear_shares(findings));
     charts.push(moment_diagram(findings));
+    charts.extend(drifts(findings));
     charts
 }
 
@@ -83,7 +87,11 @@ fn elevations(findings: &Findings) -> Vec<Chart> {
         };
         chart(format!("{ELEVATION}{method}"), &title, &caption, &figure)
     };
-    comparison.quick_errors().filter(|(method, _)| comparison.repeats(method).is_none()).map(one).collect()
+    comparison
+        .quick_errors()
+        .filter(|(method, errors)| comparison.repeats(method).is_none() && errors.iter().any(|error| design(&error)))
+        .map(one)
+        .collect()
 }
 
 fn cell(error: &ValueError) -> Shade {
@@ -132,9 +140,12 @@ fn panel_lines(findings: &Findings) -> Vec<usize> {
     lines
 }
 
-/// The exact answer and the quick ones.
+/// The exact answer and the least short quick ones.
 fn drawn<'a>(findings: &Findings<'a>) -> Vec<&'a Response> {
-    std::iter::once(&findings.comparison.reference).chain(findings.comparison.quick_responses()).collect()
+    let comparison = findings.comparison;
+    let methods = detailed(comparison, MOST_SERIES);
+    let quick = comparison.quick_responses().filter(|response| methods.contains(&response.method));
+    std::iter::once(&comparison.reference).chain(quick).collect()
 }
 
 fn panels(findings: &Findings, value: &dyn Fn(&Response, usize, usize) -> f64) -> Vec<Panel> {
@@ -201,6 +212,40 @@ fn shear_shares(findings: &Findings) -> Chart {
     chart("shear-shares".into(), title, &caption, &figure)
 }
 
+/// Storey drifts: exact, in the deformed position, and the least short quick methods; `None` where none is stated.
+fn drifts(findings: &Findings) -> Option<Chart> {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let ranked = comparison.ranked(Subject::StoreyDrifts);
+    let best = ranked.first()?;
+    let methods: Vec<_> = ranked.iter().map(|verdict| verdict.method).take(MOST_SERIES).collect();
+    let quick = comparison.quick_responses().filter(|response| methods.contains(&response.method));
+    let deformed = comparison.second_order.iter().map(|(answer, _)| &answer.response);
+    let series = |response: &Response| Series {
+        method: response.method.into(),
+        name: words::method_name(comparison, response.method),
+        values: (0..frame.storeys())
+            .map(|storey| response.movement(storey).map_or(f64::NAN, |movement| movement.drift))
+            .collect(),
+    };
+    let shown = std::iter::once(&comparison.reference).chain(deformed).chain(quick);
+    let title = "Storey drifts up the height";
+    let caption = format!(
+        "Least short: {}, {} in {}.",
+        words::method_name(comparison, best.method),
+        signed_percent(best.lowest.percent, 0),
+        words::member(best.lowest.member)
+    );
+    let figure = Profiles {
+        title: title.into(),
+        description: caption.clone(),
+        quantity: "storey drift".into(),
+        unit: frame.report_units().movement(),
+        storeys: frame.parts().storeys.clone(),
+        panels: vec![Panel { name: "whole storeys".into(), series: shown.map(series).collect() }],
+    };
+    Some(chart("storey-drifts".into(), title, &caption, &figure))
+}
+
 fn end_moments(findings: &Findings, response: &Response) -> EndMoments {
     let storeys = || 0..findings.frame().storeys();
     let columns = storeys().flat_map(|storey| response.storey_columns(storey)).map(|column| [column.foot, column.head]);
@@ -214,8 +259,7 @@ fn moment_diagram(findings: &Findings) -> Chart {
     let name = words::method_name(comparison, reference.method);
     let title = "Moment diagram under the lateral forces";
     let best = comparison.ranked(Subject::ColumnMoments).first().map(|verdict| verdict.method);
-    let quick = comparison.quick.iter().filter_map(|quick| quick.response.as_ref());
-    let outline = quick.into_iter().find(|response| Some(response.method) == best);
+    let outline = comparison.quick_responses().find(|response| Some(response.method) == best);
     let caption = match outline {
         Some(response) => format!(
             "Drawn on the side in tension. Filled: {name}. Outline: {}, the least short for column design moments.",

@@ -3,6 +3,7 @@
 mod brief;
 mod charts;
 mod page;
+mod ranking;
 mod sheet;
 mod sizes;
 mod summary;
@@ -16,7 +17,7 @@ pub use tables::tables;
 
 use super::workbook::About;
 use super::{Document, Sentence, TableBlock, TableCell, say};
-use crate::compare::verdict::Subject;
+use crate::compare::verdict::{Subject, Verdict};
 use crate::compare::{Comparison, FOOT_RATIOS};
 use crate::frame::Frame;
 use crate::frame::file::{FrameFile, SizeStatement};
@@ -99,15 +100,18 @@ pub fn about(findings: &Findings) -> About {
 }
 
 /// The second line of fixed feet, where there is one.
-fn feet_table(comparison: &Comparison) -> Option<TableBlock> {
+fn feet_table(comparison: &Comparison, methods: &[&str]) -> Option<TableBlock> {
     let caption = "Feet are neither fixed nor pinned: lowest error in the two lowest storeys, by foot spring";
     let mut table = TableBlock::new("feet", caption).name("method");
-    for subject in Subject::ALL {
+    for subject in Subject::FORCES {
         table = table.under(subject.name()).percent("fixed", 0);
         table = FOOT_RATIOS.iter().fold(table, |table, ratio| table.percent(format!("spring {ratio}"), 0));
     }
     let cell = |percent: f64| summary::percent_cell(percent, comparison.options.tolerance);
     for lines in comparison.feet.chunk_by(|a, b| a.method == b.method) {
+        if !methods.contains(&lines[0].method) {
+            continue;
+        }
         let numbers = lines.iter().flat_map(|line| [line.fixed, line.sprung[0], line.sprung[1]].map(cell));
         table.row(std::iter::once(TableCell::from(summary::short_name(lines[0].method))).chain(numbers));
     }
@@ -118,11 +122,11 @@ fn feet_table(comparison: &Comparison) -> Option<TableBlock> {
     (!comparison.feet.is_empty()).then(|| summary::judged(table, comparison))
 }
 
-/// One card per verdict on `subject`, methods that repeat another left out.
-fn verdict_cards(report: &mut Document, findings: &Findings, subject: Subject) {
+/// One card per verdict of `methods` on `subject`, methods that repeat another left out.
+fn verdict_cards(report: &mut Document, findings: &Findings, subject: Subject, methods: &[&str]) {
     let comparison = findings.comparison;
-    let verdicts: Vec<_> =
-        comparison.ranked(subject).into_iter().filter(|verdict| words::own(comparison, verdict)).collect();
+    let wanted = |verdict: &&Verdict| words::own(comparison, verdict) && methods.contains(&verdict.method);
+    let verdicts: Vec<_> = comparison.ranked(subject).into_iter().filter(wanted).collect();
     if verdicts.is_empty() {
         report.paragraph("Nothing to judge: the exact values are zero.");
     }

@@ -1,10 +1,10 @@
 //! The page of a comparison: verdict first, method sheet and record last.
 
 use super::charts::ELEVATION;
+use super::ranking::{amplification, exact_answers, own_methods, ranking, stated};
 use super::summary::{READING, Shown, by_storey, judged, percent_cell, short_name};
 use super::{Findings, feet_table, sheet, sizes, verdict_cards, words};
-use crate::compare::verdict::{Extreme, Subject, Verdict};
-use crate::compare::{Comparison, Quick};
+use crate::compare::verdict::Subject;
 use crate::frame::{Feet, MemberKind};
 use crate::report::number::{Form, decimals, signed_percent, significant};
 use crate::report::{Document, Figure, Record, Sentence, State, TableBlock, TableCell, say};
@@ -44,68 +44,27 @@ fn opening(report: &mut Document, findings: &Findings) {
         report.verdict_in_words(state, word, sentence.then(" See ").refer("ranking").then("."));
     }
     report.paragraph(words::measure(findings.frame(), comparison));
-    report.table(ranking(findings));
+    report.table(ranking(findings, true));
     let cautions = findings.cautions_of_methods();
     if !cautions.is_empty() {
         report.caution("Read with care", cautions);
     }
 }
 
-/// One row per quick method: lowest and highest error on every subject.
-fn ranking(findings: &Findings) -> TableBlock {
-    let comparison = findings.comparison;
-    let caption = "Quick methods: lowest and highest error of any member, % of its storey's largest exact value";
-    let mut table = TableBlock::new("ranking", caption).name("method");
-    for subject in Subject::ALL {
-        table = table.under(subject.name()).percent("lowest", 0).percent("highest", 0);
-        table = table.number("multiply by", "", 3).number("redistribution", "%", 2);
-    }
-    for quick in own_methods(comparison) {
-        let id = quick.entry.info.id;
-        let mut cells = vec![TableCell::from(words::method_name(comparison, id))];
-        for subject in Subject::ALL {
-            let found = comparison.verdicts.iter().find(|verdict| verdict.method == id && verdict.subject == subject);
-            let row = |verdict: &Verdict| extremes(comparison.options.tolerance, verdict);
-            cells.extend(found.map_or_else(|| vec![TableCell::blank(); 4], row));
-        }
-        table.row(cells);
-    }
-    table.note(
-        "“Multiply by”: the largest |exact| / |quick| of any member, rounded up; with it no member of this frame is short \
-         (members that a method leaves almost without load aside). It multiplies the lateral part only.",
-    );
-    table.note(
-        "“Redistribution”: 1 − 1 / factor, the share of its moment that the shortest member must shed if the factor is \
-         not used: for ductile parts of a stable frame only.",
-    );
-    judged(table, comparison)
-}
-
-/// The quick methods whose values are not those of an earlier one.
-fn own_methods(comparison: &Comparison) -> impl Iterator<Item = &Quick> {
-    comparison.quick.iter().filter(|quick| comparison.repeats(quick.entry.info.id).is_none())
-}
-
-fn extremes(tolerance: f64, verdict: &Verdict) -> Vec<TableCell> {
-    let governing = verdict.governing();
-    let shed = |member: Extreme| words::needed(member.factor).map_or(0.0, |factor| 100.0 * (1.0 - 1.0 / factor));
-    vec![
-        percent_cell(verdict.lowest.percent, tolerance),
-        percent_cell(verdict.highest.percent, tolerance),
-        words::factor(governing.and_then(|member| member.factor)).into(),
-        governing.map(|member| TableCell::formed(shed(member), Form::Whole)).into(),
-    ]
-}
-
 fn verdicts(report: &mut Document, findings: &Findings) {
     let comparison = findings.comparison;
     report.section("Where each method holds");
-    for subject in Subject::ALL {
+    let methods: Vec<_> = own_methods(comparison).map(|quick| quick.entry.info.id).collect();
+    for subject in stated(comparison) {
         report.subsection(words::capital(subject.name()));
-        verdict_cards(report, findings, subject);
+        verdict_cards(report, findings, subject, &methods);
         report.table(place_table(findings, subject));
     }
-    if let Some(table) = feet_table(comparison) {
+    if let Some(table) = amplification(findings) {
+        report.subsection("Gravity on the sway");
+        report.table(table);
+    }
+    if let Some(table) = feet_table(comparison, &methods) {
         report.subsection("If the fixed feet turn a little");
         report.table(table);
     }
@@ -157,8 +116,9 @@ fn storeys(report: &mut Document, findings: &Findings) {
     report.section("Storey by storey");
     report.paragraph(READING);
     let further = [Shown::FOOT_MOMENTS, Shown::HEAD_MOMENTS, Shown::AXIAL];
-    for shown in Subject::ALL.map(Shown::subject).into_iter().chain(further) {
-        report.table(by_storey(frame, comparison, shown, MOST_ROWS));
+    let methods: Vec<_> = own_methods(comparison).map(|quick| quick.entry.info.id).collect();
+    for shown in stated(comparison).map(Shown::subject).chain(further) {
+        report.table(by_storey(frame, comparison, shown, MOST_ROWS, &methods));
     }
     if let Some(table) = drift_table(findings) {
         report.table(table);
@@ -180,7 +140,7 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
     let unit = Quantity::Drift.unit(frame.report_units());
     comparison.reference.movement(0)?;
     let mut table = TableBlock::new("drift", "Storey drift and sway of the exact analyses").name("storey");
-    for response in comparison.exact() {
+    for response in exact_answers(comparison) {
         table = table.under(response.method).number("drift", unit.symbol, 3).text("height / drift").number(
             "sway",
             unit.symbol,
@@ -189,7 +149,7 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
     }
     for storey in (0..frame.storeys()).rev() {
         let mut cells = vec![TableCell::from((storey + 1).to_string())];
-        for response in comparison.exact() {
+        for response in exact_answers(comparison) {
             let Some(movement) = response.movement(storey) else { continue };
             let ratio = frame.storey_height(storey) / movement.drift.abs();
             cells.extend([
@@ -201,8 +161,7 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
         table.row(cells);
     }
     table.note(
-        "The quick methods of this comparison give no drifts. A drift that is too small is on the unsafe side for drift \
-         limits; one that is too large lengthens the period.",
+        "A drift that is too small is on the unsafe side for drift limits; one that is too large lengthens the period.",
     );
     Some(table)
 }

@@ -51,11 +51,15 @@ impl Shown {
             (true, Class::End) => "beams of end bays",
             (true, _) => "beams of interior bays",
             (false, Class::End) => "end columns",
-            (false, _) => "interior columns",
+            (false, Class::Interior) => "interior columns",
+            (false, Class::Whole) => "whole storey",
         }
     }
 
     fn classes(self, frame: &Frame) -> Vec<Class> {
+        if self.kind == MemberKind::Storey {
+            return vec![Class::Whole];
+        }
         let across = if self.is_of_beams() { frame.bays() } else { frame.lines() };
         if across > 2 { vec![Class::End, Class::Interior] } else { vec![Class::End] }
     }
@@ -90,8 +94,20 @@ pub(super) fn group_name(group: &Range<usize>, storeys: usize, of_beams: bool) -
     }
 }
 
-/// Exact values and errors of every quick method: storeys from the roof, ends and interior side by side.
-pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, most: usize) -> TableBlock {
+/// Exact values and errors of the quick methods of `methods` that state the quantity: storeys from the roof, ends and
+/// interior side by side.
+pub(super) fn by_storey(
+    frame: &Frame,
+    comparison: &Comparison,
+    shown: Shown,
+    most: usize,
+    methods: &[&str],
+) -> TableBlock {
+    let states = |errors: &[ValueError]| {
+        errors.iter().any(|error| error.place.kind == shown.kind && error.quantity == shown.quantity)
+    };
+    let sets = comparison.quick_errors().filter(|(method, errors)| methods.contains(method) && states(errors));
+    let sets: Vec<_> = sets.collect();
     let unit = shown.quantity.unit(frame.report_units());
     let name = words::capital(shown.name);
     let caption = say(format!("{name}: largest exact value, and error of each method in % of the storey's largest"));
@@ -100,14 +116,14 @@ pub(super) fn by_storey(frame: &Frame, comparison: &Comparison, shown: Shown, mo
     let classes = shown.classes(frame);
     for class in &classes {
         table = table.under(shown.class_head(*class)).number("exact", unit.symbol, 3);
-        table = comparison.quick_errors().fold(table, |table, (method, _)| table.percent(short_name(method), 0));
+        table = sets.iter().fold(table, |table, (method, _)| table.percent(short_name(method), 0));
     }
     for group in groups(frame.storeys(), most).iter().rev() {
         let mut cells = vec![TableCell::from(group_name(group, frame.storeys(), shown.is_of_beams()))];
         for class in &classes {
             let mut exact = None;
             let mut errors = Vec::new();
-            for (_, set) in comparison.quick_errors() {
+            for (_, set) in &sets {
                 let found: Vec<_> = set.iter().filter(|error| shown.holds(error, *class, group)).collect();
                 exact = found.iter().map(|error| error.exact.abs()).reduce(f64::max).or(exact);
                 errors.push(telling(&found, comparison.options.tolerance));

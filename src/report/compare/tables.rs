@@ -29,6 +29,7 @@ pub fn tables(frame: &Frame, comparison: &Comparison) -> Vec<Table> {
         verdicts(comparison),
         feet(comparison),
         methods(comparison),
+        second_order(comparison, units),
         statics(comparison, units),
         equilibrium(comparison, units),
     ]
@@ -177,17 +178,46 @@ fn feet(comparison: &Comparison) -> Table {
     Table::new("feet", &COLUMNS, rows)
 }
 
+fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
+    static COLUMNS: [ColumnInfo; 8] = [
+        STOREY,
+        info("drift", "second-order storey drift, in the row's unit"),
+        UNIT,
+        info("drift_amplification", "second-order over first-order drift"),
+        info("moment_amplification", "the same of the storey's largest column design moment"),
+        info("plain_amplifier", "1 / (1 - sum P drift / (V h)); blank where its denominator is not positive"),
+        info("safer_amplifier", "1 / (1 - 1.2 sum P drift / (V h)); blank likewise"),
+        info("critical_load_factor", "what gravity may be multiplied by; blank where gravity is negligible"),
+    ];
+    let unit = units.movement();
+    let rows = comparison.second_order.iter().flat_map(|(answer, storeys)| {
+        storeys.iter().enumerate().map(|(storey, found)| {
+            [
+                Cell::from(storey + 1),
+                answer.response.movement(storey).map(|movement| unit.from_si(movement.drift)).into(),
+                unit.symbol.into(),
+                found.drift.into(),
+                found.moment.into(),
+                found.plain.into(),
+                found.safer.into(),
+                answer.critical_load_factor.into(),
+            ]
+        })
+    });
+    Table::new("second_order", &COLUMNS, rows)
+}
+
 fn methods(comparison: &Comparison) -> Table {
     static COLUMNS: [ColumnInfo; 7] = [
         METHOD,
-        info("role", "exact (the measure first) or quick"),
+        info("role", "exact (the measure first; second-order last) or quick"),
         info("needs_sizes", "yes where member sizes must be known"),
         info("fit", "suits, doubtful or refused"),
         info("cautions", "why"),
         info("residual", "relative residual of the solved equations; blank for quick methods"),
         info("source", "where the method was published"),
     ];
-    let exact = comparison.exact().map(|response| {
+    let exact = super::ranking::exact_answers(comparison).into_iter().map(|response| {
         let source = "equations of equilibrium, solved";
         [
             Cell::from(response.method),

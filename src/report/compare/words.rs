@@ -4,9 +4,9 @@ use crate::compare::Comparison;
 use crate::compare::errors::{Flag, ValueError};
 use crate::compare::places::{Class, Place};
 use crate::compare::verdict::{Extreme, Standing, Subject, Verdict};
-use crate::exact::{Unsolvable, slope_deflection, stiffness};
+use crate::exact::{Unsolvable, second_order, slope_deflection, stiffness};
 use crate::frame::{Feet, Frame, Member, SizeSource};
-use crate::report::number::{NO_BREAK, quantity, rounded_up, signed_percent};
+use crate::report::number::{NO_BREAK, decimals, quantity, rounded_up, signed_percent};
 use crate::report::{Sentence, State, say};
 use crate::response::Quantity;
 use crate::units::{ReportUnits, Unit};
@@ -32,6 +32,7 @@ pub(super) fn method_name(comparison: &Comparison, method: &str) -> String {
         (Some(quick), _) => quick.entry.info.name.into(),
         (None, slope_deflection::ID) => "slope-deflection (inextensible members)".into(),
         (None, stiffness::ID) => "stiffness analysis (with column axial strain)".into(),
+        (None, second_order::ID) => "second-order analysis (gravity on the sway)".into(),
         (None, other) => other.into(),
     }
 }
@@ -106,6 +107,12 @@ pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
          Negative is short: the unsafe side for strength. A member that carries less than the largest can be short of \
          its own value by more than that percentage: the factor tells.",
     );
+    if comparison.has_options {
+        sentence = sentence.then(
+            " The stiffness analysis takes in what the file says of rigid zones, springs, shear deformation and gravity; \
+             slope-deflection and the quick methods know plain members between joint centres only.",
+        );
+    }
     if let Some(reason) = &comparison.no_stiffness {
         sentence = sentence.then(format!(" The stiffness analysis was not run: {reason}."));
     }
@@ -226,8 +233,9 @@ pub(super) fn verdict(comparison: &Comparison, verdict: &Verdict, units: ReportU
 fn cover(verdict: &Verdict, subject: Subject, units: ReportUnits) -> String {
     let mut text = match verdict.governing() {
         Some(member) if needed(member.factor).is_some() => format!(
-            " Multiplied by {} no member is short: {} sets this, {} short of its own exact value.",
+            " Multiplied by {} no {} is short: {} sets this, {} short of its own exact value.",
             factor(member.factor),
+            if subject == Subject::StoreyDrifts { "storey" } else { "member" },
             member_name(member),
             size(member.own_shortfall())
         ),
@@ -259,11 +267,19 @@ pub(super) fn factor(factor: Option<f64>) -> String {
     factor.map_or_else(|| "none".into(), |factor| rounded_up(factor.max(1.0), 2))
 }
 
+/// A load factor, rounded down to three figures.
+pub(super) fn rounded_down(factor: f64) -> String {
+    let places = (2 - factor.log10().floor() as i32).clamp(0, 6);
+    let scale = 10_f64.powi(places);
+    decimals((factor * scale).floor() / scale, places as usize)
+}
+
 /// `short by up to 40 % of the storey's largest` of −39.2: rounded to the far side.
 fn short_by(verdict: &Verdict) -> String {
+    let base = if verdict.subject == Subject::StoreyDrifts { "" } else { " of the storey's largest" };
     match -verdict.lowest.percent {
         none if none < 0.05 => "nowhere short".into(),
-        some => format!("short by up to {} of the storey's largest", size(some)),
+        some => format!("short by up to {}{base}", size(some)),
     }
 }
 
@@ -314,8 +330,10 @@ pub(super) fn cautions() -> Vec<&'static str> {
         "Linear elastic lateral analysis of a plane frame, for preliminary sizing and for checking. It is not a design: \
          gravity, torsion, connections, foundations, detailing, load combinations and drift limits remain with the \
          licensed engineer and the code in force.",
-        "First order: gravity acting on the sway (P-delta) is in none of the values. Real moments and drifts are larger, \
-         in tall and flexible frames markedly.",
+        "First order, but for the second-order analysis where gravity is given: elsewhere gravity acting on the sway \
+         (P-delta) is in none of the values. Real moments and drifts are larger, in tall and flexible frames markedly.",
+        "A drift that is too small is on the unsafe side for drift limits, not for periods: a drift that is too large \
+         lengthens the period.",
         "Every quick method satisfies statics. Where it is short, a ductile frame without instability yields early and \
          redistributes; brittle parts (base plates, splices, column shear) need the full factor, and codes restrict \
          redistribution in columns.",
