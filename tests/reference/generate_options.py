@@ -32,6 +32,7 @@ random.random of a seeded generator, which Python keeps stable. Positive: to the
 
 import json
 import math
+import multiprocessing
 import pathlib
 import random
 
@@ -506,13 +507,23 @@ def analyse(drawn):
     return f"critical at {drawn['critical_load_factor']:.3f}, drifts times up to {most:.3f}, {rounds} rounds"
 
 
+def stored(number):
+    drawn = draw(number)
+    while True:
+        try:
+            report = analyse(drawn)
+            return drawn, f"frame {number}: {len(drawn['storeys'])} storeys, {len(drawn['bays'])} bays, {report}"
+        except Unstable:
+            # Axial forces of the lateral load itself were too much.
+            drawn["lateral"] = [force / 4 for force in drawn["lateral"]]
+
+
 def main():
     frames = []
-    for number in range(FRAMES):
-        drawn = draw(number)
-        report = analyse(drawn)
-        frames.append(drawn)
-        print(f"frame {number}: {len(drawn['storeys'])} storeys, {len(drawn['bays'])} bays, {report}", flush=True)
+    with multiprocessing.Pool(2) as pool:
+        for drawn, report in pool.imap(stored, range(FRAMES)):
+            frames.append(drawn)
+            print(report, flush=True)
     lines = ",\n".join(json.dumps(frame, separators=(",", ":")) for frame in frames)
     path = pathlib.Path(__file__).with_name("options.json")
     path.write_text(f"[\n{lines}\n]\n", encoding="utf-8", newline="\n")
