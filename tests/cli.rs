@@ -1,72 +1,12 @@
 //! The program as a user meets it: exit codes, what goes to which stream, what is written and what is not.
 #![allow(clippy::unwrap_used, clippy::expect_used, clippy::panic, reason = "a test fails by panicking")]
 
-use assert_cmd::Command;
+#[path = "support/program.rs"]
+mod program;
+
+use program::{fails, frame, home, names, run, stderr};
 use std::fs::{self, File};
 use std::path::Path;
-use std::process::Output;
-use tempfile::TempDir;
-
-const FRAME: &str = r#"
-title = "Workshop"
-[grid]
-bays    = ["6 m", "7 m"]
-storeys = ["4 m", "3.5 m"]
-[feet]
-fixity = "FEET"
-[material]
-modulus = "200 GPa"
-[[columns]]
-storeys = "all"
-lines   = "all"
-inertia = "2e-4 m4"
-[[beams]]
-floors = "all"
-bays   = "all"
-inertia = "3e-4 m4"
-stiffness_factor = FACTOR
-[lateral]
-floors = ["30 kN", "40 kN"]
-"#;
-
-fn frame(feet: &str, factor: &str) -> String {
-    FRAME.replace("FEET", feet).replace("FACTOR", factor)
-}
-
-/// An empty folder with `frame.toml` in it.
-fn home(text: &str) -> TempDir {
-    let home = tempfile::tempdir().unwrap();
-    fs::write(home.path().join("frame.toml"), text).unwrap();
-    home
-}
-
-fn run(home: &TempDir, words: &[&str]) -> Output {
-    let mut command = Command::new(env!("CARGO_BIN_EXE_swaybound"));
-    command.current_dir(home.path()).args(words).output().unwrap()
-}
-
-fn stderr(output: &Output) -> String {
-    String::from_utf8(output.stderr.clone()).unwrap()
-}
-
-/// Asserts a failure: its code, one message that holds `words`, nothing on standard output, nothing written.
-fn fails(home: &TempDir, words: &[&str], code: i32, message: &str) {
-    let before = names(home.path());
-    let output = run(home, words);
-    let said = stderr(&output);
-    assert_eq!(output.status.code(), Some(code), "{said}");
-    assert!(said.contains(message), "{message:?} is not in:\n{said}");
-    assert_eq!(said.matches("error").count(), 1, "more than one message:\n{said}");
-    assert!(!said.contains("panicked"), "{said}");
-    assert!(output.stdout.is_empty());
-    assert_eq!(names(home.path()), before, "something was written");
-}
-
-fn names(folder: &Path) -> Vec<String> {
-    let mut names: Vec<_> = fs::read_dir(folder).unwrap().map(|entry| entry.unwrap().path()).collect();
-    names.sort();
-    names.iter().map(|path| path.file_name().unwrap().to_string_lossy().into_owned()).collect()
-}
 
 #[test]
 fn a_sound_frame_gives_results_on_standard_output_and_a_report() {
@@ -182,26 +122,6 @@ fn inputs_that_are_no_frame_files_get_one_message_each() {
 }
 
 #[test]
-fn a_folder_that_is_not_a_report_is_left_alone() {
-    let home = home(&frame("fixed", "1.0"));
-    fs::create_dir(home.path().join("thesis")).unwrap();
-    fs::write(home.path().join("thesis/chapter.txt"), "years").unwrap();
-    fails(&home, &["compare", "frame.toml", "--out", "thesis"], 4, "not a report folder");
-    assert_eq!(fs::read_to_string(home.path().join("thesis/chapter.txt")).unwrap(), "years");
-}
-
-#[test]
-fn a_report_is_replaced_by_the_next() {
-    let home = home(&frame("fixed", "1.0"));
-    assert!(run(&home, &["compare", "frame.toml", "--out", "here"]).status.success());
-    let first = fs::read(home.path().join("here/report.html")).unwrap();
-    fs::write(home.path().join("frame.toml"), frame("pinned", "1.0")).unwrap();
-    assert!(run(&home, &["compare", "frame.toml", "--out", "here"]).status.success());
-    assert_ne!(fs::read(home.path().join("here/report.html")).unwrap(), first);
-    assert_eq!(names(home.path()), ["frame.toml", "here"]);
-}
-
-#[test]
 fn words_that_mean_nothing_are_exit_code_2() {
     let home = home(&frame("fixed", "1.0"));
     fails(&home, &["compare", "frame.toml", "--tolerance", "0"], 2, "percentage over 0");
@@ -248,4 +168,89 @@ fn every_shipped_frame_runs() {
         frames += 1;
     }
     assert!(frames >= 4);
+}
+
+#[test]
+fn new_takes_floor_forces_to_the_left() {
+    let home = tempfile::tempdir().unwrap();
+    let output = run(&home, &["new", "hall.toml", "--forces", "-40 kN,100 kN", "--bays", "2"]);
+    assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+    assert!(fs::read_to_string(home.path().join("hall.toml")).unwrap().contains("-40 kN"));
+    assert_eq!(run(&home, &["compare", "hall.toml"]).status.code(), Some(0));
+    fails(&home, &["new", "other.toml", "--base-shear", "-5 kN"], 2, "base shear");
+}
+
+#[test]
+fn another_schema_beside_a_new_file_is_kept_and_named() {
+    let home = tempfile::tempdir().unwrap();
+    fs::write(home.path().join("frame.schema.json"), "{}").unwrap();
+    let output = run(&home, &["new", "hall.toml"]);
+    assert_eq!(output.status.code(), Some(0));
+    assert!(stderr(&output).contains("frame.schema.json: exists with other content"), "{}", stderr(&output));
+    assert_eq!(fs::read_to_string(home.path().join("frame.schema.json")).unwrap(), "{}");
+    fs::remove_file(home.path().join("frame.schema.json")).unwrap();
+    assert!(run(&home, &["new", "second.toml"]).status.success());
+    let said = stderr(&run(&home, &["new", "third.toml"]));
+    assert!(!said.contains("warning"), "the same schema needs no words: {said}");
+}
+
+#[test]
+fn a_tolerance_with_a_fraction_is_shown_with_it() {
+    let home = home(&frame("fixed", "1.0"));
+    let output = run(&home, &["compare", "frame.toml", "--tolerance", "12.5"]);
+    let text = String::from_utf8(output.stdout).unwrap();
+    assert!(text.contains("12.5\u{a0}%") || text.contains("12.5 %"), "{text}");
+    assert!(!text.contains("tolerance of 12 %") && !text.contains("tolerance of 13 %"), "{text}");
+}
+
+#[test]
+fn a_very_long_title_reaches_every_file() {
+    let title = "Workshop hall ".repeat(5_000);
+    let home = home(&frame("fixed", "1.0").replace("Workshop", title.trim_end()));
+    let output = run(&home, &["compare", "frame.toml"]);
+    assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+    let page = fs::read_to_string(home.path().join("output/frame/compare/report.html")).unwrap();
+    assert!(page.contains(title.trim_end()));
+}
+
+#[test]
+fn line_ends_and_byte_order_marks_of_other_systems_change_nothing() {
+    let unix = frame("fixed", "1.0");
+    let values = |text: &str| {
+        let home = home(text);
+        let output = run(&home, &["compare", "frame.toml", "--format", "csv"]);
+        assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+        output.stdout
+    };
+    let expected = values(&unix);
+    assert_eq!(values(&unix.replace('\n', "\r\n")), expected);
+    assert_eq!(values(&format!("\u{feff}{unix}")), expected);
+    assert_eq!(values(&format!("\u{feff}{}", unix.replace('\n', "\r\n"))), expected);
+}
+
+#[cfg(target_os = "linux")]
+#[test]
+fn a_full_standard_output_is_exit_code_4() {
+    let home = home(&frame("fixed", "1.0"));
+    let full = File::options().write(true).open("/dev/full").unwrap();
+    let mut command = std::process::Command::new(env!("CARGO_BIN_EXE_swaybound"));
+    let output = command.current_dir(home.path()).args(["compare", "frame.toml"]).stdout(full).output().unwrap();
+    assert_eq!(output.status.code(), Some(4), "{}", stderr(&output));
+    assert!(stderr(&output).contains("standard output could not be written"), "{}", stderr(&output));
+}
+
+#[cfg(target_os = "linux")]
+#[test]
+fn a_file_name_that_is_not_text_is_no_reason_to_panic() {
+    use std::os::unix::ffi::OsStrExt;
+    let name = std::ffi::OsStr::from_bytes(b"h\xe4lle.toml");
+    let home = tempfile::tempdir().unwrap();
+    fs::write(home.path().join(name), frame("fixed", "1.0")).unwrap();
+    let mut command = std::process::Command::new(env!("CARGO_BIN_EXE_swaybound"));
+    let output = command.current_dir(home.path()).arg("compare").arg(name).output().unwrap();
+    assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+    let mut expected = std::ffi::OsString::from("output/");
+    expected.push(std::ffi::OsStr::from_bytes(b"h\xe4lle/compare/record.json"));
+    let record = fs::read_to_string(home.path().join(expected)).unwrap();
+    assert!(record.contains("swaybound compare 'h\u{fffd}lle.toml'"), "{record}");
 }

@@ -1,8 +1,9 @@
 //! `swaybound compare`: the quick methods beside the exact answer of one frame.
 
 use super::failure::Failure;
-use super::{Common, Format, complain, output};
+use super::{Common, Format, complain, interrupt, output, report};
 use clap::{Args, ValueEnum};
+use std::iter::once;
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use std::time::{Instant, SystemTime};
@@ -11,13 +12,9 @@ use swaybound::compare::verdict::Subject;
 use swaybound::compare::{Comparison, ExactChoice, Options, compare};
 use swaybound::frame::file::{FrameFile, parse};
 use swaybound::frame::options::AnalysisOptions;
-use swaybound::report::compare::{Findings, about, brief, charts, page, tables};
-use swaybound::report::figure::png;
-use swaybound::report::{Dataset, Figure, Input, Record, Run, command_line, csv, html, json, text, workbook};
-use swaybound::store::{ReportFolder, read_text};
-
-/// Pixels of a PNG per CSS pixel of the chart.
-const PNG_SCALE: f32 = 2.0;
+use swaybound::report::compare::{Findings, brief, tables};
+use swaybound::report::{Dataset, Input, Record, Run, command_line, csv, json, text};
+use swaybound::store::{ReportPlace, read_text};
 
 /// Run the quick methods beside the exact analysis of one frame and state every error
 #[derive(Debug, Args)]
@@ -89,9 +86,12 @@ fn method(text: &str) -> Result<&'static str, String> {
 
 /// Runs the command.
 pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
+    interrupt::listen(args.common.quiet);
     let (start, clock) = (SystemTime::now(), Instant::now());
     let text = read_text(&args.frame)?;
     let file = read_frame(args, &text)?;
+    let place = args.common.out.clone().unwrap_or_else(|| output::usual_place(&args.frame, "compare"));
+    let judged = judge(args, &place)?;
     let options = Options { tolerance: args.tolerance, exact: args.exact.choice(), methods: args.methods.clone() };
     let unsolvable = |fault| Failure::Unsolvable { fault, path: args.frame.clone() };
     let comparison = compare(&file.frame, &AnalysisOptions::plain(&file.frame), options).map_err(unsolvable)?;
@@ -104,10 +104,21 @@ pub(super) fn run(args: &CompareArgs) -> Result<ExitCode, Failure> {
     let tables = tables(&file.frame, &comparison);
     let host = format!("{} {}", std::env::consts::OS, std::env::consts::ARCH);
     let dataset = Dataset::new(record, Run::new(start, clock.elapsed(), 1, host), tables)?;
-    write_report(args, &findings, &dataset)?;
+    report::write(&judged, &findings, &dataset, &args.common, args.png)?;
+    if !args.common.quiet {
+        output::note(&format!("report: {}", place.join("report.html").display()));
+    }
     output::results(&standard_output(args.common.format, &findings, &dataset)?)?;
     let met = comparison.some_method_meets(Subject::ColumnMoments);
     Ok(if args.require && !met { ExitCode::from(1) } else { ExitCode::SUCCESS })
+}
+
+/// Judges the place of the report before anything is computed.
+fn judge(args: &CompareArgs, place: &Path) -> Result<ReportPlace, Failure> {
+    let _held_off = interrupt::HoldOff::begin();
+    let judged = ReportPlace::judge(place, &args.frame)?;
+    interrupt::check()?;
+    Ok(judged)
 }
 
 fn read_frame(args: &CompareArgs, text: &str) -> Result<FrameFile, Failure> {
@@ -130,44 +141,20 @@ fn warn(args: &CompareArgs, file: &FrameFile, text: &str, warnings: &[String]) {
 }
 
 fn record(args: &CompareArgs, text: &str, findings: &Findings) -> Record {
-    let words = std::iter::once("swaybound".to_string()).chain(std::env::args().skip(1));
+    let words = once("swaybound".to_string())
+        .chain(std::env::args_os().skip(1).map(|word| word.to_string_lossy().into_owned()));
     let frame = findings.frame();
     let comparison: &Comparison = findings.comparison;
     Record::new("compare", command_line(words))
         .with_input(Input::new(args.frame.display().to_string(), text))
         .with_option("tolerance_percent", args.tolerance)
         .with_option("exact", args.exact.name())
+        .with_option("methods", if args.methods.is_empty() { "all".into() } else { args.methods.join(",") })
         .with_option("units", frame.report_units().name())
         .with_option("require", args.require)
         .with_count("storeys", frame.storeys())
         .with_count("bays", frame.bays())
         .with_count("methods", comparison.responses().count())
-}
-
-fn write_report(args: &CompareArgs, findings: &Findings, dataset: &Dataset) -> Result<(), Failure> {
-    let place = args.common.out.clone().unwrap_or_else(|| output::usual_place(&args.frame, "compare"));
-    let folder = ReportFolder::start(&place, &args.frame)?;
-    for table in dataset.tables() {
-        folder.write(&format!("{}.csv", table.name()), csv::write(table)?.as_bytes())?;
-    }
-    folder.write("result.json", json::write(dataset)?.as_bytes())?;
-    folder.write("record.json", json::record(dataset)?.as_bytes())?;
-    let charts = charts(findings);
-    for chart in &charts {
-        folder.write(&format!("{}.svg", chart.name), chart.svg.as_bytes())?;
-        if args.png {
-            folder.write(&format!("{}.png", chart.name), &png(&chart.svg, PNG_SCALE)?)?;
-        }
-    }
-    let figures: Vec<Figure> = charts.iter().map(|chart| chart.figure()).collect();
-    let page = page(findings, dataset.record(), figures);
-    folder.write("report.html", html::write(&page).as_bytes())?;
-    folder.write("results.xlsx", &workbook::write(dataset, &about(findings))?)?;
-    folder.finish()?;
-    if !args.common.quiet {
-        output::note(&format!("report: {}", Path::new(&place).join("report.html").display()));
-    }
-    Ok(())
 }
 
 fn standard_output(format: Format, findings: &Findings, dataset: &Dataset) -> Result<String, Failure> {

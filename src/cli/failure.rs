@@ -1,6 +1,6 @@
 //! Why a command could not be carried out, how it is said and with which exit code.
 
-use super::complain;
+use super::{complain, interrupt};
 use std::io;
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -45,6 +45,9 @@ pub(super) enum Failure {
     /// A picture could not be made.
     #[error("a picture could not be made: {0}")]
     Picture(#[from] PngError),
+    /// The user stopped the run.
+    #[error("interrupted")]
+    Interrupted,
     /// Standard output could not be written.
     #[error("standard output could not be written: {0}")]
     Output(#[from] io::Error),
@@ -68,6 +71,7 @@ impl Failure {
             // A frame without areas or with relative sizes is fine; what was asked of it is not.
             Self::Unsolvable { fault: Unsolvable::NoAreas | Unsolvable::RelativeSizes, .. } => 2,
             Self::Unsolvable { .. } => 3,
+            Self::Interrupted => interrupt::EXIT_CODE,
             Self::Store(_) | Self::Report(_) | Self::Picture(_) | Self::Output(_) => 4,
         })
     }

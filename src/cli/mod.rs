@@ -3,8 +3,10 @@
 mod compare;
 mod complain;
 mod failure;
+mod interrupt;
 mod new;
 mod output;
+mod report;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use std::io::Write;
@@ -38,7 +40,8 @@ enum Command {
 /// Flags that every command with a report has.
 #[derive(Debug, Args)]
 struct Common {
-    /// Folder for the report [default: output/<file stem>/<command>]
+    /// Folder for the report [default: output/<file stem>/<command>, which frame files of one name share]. A report that
+    /// stands there is replaced as a whole, with whatever was added to its folder
     #[arg(long, value_name = "DIR")]
     out: Option<PathBuf>,
     /// What goes to standard output

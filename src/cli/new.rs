@@ -1,13 +1,13 @@
 //! `swaybound new`: a commented frame file to start from.
 
 use super::failure::Failure;
-use super::{Units, output};
+use super::{Units, complain, output};
 use clap::Args;
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use swaybound::frame::file::schema;
 use swaybound::frame::template::{TemplateLoad, TemplateOptions, TemplateShape, write};
-use swaybound::store::{StoreFault, write_new};
+use swaybound::store::{StoreFault, read_text, write_new};
 use swaybound::units::ReportUnits;
 
 /// Name of the schema beside a frame file, as its first line gives it.
@@ -39,10 +39,10 @@ pub(super) struct NewArgs {
     #[arg(long, value_name = "LENGTH", value_delimiter = ',')]
     width: Vec<String>,
     /// Lateral force of each floor from the lowest: "40 kN,60 kN,80 kN"
-    #[arg(long, value_name = "FORCE", value_delimiter = ',', conflicts_with_all = ["base_shear", "shape"])]
+    #[arg(long, value_name = "FORCE", value_delimiter = ',', allow_hyphen_values = true, conflicts_with_all = ["base_shear", "shape"])]
     forces: Vec<String>,
     /// Base shear, shared out over the height by --shape
-    #[arg(long, value_name = "FORCE")]
+    #[arg(long, value_name = "FORCE", allow_hyphen_values = true)]
     base_shear: Option<String>,
     /// How the base shear is shared out: uniform, triangular, or a power of the height such as 1.5
     #[arg(long, value_parser = shape)]
@@ -120,7 +120,11 @@ pub(super) fn run(args: &NewArgs) -> Result<ExitCode, Failure> {
         let beside = path.with_file_name(SCHEMA);
         match write_new(&beside, &schema) {
             Ok(()) => output::note(&format!("schema for editors: {}", beside.display())),
-            Err(StoreFault::Exists { .. }) => {}
+            Err(StoreFault::Exists { .. }) if read_text(&beside).is_ok_and(|text| text == schema) => {}
+            Err(StoreFault::Exists { .. }) => output::note(&complain::plain_warning(&format!(
+                "{}: exists with other content and is kept; `swaybound new --schema` prints the schema of this version",
+                beside.display()
+            ))),
             Err(other) => return Err(other.into()),
         }
     }

@@ -44,7 +44,11 @@ impl AnalysisOptions {
     }
     /// Plain.
     pub fn is_plain(&self) -> bool {
-        false
+        let shear = self.column_shear_area.iter().chain(&self.beam_shear_area).all(Option::is_none);
+        shear
+            && self.gravity.is_none()
+            && !self.has_zones()
+            && self.beam_springs.iter().all(|s| *s == [EndSpring::Rigid; 2])
     }
     /// Zones.
     pub fn has_zones(&self) -> bool {

@@ -2,6 +2,8 @@
 
 use super::number::full;
 use super::{Cell, Fault, Table};
+use std::borrow::Cow;
+use std::io::{self, Write};
 
 /// The table as CSV.
 ///
@@ -11,22 +13,30 @@ use super::{Cell, Fault, Table};
 /// # References
 /// RFC 4180, but with LF alone at line ends.
 pub fn write(table: &Table) -> Result<String, Fault> {
-    let fault = |error: ::csv::Error| Fault::Csv { table: table.name().into(), cause: error.to_string() };
-    let mut writer = ::csv::WriterBuilder::new().from_writer(Vec::new());
-    writer.write_record(table.columns().iter().map(|column| column.name)).map_err(fault)?;
-    for row in table.rows() {
-        writer.write_record(row.iter().map(field)).map_err(fault)?;
-    }
-    let failed = |cause: String| Fault::Csv { table: table.name().into(), cause };
-    let bytes = writer.into_inner().map_err(|error| failed(error.to_string()))?;
-    String::from_utf8(bytes).map_err(|error| failed(error.to_string()))
+    let fault = |cause: String| Fault::Csv { table: table.name().into(), cause };
+    let mut bytes = Vec::new();
+    write_to(table, &mut bytes).map_err(|error| fault(error.to_string()))?;
+    String::from_utf8(bytes).map_err(|error| fault(error.to_string()))
 }
 
-fn field(cell: &Cell) -> String {
+/// The table as CSV, row by row.
+///
+/// # Errors
+/// What `out` returns.
+pub fn write_to(table: &Table, out: &mut dyn Write) -> io::Result<()> {
+    let mut writer = ::csv::WriterBuilder::new().from_writer(out);
+    writer.write_record(table.columns().iter().map(|column| column.name))?;
+    for row in table.rows() {
+        writer.write_record(row.iter().map(field))?;
+    }
+    writer.flush()
+}
+
+fn field(cell: &Cell) -> Cow<'_, [u8]> {
     match cell {
-        Cell::Text(text) => text.to_string(),
-        Cell::Number(value) => full(*value),
-        Cell::Integer(value) => value.to_string(),
-        Cell::Blank => String::new(),
+        Cell::Text(text) => text.as_bytes().into(),
+        Cell::Number(value) => full(*value).into_bytes().into(),
+        Cell::Integer(value) => value.to_string().into_bytes().into(),
+        Cell::Blank => Cow::default(),
     }
 }

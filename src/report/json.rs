@@ -3,19 +3,32 @@
 //! A row stands on one line, a blank is `null`, numbers carry full precision.
 
 use super::number::full;
-use super::{Cell, ColumnInfo, Dataset, Fault, PROGRAM, Table};
+use super::{Cell, Dataset, Fault, PROGRAM, Table};
 use serde::Serialize;
+use serde::ser::Error;
+use std::io::{self, Write};
 
 /// The whole dataset.
 ///
 /// # Errors
 /// [`Fault::Json`].
 pub fn write(dataset: &Dataset) -> Result<String, Fault> {
-    let mut members = heads(dataset)?;
+    let mut bytes = Vec::new();
+    write_to(dataset, &mut bytes).map_err(serde_json::Error::custom)?;
+    String::from_utf8(bytes).map_err(|error| serde_json::Error::custom(error).into())
+}
+
+/// The whole dataset, row by row.
+///
+/// # Errors
+/// What `out` returns.
+pub fn write_to(dataset: &Dataset, out: &mut dyn Write) -> io::Result<()> {
+    write!(out, "{{\n{}", heads(dataset)?.join(",\n"))?;
     for table in dataset.tables() {
-        members.push(member(table.name(), &rows(table)?));
+        write!(out, ",\n{}", member(table.name(), ""))?;
+        rows(table, out)?;
     }
-    Ok(object(&members))
+    out.write_all(b"\n}\n")
 }
 
 /// Record and run alone, for `record.json`.
@@ -23,52 +36,55 @@ pub fn write(dataset: &Dataset) -> Result<String, Fault> {
 /// # Errors
 /// [`Fault::Json`].
 pub fn record(dataset: &Dataset) -> Result<String, Fault> {
-    Ok(object(&heads(dataset)?))
+    Ok(format!("{{\n{}\n}}\n", heads(dataset)?.join(",\n")))
 }
 
 /// Whether a text is a `record.json` of this program.
 pub fn is_ours(text: &str) -> bool {
-    let read: Option<serde_json::Value> = serde_json::from_str(text).ok();
-    read.is_some_and(|file| file["record"]["program"] == PROGRAM)
+    inputs_of_ours(text).is_some()
 }
 
-fn heads(dataset: &Dataset) -> Result<Vec<String>, Fault> {
-    Ok(vec![member("record", &pretty(dataset.record())?), member("run", &pretty(dataset.run())?)])
+/// Names of the inputs in a `record.json` of this program, as typed then; `None` for any other text.
+pub fn inputs_of_ours(text: &str) -> Option<Vec<String>> {
+    let file: serde_json::Value = serde_json::from_str(text).ok()?;
+    let record = &file["record"];
+    let inputs = record["inputs"].as_array().into_iter().flatten();
+    (record["program"] == PROGRAM).then(|| inputs.filter_map(|input| Some(input["name"].as_str()?.into())).collect())
+}
+
+fn heads(dataset: &Dataset) -> Result<[String; 2], serde_json::Error> {
+    Ok([member("record", &pretty(dataset.record())?), member("run", &pretty(dataset.run())?)])
 }
 
 fn member(name: &str, value: &str) -> String {
     format!("  \"{name}\": {value}")
 }
 
-fn object(members: &[String]) -> String {
-    format!("{{\n{}\n}}\n", members.join(",\n"))
-}
-
 /// Indented text, moved right by one level. A line feed inside a JSON string is escaped, so each one here is layout.
-fn pretty(value: &impl Serialize) -> Result<String, Fault> {
+fn pretty(value: &impl Serialize) -> Result<String, serde_json::Error> {
     Ok(serde_json::to_string_pretty(value)?.replace('\n', "\n  "))
 }
 
-fn rows(table: &Table) -> Result<String, Fault> {
-    let rows: Vec<String> =
-        table.rows().iter().map(|row| object_row(table.columns(), row)).collect::<Result<_, _>>()?;
-    match rows.is_empty() {
-        true => Ok("[]".into()),
-        false => Ok(format!("[\n    {}\n  ]", rows.join(",\n    "))),
+fn rows(table: &Table, out: &mut dyn Write) -> io::Result<()> {
+    if table.rows().is_empty() {
+        return out.write_all(b"[]");
     }
+    for (index, row) in table.rows().iter().enumerate() {
+        out.write_all(if index == 0 { b"[\n    {" } else { b",\n    {" })?;
+        for (place, (column, cell)) in table.columns().iter().zip(row).enumerate() {
+            write!(out, "{}\"{}\": ", if place == 0 { "" } else { ", " }, column.name)?;
+            value(cell, out)?;
+        }
+        out.write_all(b"}")?;
+    }
+    out.write_all(b"\n  ]")
 }
 
-fn object_row(columns: &[ColumnInfo], row: &[Cell]) -> Result<String, Fault> {
-    let field = |(column, cell): (&ColumnInfo, &Cell)| Ok(format!("\"{}\": {}", column.name, value(cell)?));
-    let fields: Vec<String> = columns.iter().zip(row).map(field).collect::<Result<_, Fault>>()?;
-    Ok(format!("{{{}}}", fields.join(", ")))
-}
-
-fn value(cell: &Cell) -> Result<String, Fault> {
+fn value(cell: &Cell, out: &mut dyn Write) -> io::Result<()> {
     match cell {
-        Cell::Text(text) => Ok(serde_json::to_string(text)?),
-        Cell::Number(value) => Ok(full(*value)),
-        Cell::Integer(value) => Ok(value.to_string()),
-        Cell::Blank => Ok("null".into()),
+        Cell::Text(text) => Ok(serde_json::to_writer(out, text)?),
+        Cell::Number(value) => out.write_all(full(*value).as_bytes()),
+        Cell::Integer(value) => write!(out, "{value}"),
+        Cell::Blank => out.write_all(b"null"),
     }
 }

@@ -8,6 +8,8 @@ use rust_xlsxwriter::{DocProperties, ExcelDateTime, Format, FormatAlign, Workboo
 
 /// Name of the first sheet. Table names have small letters, so none can clash.
 const ABOUT: &str = "About";
+/// Rows of a sheet, its head among them, a limit of the file format.
+const MOST_ROWS: usize = 1_048_576;
 /// Longest text of a cell, a limit of the file format.
 const LONGEST_TEXT: usize = 32_767;
 /// Columns are at least and at most so wide, in characters.
@@ -28,11 +30,17 @@ pub struct About {
     pub notes: Vec<String>,
 }
 
-/// The bytes of the workbook.
+/// The bytes of the workbook. A table with more rows than a sheet holds (1 048 576, its head among them) is left out, and
+/// the first sheet says so.
 ///
 /// # Errors
-/// [`Fault::Sheet`] where a table exceeds the limits of the format (1 048 576 rows, 32 767 characters a cell).
+/// [`Fault::Sheet`] where a table exceeds another limit of the format (16 384 columns, 32 767 characters a cell).
 pub fn write(dataset: &Dataset, about: &About) -> Result<Vec<u8>, Fault> {
+    write_up_to(MOST_ROWS, dataset, about)
+}
+
+/// The workbook with sheets of at most so many rows.
+fn write_up_to(most_rows: usize, dataset: &Dataset, about: &About) -> Result<Vec<u8>, Fault> {
     let mut book = Workbook::new();
     let created = ExcelDateTime::from_ymd(2000, 1, 1).map_err(Fault::Workbook)?;
     let author = format!("{} {}", dataset.record().program, dataset.record().version);
@@ -44,8 +52,11 @@ pub fn write(dataset: &Dataset, about: &About) -> Result<Vec<u8>, Fault> {
         let sheet = sheet.to_string();
         move |cause| Fault::Sheet { sheet, cause }
     };
-    fill_about(book.add_worksheet(), dataset, about, &formats).map_err(named(ABOUT))?;
-    for table in dataset.tables() {
+    let (held, left_out): (Vec<_>, Vec<_>) = dataset.tables().iter().partition(|table| table.rows().len() < most_rows);
+    let left_out: Vec<_> = left_out.into_iter().map(|table| reason(table, most_rows)).collect();
+    let mut page = Page { sheet: book.add_worksheet(), formats: &formats, line: 0, most_rows };
+    page.fill(dataset, about, &left_out).map_err(named(ABOUT))?;
+    for table in held {
         fill_table(book.add_worksheet(), table, &formats).map_err(named(table.name()))?;
     }
     book.save_to_buffer().map_err(Fault::Workbook)
@@ -137,18 +148,12 @@ fn width(table: &Table, column: usize) -> usize {
     (longest + 1).max(head).clamp(COLUMN_WIDTHS.0, COLUMN_WIDTHS.1)
 }
 
-fn fill_about(sheet: &mut Worksheet, dataset: &Dataset, about: &About, formats: &Formats) -> Result<(), XlsxError> {
-    sheet.set_name(ABOUT)?;
-    sheet.set_column_width(0, 24)?.set_column_width(1, 26)?.set_column_width(2, 90)?;
-    sheet.set_landscape().set_print_fit_to_pages(1, 0);
-    let mut page = Page { sheet, formats, line: 0 };
-    page.sheet.write_string_with_format(0, 0, about.title.as_str(), &formats.title)?;
-    page.line = 1;
-    page.sentences("Cautions", &about.cautions)?;
-    page.sentences("Notes", &about.notes)?;
-    page.record(dataset.record())?;
-    page.columns(dataset.tables())?;
-    page.inputs(dataset.record())
+/// Why a table has no sheet, and where it is found.
+fn reason(table: &Table, most_rows: usize) -> String {
+    let (name, rows, most) = (table.name(), table.rows().len(), most_rows - 1);
+    format!(
+        "{name}: {rows} rows, more than a sheet holds below its head ({most}). {name}.csv and result.json hold them."
+    )
 }
 
 /// The `About` sheet, filled from the top down.
@@ -156,9 +161,25 @@ struct Page<'a> {
     sheet: &'a mut Worksheet,
     formats: &'a Formats,
     line: u32,
+    most_rows: usize,
 }
 
 impl Page<'_> {
+    fn fill(&mut self, dataset: &Dataset, about: &About, left_out: &[String]) -> Result<(), XlsxError> {
+        let sheet = &mut self.sheet;
+        sheet.set_name(ABOUT)?;
+        sheet.set_column_width(0, 24)?.set_column_width(1, 26)?.set_column_width(2, 90)?;
+        sheet.set_landscape().set_print_fit_to_pages(1, 0);
+        sheet.write_string_with_format(0, 0, fitting(&about.title), &self.formats.title)?;
+        self.line = 1;
+        self.sentences("Cautions", &about.cautions)?;
+        self.sentences("Left out of this workbook", left_out)?;
+        self.sentences("Notes", &about.notes)?;
+        self.record(dataset.record())?;
+        self.columns(dataset.tables())?;
+        self.inputs(dataset.record())
+    }
+
     fn head(&mut self, texts: &[&str]) -> Result<(), XlsxError> {
         self.line += 1;
         for (at, text) in (0..).zip(texts) {
@@ -209,6 +230,14 @@ impl Page<'_> {
     fn inputs(&mut self, record: &Record) -> Result<(), XlsxError> {
         for input in &record.inputs {
             self.head(&[&fitting(&format!("Input file {}", input.name))])?;
+            if self.line as usize + input.text.lines().count() > self.most_rows {
+                self.sheet.write_string(
+                    self.line,
+                    0,
+                    "The file has more lines than a sheet holds: see record.json.",
+                )?;
+                continue;
+            }
             for line in input.text.lines() {
                 self.sheet.write_string_with_format(self.line, 0, fitting(line), &self.formats.fixed_pitch)?;
                 self.line += 1;
@@ -223,5 +252,52 @@ fn fitting(text: &str) -> String {
     match text.chars().count() > LONGEST_TEXT {
         true => text.chars().take(LONGEST_TEXT - 1).chain(['…']).collect(),
         false => text.into(),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::report::{ColumnInfo, Input, Run};
+    use calamine::{Reader, Xlsx};
+    use std::io::Cursor;
+    use std::time::{Duration, UNIX_EPOCH};
+
+    static COLUMNS: [ColumnInfo; 1] = [ColumnInfo { name: "storey", description: "which storey" }];
+
+    fn table(name: &'static str, rows: usize) -> Table {
+        Table::new(name, &COLUMNS, (0..rows).map(|row| [Cell::from(row)]))
+    }
+
+    fn book(most_rows: usize, input: &str) -> Xlsx<Cursor<Vec<u8>>> {
+        let record = Record::new("compare", String::new()).with_input(Input::new("frame.toml", input));
+        let run = Run::new(UNIX_EPOCH, Duration::ZERO, 1, "host");
+        let dataset = Dataset::new(record, run, vec![table("fits", most_rows - 1), table("long", most_rows)]).unwrap();
+        let bytes = write_up_to(most_rows, &dataset, &About::default()).unwrap();
+        Xlsx::new(Cursor::new(bytes)).unwrap()
+    }
+
+    fn words(book: &mut Xlsx<Cursor<Vec<u8>>>) -> String {
+        let range = book.worksheet_range(ABOUT).unwrap();
+        range.used_cells().map(|(_, _, cell)| cell.to_string() + "\n").collect()
+    }
+
+    #[test]
+    fn a_table_longer_than_a_sheet_is_left_out_and_the_first_sheet_says_where_it_is() {
+        let mut book = book(60, "title");
+        assert_eq!(book.sheet_names(), [ABOUT, "fits"]);
+        assert_eq!(book.worksheet_range("fits").unwrap().height(), 60);
+        let words = words(&mut book);
+        let said = "long: 60 rows, more than a sheet holds below its head (59). long.csv and result.json hold them.";
+        assert!(words.contains(said), "{words}");
+        assert!(!words.contains("fits: "), "{words}");
+    }
+
+    #[test]
+    fn an_input_longer_than_a_sheet_is_left_out_too() {
+        let mut long = book(60, &"# line\n".repeat(60));
+        assert!(words(&mut long).contains("more lines than a sheet holds"));
+        let mut short = book(60, &"# line\n".repeat(20));
+        assert_eq!(words(&mut short).matches("# line").count(), 20);
     }
 }

@@ -45,6 +45,24 @@ pub enum StoreFault {
         /// The folder.
         path: PathBuf,
     },
+    /// The place of the report folder, or one above it, is a file.
+    #[error("{}: exists and is not a folder; choose another --out", path.display())]
+    NotFolder {
+        /// The file.
+        path: PathBuf,
+    },
+    /// The place of the report folder is a link to nothing.
+    #[error("{}: is a link to something that does not exist; mend the link or choose another --out", path.display())]
+    DanglingLink {
+        /// The link.
+        path: PathBuf,
+    },
+    /// The place of the report folder ends in no name.
+    #[error("{}: names no folder that a report could replace; end --out with the report folder's own name", path.display())]
+    NoName {
+        /// The path as given.
+        path: PathBuf,
+    },
     /// The report would replace the folder its own input lies in.
     #[error("{}: the frame file lies in this folder, which the report would replace; choose another --out", path.display())]
     HoldsInput {

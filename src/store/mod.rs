@@ -2,8 +2,12 @@
 
 mod fault;
 mod folder;
+mod lock;
+mod place;
 mod read;
+mod siblings;
 
 pub use fault::StoreFault;
 pub use folder::ReportFolder;
+pub use place::ReportPlace;
 pub use read::{INPUT_LIMIT, read_text, write_new};
