@@ -9,7 +9,7 @@ use crate::response::Response;
 /// Name of the method in files.
 pub const ID: &str = "second-order";
 
-/// Axial forces have settled when they change by less than this share of the largest gravity force in a column.
+/// Axial forces have settled when they change by less than this share of the largest axial force in a column.
 const SETTLED: f64 = 1e-10;
 /// The most rounds of solution. Axial forces settle within a few unless the frame is next to buckling.
 const MOST_ROUNDS: usize = 60;
@@ -21,7 +21,7 @@ const LARGEST_FACTOR: f64 = 1e9;
 /// Why the rounds of solution stopped.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Stop {
-    /// Axial forces changed by less than 1e-10 of the largest gravity force in a column.
+    /// Axial forces changed by less than 1e-10 of the largest axial force in a column.
     Settled,
 }
 
@@ -49,7 +49,8 @@ pub struct SecondOrder {
 /// N, m, rad.
 ///
 /// # Assumptions
-/// Linear elastic material, plumb frame. Gravity acts through column compression alone: it shortens no column and bends no
+/// Linear elastic material, plumb frame. Axial strain acts over the whole length between joint centres, rigid zones
+/// included. Gravity acts through column compression alone: it shortens no column and bends no
 /// beam, so the answer is the lateral part, amplified. Floors move sideways as one.
 ///
 /// # Errors
@@ -74,13 +75,20 @@ pub fn analyse(frame: &Frame, options: &AnalysisOptions) -> Result<Option<Second
         let columns = (0..frame.storeys()).flat_map(|storey| response.storey_columns(storey));
         let next: Vec<_> = columns.zip(&gravity).map(|(column, gravity)| gravity - column.axial).collect();
         let change = next.iter().zip(&model.compression).map(|(a, b)| (a - b).abs()).fold(0.0, f64::max);
-        if change <= SETTLED * largest {
+        // The lateral load's own axial forces count too: where gravity is slight, rounding in them never gets under it.
+        let felt = columns_axial(&response, frame).fold(largest, f64::max);
+        if change <= SETTLED * felt {
             let response = accept(frame, response, Some(floors))?;
             return Ok(Some(SecondOrder { response, critical_load_factor, rounds, stop: Stop::Settled }));
         }
         model.compression = next;
     }
     Err(Unsolvable::Unsettled { iterations: MOST_ROUNDS })
+}
+
+/// Sizes of the column axial forces, N.
+fn columns_axial(response: &Response, frame: &Frame) -> impl Iterator<Item = f64> {
+    (0..frame.storeys()).flat_map(|storey| response.storey_columns(storey)).map(|column| column.axial.abs())
 }
 
 /// Gravity in each column: the loads of all floors above it on its line, N.
