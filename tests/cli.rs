@@ -102,6 +102,62 @@ fn a_frame_that_cannot_stand_is_exit_code_3_and_names_the_storey() {
     fails(&home(&frame("pinned", "0")), &["compare", "frame.toml"], 3, "storey 1 sways without resistance");
 }
 
+/// The frame with column areas and vertical loads of `load` at each floor.
+fn heavy(load: &str) -> String {
+    let text = frame("fixed", "1.0").replace("inertia = \"2e-4 m4\"", "inertia = \"2e-4 m4\"\narea = \"0.01 m2\"");
+    format!("{text}[gravity]\nfloors = [\"{load}\", \"{load}\"]\n")
+}
+
+#[test]
+fn gravity_brings_the_second_order_answer_beside_the_first() {
+    let home = home(&heavy("900 kN"));
+    let output = run(&home, &["compare", "frame.toml"]);
+    assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+    let text = String::from_utf8(output.stdout).unwrap();
+    assert!(text.contains("Second order over first order") && text.contains("before the frame buckles sideways"));
+    let report = home.path().join("output/frame/compare");
+    let amplified = fs::read_to_string(report.join("second_order.csv")).unwrap();
+    assert_eq!(amplified.lines().count(), 3);
+    let first: f64 = amplified.lines().nth(1).unwrap().split(',').nth(3).unwrap().parse().unwrap();
+    assert!(first > 1.0 && first < 2.0, "{amplified}");
+    assert!(fs::read_to_string(report.join("values.csv")).unwrap().contains("\nsecond-order,column,1,A,moment_foot,-"));
+}
+
+#[test]
+fn a_frame_that_buckles_is_exit_code_3_and_names_the_storey() {
+    fails(&home(&heavy("900 MN")), &["compare", "frame.toml"], 3, "make storey 1 sway without limit");
+}
+
+#[test]
+fn chosen_methods_alone_are_run_and_unknown_ones_refused() {
+    let home = home(&frame("fixed", "1.0"));
+    let output = run(&home, &["compare", "frame.toml", "--methods", "factor,portal", "--format", "csv"]);
+    let text = String::from_utf8(output.stdout).unwrap();
+    let methods: std::collections::BTreeSet<_> =
+        text.lines().skip(1).map(|line| line.split(',').next().unwrap()).collect();
+    assert_eq!(methods.into_iter().collect::<Vec<_>>(), ["factor", "portal", "slope-deflection"]);
+    fails(&home, &["compare", "frame.toml", "--methods", "portl"], 2, "the quick methods are portal");
+}
+
+#[test]
+fn a_method_that_does_not_apply_is_refused_with_its_reason() {
+    let home = home(&frame("pinned", "1.0"));
+    let text = String::from_utf8(run(&home, &["compare", "frame.toml"]).stdout).unwrap();
+    let words = text.split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(words.contains("Wilbur's storey stiffness") && words.contains("not run:"), "{text}");
+}
+
+#[test]
+fn rigid_zones_bring_moments_at_their_faces() {
+    let text = heavy("1 kN") + "[joints]\ncolumn = \"0.3 m\"\nbeam = \"0.2 m\"\n";
+    let home = home(&text);
+    let csv = String::from_utf8(run(&home, &["compare", "frame.toml", "--format", "csv"]).stdout).unwrap();
+    for method in ["portal", "stiffness", "second-order", "slope-deflection"] {
+        assert!(csv.contains(&format!("\n{method},column,2,B,moment_head_face,")), "{method}");
+        assert!(csv.contains(&format!("\n{method},beam,1,A-B,design_moment_face,")), "{method}");
+    }
+}
+
 #[test]
 fn an_analysis_that_lacks_areas_is_refused_with_the_reason() {
     let words = ["compare", "frame.toml", "--exact", "stiffness"];

@@ -25,6 +25,15 @@ pub enum Stop {
     Settled,
 }
 
+impl Stop {
+    /// Name in files.
+    pub fn id(self) -> &'static str {
+        match self {
+            Self::Settled => "settled",
+        }
+    }
+}
+
 /// The second-order answer.
 #[derive(Debug, Clone, PartialEq)]
 pub struct SecondOrder {

@@ -2,7 +2,7 @@
 
 use super::charts::ELEVATION;
 use super::ranking::{amplification, exact_answers, own_methods, ranking, stated};
-use super::summary::{READING, Shown, by_storey, judged, percent_cell, short_name};
+use super::summary::{READING, Shown, by_storey, is_stated, judged, percent_cell, short_name};
 use super::{Findings, feet_table, sheet, sizes, verdict_cards, words};
 use crate::compare::verdict::Subject;
 use crate::frame::{Feet, MemberKind};
@@ -115,12 +115,14 @@ fn storeys(report: &mut Document, findings: &Findings) {
     let (frame, comparison) = (findings.frame(), findings.comparison);
     report.section("Storey by storey");
     report.paragraph(READING);
-    let further = [Shown::FOOT_MOMENTS, Shown::HEAD_MOMENTS, Shown::AXIAL];
+    let further = [Shown::COLUMN_FACES, Shown::BEAM_FACES, Shown::FOOT_MOMENTS, Shown::HEAD_MOMENTS, Shown::AXIAL];
     let methods: Vec<_> = own_methods(comparison).map(|quick| quick.entry.info.id).collect();
-    for shown in stated(comparison).map(Shown::subject).chain(further) {
+    for shown in
+        stated(comparison).map(Shown::subject).chain(further.into_iter().filter(|shown| is_stated(comparison, *shown)))
+    {
         report.table(by_storey(frame, comparison, shown, MOST_ROWS, &methods));
     }
-    if let Some(table) = drift_table(findings) {
+    for table in [drift_table(findings), roof_sway(findings)].into_iter().flatten() {
         report.table(table);
     }
     report.paragraph(
@@ -164,6 +166,34 @@ fn drift_table(findings: &Findings) -> Option<TableBlock> {
         "A drift that is too small is on the unsafe side for drift limits; one that is too large lengthens the period.",
     );
     Some(table)
+}
+
+/// Roof sway of every answer that states movements; `None` where sizes are only relative.
+fn roof_sway(findings: &Findings) -> Option<TableBlock> {
+    let (frame, comparison) = (findings.frame(), findings.comparison);
+    let (unit, roof) = (Quantity::Sway.unit(frame.report_units()), frame.storeys() - 1);
+    let exact = comparison.reference.movement(roof)?.sway;
+    let mut table =
+        TableBlock::new("roof-sway", "Roof sway of every method").name("method").number("sway", unit.symbol, 3);
+    table = table.percent("error", 0).number("multiply by", "", 3);
+    for response in comparison.responses() {
+        let Some(movement) = response.movement(roof) else { continue };
+        let percent = 100.0 * (movement.sway.abs() - exact.abs()) / exact.abs();
+        let name = TableCell::from(words::method_name(comparison, response.method));
+        let cells = if response.method == comparison.reference.method {
+            [name, unit.from_si(movement.sway).into(), "measure".into(), TableCell::blank()]
+        } else {
+            let factor = words::factor(Some(exact.abs() / movement.sway.abs()));
+            [
+                name,
+                unit.from_si(movement.sway).into(),
+                percent_cell(percent, comparison.options.tolerance),
+                factor.into(),
+            ]
+        };
+        table.row(cells);
+    }
+    Some(judged(table, comparison))
 }
 
 fn statics(report: &mut Document, findings: &Findings) {

@@ -33,6 +33,12 @@ impl Shown {
     /// Moments at the column heads.
     pub(super) const HEAD_MOMENTS: Self =
         Self { name: "column head moments", kind: MemberKind::Column, quantity: Quantity::MomentHead };
+    /// The larger of a column's moments at the faces of its rigid zones.
+    pub(super) const COLUMN_FACES: Self =
+        Self { name: "column moments at the faces", kind: MemberKind::Column, quantity: Quantity::DesignMomentFace };
+    /// The larger of a beam's moments at the faces of its rigid zones.
+    pub(super) const BEAM_FACES: Self =
+        Self { name: "beam moments at the faces", kind: MemberKind::Beam, quantity: Quantity::DesignMomentFace };
     /// Column axial forces.
     pub(super) const AXIAL: Self =
         Self { name: "column axial forces", kind: MemberKind::Column, quantity: Quantity::Axial };
@@ -70,6 +76,12 @@ impl Shown {
             && error.place.class == class
             && group.contains(&error.member.storey())
     }
+}
+
+/// Whether the answers state `shown`.
+pub(super) fn is_stated(comparison: &Comparison, shown: Shown) -> bool {
+    let states = |error: &ValueError| error.place.kind == shown.kind && error.quantity == shown.quantity;
+    comparison.quick_errors().any(|(_, errors)| errors.iter().any(states))
 }
 
 /// Groups of storeys from the ground, single ones where they fit.

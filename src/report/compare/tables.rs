@@ -179,7 +179,7 @@ fn feet(comparison: &Comparison) -> Table {
 }
 
 fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
-    static COLUMNS: [ColumnInfo; 8] = [
+    static COLUMNS: [ColumnInfo; 10] = [
         STOREY,
         info("drift", "second-order storey drift, in the row's unit"),
         UNIT,
@@ -188,6 +188,8 @@ fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
         info("plain_amplifier", "1 / (1 - sum P drift / (V h)); blank where its denominator is not positive"),
         info("safer_amplifier", "1 / (1 - 1.2 sum P drift / (V h)); blank likewise"),
         info("critical_load_factor", "what gravity may be multiplied by; blank where gravity is negligible"),
+        info("rounds", "rounds of solution"),
+        info("stop", "why they stopped: settled, axial forces changed by less than 1e-10 of the largest"),
     ];
     let unit = units.movement();
     let rows = comparison.second_order.iter().flat_map(|(answer, storeys)| {
@@ -201,6 +203,8 @@ fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
                 found.plain.into(),
                 found.safer.into(),
                 answer.critical_load_factor.into(),
+                answer.rounds.into(),
+                answer.stop.id().into(),
             ]
         })
     });
