@@ -40,7 +40,7 @@ pub struct Chart {
 impl Chart {
     /// The chart as a figure of the page.
     pub fn figure(&self) -> Figure {
-        Figure::new(&self.name, &self.title, &self.svg, self.width)
+        Figure::new(format!("chart-{}", self.name), &self.title, &self.svg, self.width)
             .caption(say(&self.caption))
             .description(&self.caption)
             .file(format!("{}.svg", self.name))

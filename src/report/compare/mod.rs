@@ -112,7 +112,14 @@ fn feet_table(comparison: &Comparison, methods: &[&str]) -> Option<TableBlock> {
         if !methods.contains(&lines[0].method) {
             continue;
         }
-        let numbers = lines.iter().flat_map(|line| [line.fixed, line.sprung[0], line.sprung[1]].map(cell));
+        let numbers = Subject::FORCES.into_iter().flat_map(|subject| {
+            let line = lines.iter().find(|line| line.subject == subject);
+            line.map_or_else(
+                || [const { None }; 3],
+                |line| [Some(line.fixed), Some(line.sprung[0]), Some(line.sprung[1])],
+            )
+        });
+        let numbers = numbers.map(|percent: Option<f64>| percent.map(cell).into());
         table.row(std::iter::once(TableCell::from(summary::short_name(lines[0].method))).chain(numbers));
     }
     table.note(

@@ -103,8 +103,7 @@ fn place_table(findings: &Findings, subject: Subject) -> TableBlock {
 /// Elevations stand side by side to be compared, the others one below the other.
 fn charts(report: &mut Document, figures: Vec<Figure>) {
     report.section("Charts");
-    let (elevations, others): (Vec<_>, Vec<_>) =
-        figures.into_iter().partition(|figure| figure.key.starts_with(ELEVATION));
+    let (elevations, others): (Vec<_>, Vec<_>) = figures.into_iter().partition(|figure| figure.key.contains(ELEVATION));
     report.figures(elevations);
     others.into_iter().for_each(|figure| {
         report.figure(figure);
@@ -309,7 +308,7 @@ fn method_sheet(report: &mut Document, findings: &Findings) {
             inner.list(info.assumptions.iter().copied());
             sheet::add(
                 inner,
-                &format!("sheet-{}", info.id),
+                &format!("sheet-{}", info.id.replace('+', "-and-")),
                 &(quick.entry.worksheet)(frame, response),
                 frame.report_units(),
             );

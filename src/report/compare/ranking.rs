@@ -109,7 +109,7 @@ pub(super) fn amplification(findings: &Findings) -> Option<TableBlock> {
     let mut table = TableBlock::new("second-order", caption)
         .name("storey")
         .number("drift", unit.symbol, 3)
-        .under("amplification, exact")
+        .under("exact amplifier")
         .decimals("drift", "", 3)
         .decimals("column moment", "", 3)
         .under("quick amplifier")

@@ -10,7 +10,7 @@ const ROUNDING: f64 = 1e-12;
 /// Adds the steps of a hand calculation; `key` begins the keys of its tables.
 pub(super) fn add(report: &mut Document, key: &str, worksheet: &Worksheet, units: ReportUnits) {
     for (index, step) in worksheet.steps.iter().enumerate() {
-        report.minor(format!("{}. {}", index + 1, step.title));
+        report.subsection(format!("{}. {}", index + 1, step.title));
         report.paragraph(step.rule.as_str());
         report.table(table(&format!("{key}-{}", index + 1), step, units));
     }
