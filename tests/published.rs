@@ -68,7 +68,7 @@ fn portal_one_bay_of_six_storeys() {
     }
 }
 
-/// Portal method, three bays of 8, 6 and 4 m; read in lecture notes, printed to 0.001 kN and 0.01 kN m.
+/// Portal method, three bays of 8, 6 and 4 m; read in published teaching notes, printed to 0.001 kN and 0.01 kN m.
 #[test]
 fn portal_three_bays_of_three_storeys() {
     let frame = build(parts(&[8.0, 6.0, 4.0], &[4.0; 3], &from_the_roof(&[40.0, 80.0, 80.0])));
