@@ -42,7 +42,7 @@ pub(super) struct CompareArgs {
 
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
 enum Exact {
-    /// With column axial strain for tall or slender frames whose columns have areas
+    /// Second order where gravity is given, else with column axial strain where columns have areas
     Auto,
     /// Inextensible members
     SlopeDeflection,

@@ -32,7 +32,7 @@ pub(super) fn write(
     folder.write("results.xlsx", &workbook::write(dataset, &about(findings))?)?;
     interrupt::check()?;
     folder.finish()?;
-    interrupt::check()
+    Ok(())
 }
 
 fn write_data(folder: &ReportFolder, dataset: &Dataset) -> Result<(), Failure> {

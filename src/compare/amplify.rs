@@ -1,5 +1,6 @@
 //! How much gravity on the sway enlarges drifts and column moments, exactly and by quick amplifiers.
 
+use super::formulas::NEAR_ZERO;
 use crate::exact::second_order::SecondOrder;
 use crate::frame::Frame;
 use crate::response::Response;
@@ -9,8 +10,10 @@ use crate::response::Response;
 pub struct Amplification {
     /// Of the storey drift, exact.
     pub drift: f64,
-    /// Of the largest column design moment, exact.
-    pub moment: f64,
+    /// Of column design moments, exact: the largest ratio of any column of the storey that is not near zero.
+    pub columns: f64,
+    /// Of beam design moments, exact: the same of the beams of the storey's top floor.
+    pub beams: f64,
     /// Quick: 1 / (1 - sum P drift / (V h)); `None` where the denominator is not positive.
     pub plain: Option<f64>,
     /// Quick, the safer form: 1 / (1 - 1.2 sum P drift / (V h)); `None` where the denominator is not positive.
@@ -29,8 +32,11 @@ const SAFER: f64 = 1.2;
 /// # References
 /// P-delta amplifier: common practice (from memory); the safer form was derived for this project from one-bay frames.
 pub fn amplifications(frame: &Frame, first: &Response, second: &SecondOrder, gravity: &[f64]) -> Vec<Amplification> {
-    let largest = |response: &Response, storey: usize| {
-        response.storey_columns(storey).iter().map(|column| column.design_moment()).fold(0.0, f64::max)
+    let columns = |response: &Response, storey: usize| {
+        response.storey_columns(storey).iter().map(|column| column.design_moment()).collect::<Vec<_>>()
+    };
+    let beams = |response: &Response, floor: usize| {
+        response.floor_beams(floor).iter().map(|beam| beam.design_moment()).collect::<Vec<_>>()
     };
     let drift =
         |response: &Response, storey: usize| response.movement(storey).map_or(f64::NAN, |movement| movement.drift);
@@ -38,13 +44,21 @@ pub fn amplifications(frame: &Frame, first: &Response, second: &SecondOrder, gra
         let above: f64 = gravity[storey * frame.lines()..].iter().sum();
         let work = frame.storey_shear(storey) * frame.storey_height(storey);
         let ratio = above * drift(first, storey) / work;
-        let amplifier = |weight: f64| Some(1.0 / (1.0 - weight * ratio)).filter(|value| *value >= 1.0);
+        let amplifier = |weight: f64| Some(1.0 - weight * ratio).filter(|rest| *rest > 0.0).map(|rest| 1.0 / rest);
         Amplification {
             drift: drift(&second.response, storey) / drift(first, storey),
-            moment: largest(&second.response, storey) / largest(first, storey),
+            columns: largest_ratio(&columns(&second.response, storey), &columns(first, storey)),
+            beams: largest_ratio(&beams(&second.response, storey), &beams(first, storey)),
             plain: amplifier(1.0),
             safer: amplifier(SAFER),
         }
     };
     (0..frame.storeys()).map(of_storey).collect()
+}
+
+/// Largest second over first, leaving out what is near zero in the first.
+fn largest_ratio(second: &[f64], first: &[f64]) -> f64 {
+    let largest = first.iter().fold(0.0_f64, |a, b| a.max(*b));
+    let counted = second.iter().zip(first).filter(|(_, first)| **first > NEAR_ZERO * largest);
+    counted.map(|(second, first)| second / first).fold(1.0, f64::max)
 }

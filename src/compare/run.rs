@@ -43,8 +43,7 @@ pub enum ResultWarning {
 /// Which exact analysis the quick methods are measured by.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
 pub enum ExactChoice {
-    /// `stiffness` for tall or slender frames whose columns have areas and wherever options go beyond plain members, else
-    /// `slope-deflection`.
+    /// `second-order` where gravity is given, else `stiffness` where columns have areas, else `slope-deflection`.
     #[default]
     Automatic,
     /// Inextensible members.
@@ -102,8 +101,8 @@ pub struct Comparison {
     pub options: Options,
     /// The exact answer that errors are measured by.
     pub reference: Response,
-    /// The other exact answer, where there is one.
-    pub other_exact: Option<Response>,
+    /// The other exact answers of first order.
+    pub other_exact: Vec<Response>,
     /// Why the analysis with column axial strain has no answer.
     pub no_stiffness: Option<Unsolvable>,
     /// True where the frame is tall or slender but the measure leaves out column axial strain.
@@ -137,8 +136,13 @@ impl Comparison {
 
     /// Every answer: the exact ones first, then that in the deformed position.
     pub fn responses(&self) -> impl Iterator<Item = &Response> {
-        let deformed = self.second_order.iter().map(|(answer, _)| &answer.response);
-        self.exact().chain(deformed).chain(self.quick_responses())
+        self.exact().chain(self.deformed_beside()).chain(self.quick_responses())
+    }
+
+    /// The answer in the deformed position where it is not the measure itself.
+    pub fn deformed_beside(&self) -> Option<&Response> {
+        let answer = self.second_order.as_ref().map(|(answer, _)| &answer.response);
+        answer.filter(|_| self.reference.method != second_order::ID)
     }
 
     /// The error sets of the quick methods.
@@ -188,14 +192,23 @@ pub fn compare(frame: &Frame, analysis: &AnalysisOptions, options: Options) -> R
     let has_options = !analysis.is_plain();
     let (plain, with_strain) = (slope_deflection::analyse(frame), stiffness::analyse_with(frame, analysis));
     let strain_wanted = match options.exact {
-        ExactChoice::Automatic => has_options || tall && with_strain.is_ok(),
+        ExactChoice::Automatic => has_options || with_strain.is_ok(),
         ExactChoice::SlopeDeflection => false,
         ExactChoice::Stiffness => true,
     };
-    let deformed = second_order::analyse(frame, analysis)?;
+    let deformed = match options.exact {
+        ExactChoice::SlopeDeflection => None,
+        _ => second_order::analyse(frame, analysis)?,
+    };
     let no_stiffness = with_strain.as_ref().err().cloned();
     let first_order = with_strain.clone().ok();
-    let (reference, other_exact) = if strain_wanted { (with_strain?, plain.ok()) } else { (plain?, with_strain.ok()) };
+    let (first, other) = if strain_wanted { (with_strain?, plain.ok()) } else { (plain?, with_strain.ok()) };
+    let (reference, other_exact): (_, Vec<_>) = match &deformed {
+        Some(answer) if options.exact == ExactChoice::Automatic => {
+            (answer.response.clone(), std::iter::once(first).chain(other).collect())
+        }
+        _ => (first, other.into_iter().collect()),
+    };
     let second_order = deformed.zip(first_order).map(|(answer, first)| {
         let gravity = analysis.gravity.as_deref().unwrap_or_default();
         let storeys = amplifications(frame, &first, &answer, gravity);
@@ -232,8 +245,7 @@ impl Comparison {
         if analysis.has_zones() {
             self.state_faces(frame, analysis);
         }
-        let deformed = self.second_order.iter().map(|(answer, _)| &answer.response);
-        let measured = self.quick_responses().chain(&self.other_exact).chain(deformed);
+        let measured = self.quick_responses().chain(&self.other_exact).chain(self.deformed_beside());
         self.errors = measured.map(|response| (response.method, errors(frame, &self.reference, response))).collect();
         let tolerance = self.options.tolerance;
         let judged = self.quick_errors().flat_map(|(method, errors)| {
@@ -251,16 +263,11 @@ impl Comparison {
 
     /// Adds the moments at the faces of rigid zones to the answers that know joint centres only.
     fn state_faces(&mut self, frame: &Frame, analysis: &AnalysisOptions) {
-        let quick = self.quick.iter_mut().map(|quick| &mut quick.response);
-        for response in quick.chain([&mut self.other_exact]) {
-            let plain = |answer: &Response| answer.has_forces() && answer.method != stiffness::ID;
-            if let Some(answer) = response.take_if(|answer| plain(answer)) {
-                *response = Some(answer.with_zones(frame, &analysis.column_zones, &analysis.beam_zones));
+        let quick = self.quick.iter_mut().filter_map(|quick| quick.response.as_mut());
+        for answer in quick.chain(&mut self.other_exact).chain([&mut self.reference]) {
+            if answer.has_forces() && ![stiffness::ID, second_order::ID].contains(&answer.method) {
+                *answer = answer.clone().with_zones(frame, &analysis.column_zones, &analysis.beam_zones);
             }
-        }
-        if self.reference.method == slope_deflection::ID {
-            let faced = self.reference.clone().with_zones(frame, &analysis.column_zones, &analysis.beam_zones);
-            self.reference = faced;
         }
     }
 }
@@ -274,6 +281,7 @@ fn foot_lines(frame: &Frame, analysis: &AnalysisOptions, comparison: &Comparison
     let sprung = FOOT_RATIOS.map(|ratio| {
         let frame = frame.with_feet(Feet::Springs(frame.foot_springs(ratio))).ok()?;
         match exact.method {
+            second_order::ID => second_order::analyse(&frame, analysis).ok()?.map(|answer| answer.response),
             stiffness::ID => stiffness::analyse_with(&frame, analysis).ok(),
             _ => slope_deflection::analyse(&frame).ok(),
         }

@@ -19,10 +19,14 @@ pub const LARGEST_RESIDUAL: f64 = 1e-9;
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum Unsolvable {
     /// Some column has no area, so column axial strain is unknown.
-    #[error("not every column has an area, so column axial strain cannot be computed")]
+    #[error(
+        "not every column has an area, so column axial strain cannot be computed; give every column an area, or leave the options out with slope-deflection as the measure"
+    )]
     NoAreas,
     /// Member sizes are only relative, so column axial strain is unknown.
-    #[error("member sizes are known only relative to each other, so column axial strain cannot be computed")]
+    #[error(
+        "member sizes are known only relative to each other, so column axial strain cannot be computed; give end_column_inertia in [sizes]"
+    )]
     RelativeSizes,
     /// A storey can sway without resistance.
     #[error("the frame cannot stand: storey {storey} sways without resistance")]
@@ -40,16 +44,18 @@ pub enum Unsolvable {
     },
     /// Gravity makes the frame buckle sideways.
     #[error(
-        "the frame buckles under its gravity loads: multiplied by {factor:.3} they make storey {storey} sway without limit; stiffen the frame or correct the loads"
+        "the frame buckles under its gravity loads: at {factor:.3} times these loads {place}; stiffen the frame or correct the loads"
     )]
     Buckles {
         /// Critical load factor of the gravity loads, at most 1.
         factor: f64,
-        /// The lowest storey of the sway mode.
-        storey: usize,
+        /// What gives way, in words.
+        place: String,
     },
     /// The sway does not settle: lateral load and gravity together are too much.
-    #[error("the second-order sway does not settle after {iterations} rounds: the frame is too close to buckling")]
+    #[error(
+        "second order finds no equilibrium (round {iterations}): the lateral load's own compression takes the frame over its buckling load; stiffen the frame or correct the loads"
+    )]
     Unsettled {
         /// Rounds of solution taken.
         iterations: usize,

@@ -116,14 +116,15 @@ impl<'a> Model<'a> {
         Some(self.options.shear_modulus? * area?)
     }
 
-    /// Whether a column is compressed beyond what any end restraint could carry: (alpha l)^2 of 4 pi^2 and more.
-    pub(super) fn overloads_a_column(&self) -> bool {
+    /// The first column, by storey and line, that is compressed beyond what any end restraint could carry: (alpha l)^2 of
+    /// 4 pi^2 and more.
+    pub(super) fn overloaded_column(&self) -> Option<(usize, usize)> {
         let limit = 4.0 * std::f64::consts::PI.powi(2);
-        let mut columns =
-            (0..self.frame.storeys()).flat_map(|storey| (0..self.frame.lines()).map(move |line| (storey, line)));
-        columns.any(|(storey, line)| {
-            let parameter = self.column_bar(storey, line).axial_parameter();
-            self.compression[storey * self.frame.lines() + line] > 0.0 && !(0.0..limit).contains(&parameter)
+        let lines = self.frame.lines();
+        let mut columns = (0..self.frame.storeys()).flat_map(|storey| (0..lines).map(move |line| (storey, line)));
+        columns.find(|(storey, line)| {
+            let parameter = self.column_bar(*storey, *line).axial_parameter();
+            self.compression[storey * lines + line] > 0.0 && !(0.0..limit).contains(&parameter)
         })
     }
 

@@ -2,8 +2,8 @@
 
 use super::model::Model;
 use super::{Unsolvable, accept};
-use crate::frame::Frame;
 use crate::frame::options::AnalysisOptions;
+use crate::frame::{Frame, line_name};
 use crate::response::Response;
 
 /// Name of the method in files.
@@ -76,7 +76,7 @@ pub fn analyse(frame: &Frame, options: &AnalysisOptions) -> Result<Option<Second
     let largest = gravity.iter().fold(f64::MIN_POSITIVE, |a, b| a.max(*b));
     model.compression.clone_from(&gravity);
     for rounds in 1..=MOST_ROUNDS {
-        if model.overloads_a_column() {
+        if model.overloaded_column().is_some() {
             return Err(Unsolvable::Unsettled { iterations: rounds });
         }
         let solution = model.assemble().solve().map_err(|_| Unsolvable::Unsettled { iterations: rounds })?;
@@ -113,7 +113,7 @@ fn accumulated(frame: &Frame, floors: &[f64]) -> Vec<f64> {
 fn critical_factor(model: &mut Model, gravity: &[f64]) -> Result<Option<f64>, Unsolvable> {
     let mut stands = |factor: f64| {
         model.compression = gravity.iter().map(|force| factor * force).collect();
-        !model.overloads_a_column() && model.assemble().is_positive_definite()
+        model.overloaded_column().is_none() && model.assemble().is_positive_definite()
     };
     let (mut low, mut high) = (0.0, 1.0);
     while stands(high) {
@@ -130,8 +130,15 @@ fn critical_factor(model: &mut Model, gravity: &[f64]) -> Result<Option<f64>, Un
         return Ok(Some(low));
     }
     model.compression = gravity.iter().map(|force| high * (1.0 + 1e-6) * force).collect();
-    let chords = model.assemble().solve().err().map(|singular| model.chords(&singular)).unwrap_or_default();
-    let largest = chords.iter().fold(0.0_f64, |a, b| a.max(b.abs()));
-    let storey = chords.iter().position(|chord| chord.abs() >= 0.5 * largest).unwrap_or_default() + 1;
-    Err(Unsolvable::Buckles { factor: low, storey })
+    let place = match (model.overloaded_column(), model.assemble().solve().map_err(|mode| model.mechanism(&mode))) {
+        (Some((storey, line)), _) => {
+            format!("the column of storey {} on line {} gives way", storey + 1, line_name(line))
+        }
+        (None, Err(Unsolvable::FreeStorey { storey })) => format!("storey {storey} sways without limit"),
+        (None, Err(Unsolvable::FreeJoint { floor, line })) => {
+            format!("the columns at the joint of floor {floor} on line {line} give way")
+        }
+        _ => "it gives way".into(),
+    };
+    Err(Unsolvable::Buckles { factor: low, place })
 }

@@ -1,6 +1,6 @@
 //! The terminal report of a comparison: tables first, verdicts last.
 
-use super::ranking::{amplification, detailed, ranking, stated};
+use super::ranking::{amplification, detailed, judged_subjects, ranking, stated};
 use super::summary::{READING, Shown, by_storey};
 use super::words;
 use super::{Findings, feet_table, verdict_cards};
@@ -34,7 +34,10 @@ pub fn brief(findings: &Findings) -> Document {
         report.table(table);
     }
     report.section(format!("Verdicts at a tolerance of {}", words::tolerance(comparison)));
-    for subject in stated(comparison) {
+    if let Some((state, word, sentence)) = words::gravity_finding(comparison) {
+        report.verdict_in_words(state, word, sentence);
+    }
+    for subject in judged_subjects(comparison) {
         report.subsection(words::capital(subject.name()));
         let methods = if subject == Subject::StoreyDrifts { drift_methods(comparison) } else { methods.clone() };
         verdict_cards(&mut report, findings, subject, &methods);
@@ -49,10 +52,7 @@ pub fn brief(findings: &Findings) -> Document {
     } else {
         report.paragraph(say("Statics close for every method: joints, storeys and overturning."));
     }
-    report.footer(
-        "Lateral part only, first order (no P-delta), for preliminary sizing and checking; not a design. The licensed \
-         engineer and the code in force decide.",
-    );
+    report.footer(words::footer(comparison));
     report
 }
 

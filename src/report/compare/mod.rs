@@ -135,7 +135,7 @@ fn verdict_cards(report: &mut Document, findings: &Findings, subject: Subject, m
     let wanted = |verdict: &&Verdict| words::own(comparison, verdict) && methods.contains(&verdict.method);
     let verdicts: Vec<_> = comparison.ranked(subject).into_iter().filter(wanted).collect();
     if verdicts.is_empty() {
-        report.paragraph("Nothing to judge: the exact values are zero.");
+        report.paragraph("Not judged: the exact values are zero, whatever the quick methods say.");
     }
     for verdict in verdicts {
         let sentence = words::verdict(comparison, verdict, findings.frame().report_units());

@@ -1,9 +1,10 @@
 //! The page of a comparison: verdict first, method sheet and record last.
 
 use super::charts::ELEVATION;
-use super::ranking::{amplification, exact_answers, own_methods, ranking, stated};
+use super::ranking::{amplification, exact_answers, judged_subjects, own_methods, ranking, stated};
 use super::summary::{READING, Shown, by_storey, is_stated, judged, percent_cell, short_name};
 use super::{Findings, feet_table, sheet, sizes, verdict_cards, words};
+use crate::compare::Comparison;
 use crate::compare::verdict::Subject;
 use crate::frame::{Feet, MemberKind};
 use crate::report::number::{Form, decimals, signed_percent, significant};
@@ -39,6 +40,9 @@ pub fn page(findings: &Findings, record: &Record, figures: Vec<Figure>) -> Docum
 fn opening(report: &mut Document, findings: &Findings) {
     let comparison = findings.comparison;
     report.section("Verdict");
+    if let Some((state, word, sentence)) = words::gravity_finding(comparison) {
+        report.verdict_in_words(state, word, sentence.then(" See ").refer("second-order").then("."));
+    }
     let found = |subject| words::finding(findings.frame(), comparison, subject);
     for (state, word, sentence) in Subject::ALL.into_iter().filter_map(found) {
         report.verdict_in_words(state, word, sentence.then(" See ").refer("ranking").then("."));
@@ -55,10 +59,12 @@ fn verdicts(report: &mut Document, findings: &Findings) {
     let comparison = findings.comparison;
     report.section("Where each method holds");
     let methods: Vec<_> = own_methods(comparison).map(|quick| quick.entry.info.id).collect();
-    for subject in stated(comparison) {
+    for subject in judged_subjects(comparison) {
         report.subsection(words::capital(subject.name()));
         verdict_cards(report, findings, subject, &methods);
-        report.table(place_table(findings, subject));
+        if stated(comparison).any(|with_verdict| with_verdict == subject) {
+            report.table(place_table(findings, subject));
+        }
     }
     if let Some(table) = amplification(findings) {
         report.subsection("Gravity on the sway");
@@ -323,18 +329,17 @@ fn closing(report: &mut Document, findings: &Findings, record: &Record) {
     report.caution("Before these numbers are used", words::cautions());
     report.section("Record");
     report.record(record);
-    report.footer(
-        "Lateral part only, first order (no P-delta), for preliminary sizing and checking; not a design. The licensed \
-         engineer and the code in force decide.",
-    );
+    report.footer(words::footer(findings.comparison));
 }
 
 fn assumptions(findings: &Findings) -> Vec<Sentence> {
     let comparison = findings.comparison;
     let mut list = vec![
         say(
-            "Plane frame, linear elastic, first order, no shear deformation; members run from joint centre to joint centre.",
+            "Plane frame, linear elastic. The quick methods and slope-deflection: first order, no shear deformation, members \
+             from joint centre to joint centre.",
         ),
+        say(options_in_force(comparison)),
         say("Floors are rigid in their own plane: one sway per floor."),
         say("slope-deflection: inextensible members. stiffness: columns stretch and shorten as well."),
         say(
@@ -348,10 +353,27 @@ fn assumptions(findings: &Findings) -> Vec<Sentence> {
         let residual = Form::Significant(2).show(response.residual()?);
         Some(say(format!("{}: relative residual {residual}.", words::method_name(comparison, response.method))))
     }));
-    if let Some(other) = &comparison.other_exact {
+    if let [other] = &comparison.other_exact[..] {
         list.extend(strain_effect(findings, &comparison.reference, other));
     }
     list
+}
+
+/// What the stiffness and second-order analyses take in.
+fn options_in_force(comparison: &Comparison) -> &'static str {
+    match (comparison.has_options, comparison.second_order.is_some()) {
+        (false, _) => "stiffness: first order, no shear deformation, members from joint centre to joint centre.",
+        (true, false) => {
+            "stiffness: first order, with the rigid zones, springs and shear areas of the file; axial strain over the whole \
+             length between joint centres."
+        }
+        (true, true) => {
+            "stiffness: first order, with the rigid zones, springs and shear areas of the file; axial strain over the whole \
+             length between joint centres. second-order: the same in the deformed position; the gravity of a floor is shared \
+             to its columns by tributary width or by the shares given, and acts through their compression alone: it shortens \
+             no column and bends no beam."
+        }
+    }
 }
 
 /// How far the two exact analyses lie apart.

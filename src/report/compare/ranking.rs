@@ -4,8 +4,8 @@ use super::summary::{judged, percent_cell};
 use super::{Findings, words};
 use crate::compare::verdict::{Extreme, Subject, Verdict};
 use crate::compare::{Comparison, Quick};
-use crate::report::number::Form;
-use crate::report::{TableBlock, TableCell};
+use crate::report::number::{Form, decimals};
+use crate::report::{State, TableBlock, TableCell};
 use crate::response::Response;
 
 /// The quick methods whose values are not those of an earlier one.
@@ -86,6 +86,12 @@ pub(super) fn stated(comparison: &Comparison) -> impl Iterator<Item = Subject> {
     Subject::ALL.into_iter().filter(has)
 }
 
+/// Member forces, and drifts where some quick method states them.
+pub(super) fn judged_subjects(comparison: &Comparison) -> Vec<Subject> {
+    let drifts = stated(comparison).filter(|subject| *subject == Subject::StoreyDrifts);
+    Subject::FORCES.into_iter().chain(drifts).collect()
+}
+
 fn extremes(tolerance: f64, verdict: &Verdict, full: bool) -> Vec<TableCell> {
     let governing = verdict.governing();
     let shed = |member: Extreme| words::needed(member.factor).map_or(0.0, |factor| 100.0 * (1.0 - 1.0 / factor));
@@ -111,18 +117,24 @@ pub(super) fn amplification(findings: &Findings) -> Option<TableBlock> {
         .number("drift", unit.symbol, 3)
         .under("exact amplifier")
         .decimals("drift", "", 3)
-        .decimals("column moment", "", 3)
+        .decimals("columns", "", 3)
+        .decimals("beams", "", 3)
         .under("quick amplifier")
         .decimals("plain", "", 3)
-        .decimals("safer", "", 3);
-    let amplifier = |value: Option<f64>| value.map_or_else(|| TableCell::from("none"), TableCell::from);
+        .decimals("with 1.2", "", 3);
     for (storey, found) in storeys.iter().enumerate().rev() {
         let drift = answer.response.movement(storey).map(|movement| unit.from_si(movement.drift));
+        let largest = found.drift.max(found.columns).max(found.beams);
+        let amplifier = |value: Option<f64>| {
+            let short = value.is_none_or(|value| value < largest - 5e-4).then_some(State::FallsShort);
+            value.map_or_else(|| TableCell::from("none"), TableCell::from).marked(short)
+        };
         table.row([
             TableCell::from((storey + 1).to_string()),
             drift.into(),
             found.drift.into(),
-            found.moment.into(),
+            found.columns.into(),
+            found.beams.into(),
             amplifier(found.plain),
             amplifier(found.safer),
         ]);
@@ -130,19 +142,27 @@ pub(super) fn amplification(findings: &Findings) -> Option<TableBlock> {
     let factor = answer.critical_load_factor.map_or_else(
         || "Gravity is negligible against the sway buckling load.".into(),
         |factor| {
-            format!("Gravity may be multiplied by {} before the frame buckles sideways.", words::rounded_down(factor))
+            let frame_wide = 1.0 / (1.0 - 1.0 / factor);
+            format!(
+                "The frame buckles sideways at {} times this gravity. Frame-wide quick amplifier 1 / (1 − 1 / that): {}.",
+                words::rounded_down(factor),
+                decimals(frame_wide, 3)
+            )
         },
     );
     table.note(factor);
     table.note(format!(
-        "Plain: 1 / (1 − ΣP·drift / (V h)); safer: the same with 1.2 ΣP·drift. Axial forces settled after {} rounds. \
-         Errors of the quick methods are against first order: multiply their values by the amplification too.",
+        "Exact: second over first order of the drift, and the largest ratio of any column and of any beam on top of the \
+         storey that is not near zero. Plain: 1 / (1 − ΣP·drift / (V h)) with the exact first-order drift; the other with \
+         1.2 ΣP·drift; none: the denominator is not positive. They look at one storey alone and miss what its neighbours \
+         feed into it. Axial forces settled after {} rounds.",
         answer.rounds
     ));
+    table.meaning(State::FallsShort, "under an exact amplification of the storey");
     Some(table)
 }
 
 /// The exact answers and that in the deformed position, with their names.
 pub(super) fn exact_answers(comparison: &Comparison) -> Vec<&Response> {
-    comparison.exact().chain(comparison.second_order.iter().map(|(answer, _)| &answer.response)).collect()
+    comparison.exact().chain(comparison.deformed_beside()).collect()
 }

@@ -76,7 +76,7 @@ fn unit(amount: Amount, units: ReportUnits) -> Unit {
         (Amount::Force, _) => units.force(),
         (Amount::Moment, _) => units.moment(),
         (Amount::Area, ReportUnits::Metric) => Unit { symbol: "m²", si: 1.0 },
-        (Amount::Area, ReportUnits::Us) => Unit { symbol: "ft²", si: length.si * length.si },
+        (Amount::Area, ReportUnits::Us) => Unit { symbol: "in²", si: METRES_PER_INCH * METRES_PER_INCH },
         (Amount::PerLength, ReportUnits::Metric) => Unit { symbol: "1/m", si: 1.0 },
         (Amount::PerLength, ReportUnits::Us) => Unit { symbol: "1/ft", si: 1.0 / length.si },
         (Amount::Rotation, _) => Unit { symbol: "mrad", si: 1e-3 },

@@ -179,14 +179,15 @@ fn feet(comparison: &Comparison) -> Table {
 }
 
 fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
-    static COLUMNS: [ColumnInfo; 10] = [
+    static COLUMNS: [ColumnInfo; 11] = [
         STOREY,
         info("drift", "second-order storey drift, in the row's unit"),
         UNIT,
         info("drift_amplification", "second-order over first-order drift"),
-        info("moment_amplification", "the same of the storey's largest column design moment"),
+        info("column_amplification", "largest second-order over first-order design moment of any column not near zero"),
+        info("beam_amplification", "the same of the beams on top of the storey"),
         info("plain_amplifier", "1 / (1 - sum P drift / (V h)); blank where its denominator is not positive"),
-        info("safer_amplifier", "1 / (1 - 1.2 sum P drift / (V h)); blank likewise"),
+        info("amplifier_with_1_2", "1 / (1 - 1.2 sum P drift / (V h)); blank likewise"),
         info("critical_load_factor", "what gravity may be multiplied by; blank where gravity is negligible"),
         info("rounds", "rounds of solution"),
         info("stop", "why they stopped: settled, axial forces changed by less than 1e-10 of the largest"),
@@ -199,7 +200,8 @@ fn second_order(comparison: &Comparison, units: ReportUnits) -> Table {
                 answer.response.movement(storey).map(|movement| unit.from_si(movement.drift)).into(),
                 unit.symbol.into(),
                 found.drift.into(),
-                found.moment.into(),
+                found.columns.into(),
+                found.beams.into(),
                 found.plain.into(),
                 found.safer.into(),
                 answer.critical_load_factor.into(),

@@ -1,6 +1,7 @@
 //! Sentences of a comparison.
 
 use crate::compare::Comparison;
+use crate::compare::amplify::Amplification;
 use crate::compare::errors::{Flag, ValueError};
 use crate::compare::places::{Class, Place};
 use crate::compare::verdict::{Extreme, Standing, Subject, Verdict};
@@ -109,8 +110,8 @@ pub(super) fn measure(frame: &Frame, comparison: &Comparison) -> Sentence {
     );
     if comparison.has_options {
         sentence = sentence.then(
-            " The stiffness analysis takes in what the file says of rigid zones, springs, shear deformation and gravity; \
-             slope-deflection and the quick methods know plain members between joint centres only.",
+            " The stiffness and second-order analyses take in what the file says of rigid zones, springs and shear \
+             deformation; slope-deflection and the quick methods know plain members between joint centres only.",
         );
     }
     if let Some(reason) = &comparison.no_stiffness {
@@ -162,6 +163,34 @@ pub(super) fn finding(
     let standing = good.first().map_or(Standing::Short, |verdict| verdict.state);
     let covered = format!(" The {} multiplied by", method_name(comparison, best.method));
     Some((mark(standing), word(standing), start.then(".").then(cover(best, &covered, frame.report_units()))))
+}
+
+/// What gravity on the sway does, for the first screen; `None` without gravity.
+pub(super) fn gravity_finding(comparison: &Comparison) -> Option<(State, &'static str, Sentence)> {
+    let (answer, storeys) = comparison.second_order.as_ref()?;
+    let largest = |value: fn(&Amplification) -> f64| storeys.iter().map(value).fold(1.0, f64::max);
+    let factor = answer.critical_load_factor.unwrap_or(f64::INFINITY);
+    let (state, word) = match factor {
+        near if near < 3.0 => (State::FallsShort, "near buckling"),
+        low if low < 10.0 => (State::FallsShort, "sways"),
+        _ => (State::Suffices, "stands"),
+    };
+    let buckles = match answer.critical_load_factor {
+        Some(factor) => format!("the frame buckles sideways at {} times the gravity given", rounded_down(factor)),
+        None => "gravity is negligible against the sway buckling load".into(),
+    };
+    let measured = match comparison.reference.method {
+        second_order::ID => "The errors and factors below are measured by second order and cover it.",
+        _ => "The errors and factors below are of first order: multiply by these too.",
+    };
+    let text = format!(
+        "Gravity on the sway: {buckles}. Second order enlarges storey drifts by up to {}, column moments by up to {}, beam \
+         moments by up to {}. {measured}",
+        rounded_up(largest(|storey| storey.drift), 2),
+        rounded_up(largest(|storey| storey.columns), 2),
+        rounded_up(largest(|storey| storey.beams), 2)
+    );
+    Some((state, word, text.into()))
 }
 
 /// The tolerance as it was asked for.
@@ -305,7 +334,7 @@ fn extreme(extreme: Extreme, unit: Unit) -> String {
 pub(super) fn flags(method: &str, errors: &[ValueError]) -> Option<String> {
     let count = |flag: Flag| errors.iter().filter(|error| error.flags.contains(&flag)).count();
     let (sign, weak, zero) = (count(Flag::Sign), count(Flag::Weak), count(Flag::Zero));
-    (sign + weak + zero > 0).then(|| {
+    (sign + weak > 0).then(|| {
         format!(
             "{method}: of {} values {sign} differ in sign from the exact ones, {weak} are weak and {zero} zero beside \
              the largest of their storey (column flag of errors.csv).",
@@ -324,6 +353,15 @@ pub(super) fn capital(text: &str) -> String {
 pub(super) fn unit(subject: Subject, units: ReportUnits) -> Unit {
     let quantity: Quantity = subject.quantity();
     quantity.unit(units)
+}
+
+/// The last line of every report.
+pub(super) fn footer(comparison: &Comparison) -> String {
+    let order = if comparison.second_order.is_some() { "" } else { ", first order (no P-delta)" };
+    format!(
+        "Lateral part only{order}, for preliminary sizing and checking; not a design. The licensed engineer and the code in \
+         force decide."
+    )
 }
 
 /// The usual cautions.
