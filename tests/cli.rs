@@ -128,6 +128,17 @@ fn a_frame_that_buckles_is_exit_code_3_and_names_the_storey() {
     fails(&home(&heavy("900 MN")), &["compare", "frame.toml"], 3, "storey 1 sways without limit");
 }
 
+/// One slender column under all of the load of the top floor: not a sway, and the message says where.
+#[test]
+fn a_column_that_buckles_alone_is_named_by_its_joint() {
+    let text = "title = \"Slender\"\n[grid]\nbays = [\"6 m\", \"6 m\"]\nstoreys = [\"4 m\", \"4 m\", \"4 m\"]\n\
+                [material]\nmodulus = \"200 GPa\"\n[[columns]]\ninertia = \"3e-4 m4\"\narea = \"0.02 m2\"\n\
+                [[columns]]\nstoreys = \"3\"\nlines = \"B\"\ninertia = \"2e-6 m4\"\narea = \"0.02 m2\"\n\
+                [[beams]]\ninertia = \"8e-4 m4\"\n[gravity]\nfloors = [\"10 kN\", \"10 kN\", \"1800 kN\"]\n\
+                lines = [0.0, 1.0, 0.0]\n[lateral]\nfloors = [\"3 kN\", \"3 kN\", \"3 kN\"]\n";
+    fails(&home(text), &["compare", "frame.toml"], 3, "the columns at the joint of floor 3 on line B give way");
+}
+
 #[test]
 fn chosen_methods_alone_are_run_and_unknown_ones_refused() {
     let home = home(&frame("fixed", "1.0"));

@@ -85,7 +85,8 @@ fn accept(frame: &Frame, response: Response, gravity: Option<&[f64]>) -> Result<
 fn name_mechanism(chord_rotations: &[f64], joints: &[(usize, usize, f64)]) -> Unsolvable {
     let largest_joint = joints.iter().fold((0, 0, 0.0_f64), |a, b| if b.2.abs() > a.2.abs() { *b } else { a });
     let largest_chord = chord_rotations.iter().fold(0.0_f64, |a, b| a.max(b.abs()));
-    if largest_chord < 0.1 * largest_joint.2.abs() {
+    // In a sway, joints turn less than about 1.6 times the chords (a cantilever's tip); in a local failure far more.
+    if largest_chord < 0.5 * largest_joint.2.abs() {
         let (floor, line, _) = largest_joint;
         return Unsolvable::FreeJoint { floor, line: crate::frame::line_name(line) };
     }
