@@ -123,6 +123,9 @@ fn what_each_method_doubts() {
     for method in ["racking", "racking+chord"] {
         assert!(cautions(method, &flexible).contains("too small where beams are flexible"), "{method}");
     }
+    for method in ["wilbur", "wilbur+chord"] {
+        assert!(cautions(method, &flexible).contains("upper storeys too large"), "{method}");
+    }
 }
 
 /// A comparison leaves refused methods out and keeps the reason.

@@ -6,7 +6,7 @@ use crate::lane::Lane;
 use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method, Response, Step, Work, Worksheet};
 
 /// Beam over column stiffness under which the first-storey formula for fixed feet is markedly short.
-const FLEXIBLE: f64 = 0.5;
+pub(super) const FLEXIBLE: f64 = 0.5;
 
 /// Storey drift from the bending of columns and beams, inflection points at mid-height and mid-span.
 ///
@@ -65,15 +65,19 @@ pub(super) fn refusals(frame: &Frame) -> [Option<Caution>; 3] {
 
 /// Reasons to doubt the formula itself.
 pub(super) fn doubts(frame: &Frame) -> Option<Caution> {
-    let members = &Members::of(frame);
-    let (columns, beams): (f64, f64) = (sums::storey_columns(members, 0), sums::floor_beams(members, 0));
-    // One bay: C = 2 k of a column, G = k of the beam.
-    let ratio = 2.0 * beams / columns;
+    let ratio = beams_to_columns(frame);
     let text = format!(
         "on fixed feet the formula makes the drift of the first storey too small where beams are flexible: 2 G/C is \
          {ratio:.2} there; at 0.5 a tall frame's first storey is short by 15 %, at 0.2 by 32 %"
     );
-    (*frame.feet() == Feet::Fixed && frame.storeys() > 2 && ratio < FLEXIBLE).then_some(Caution(text))
+    (*frame.feet() == Feet::Fixed && frame.storeys() > 1 && ratio < FLEXIBLE).then_some(Caution(text))
+}
+
+/// 2 G/C of the lowest storey: 1 in one bay of equal stiffness, where C is twice that of a column and G that of the beam.
+pub(super) fn beams_to_columns(frame: &Frame) -> f64 {
+    let members = &Members::of(frame);
+    let (columns, beams): (f64, f64) = (sums::storey_columns(members, 0), sums::floor_beams(members, 0));
+    2.0 * beams / columns
 }
 
 /// Racking drift of a storey.

@@ -1,6 +1,6 @@
 //! Wilbur's formulas for storey stiffness.
 
-use super::{fit, sheet, sums};
+use super::{fit, racking, sheet, sums};
 use crate::frame::Frame;
 use crate::lane::Lane;
 use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method, Response, Step, Work, Worksheet};
@@ -43,7 +43,7 @@ impl Method for Wilbur {
     };
 
     fn fit(frame: &Frame) -> Fit {
-        fit::judge(refusals(frame), [fit::slender_drift(frame)])
+        fit::judge(refusals(frame), [fit::slender_drift(frame), doubts(frame)])
     }
 
     fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
@@ -56,6 +56,17 @@ impl Method for Wilbur {
         let drifts = sheet::drifts(frame, response, "Drift = V / R.");
         Worksheet { steps: steps(frame).into_iter().chain(drifts).collect() }
     }
+}
+
+/// Reasons to doubt the formula itself.
+pub(super) fn doubts(frame: &Frame) -> Option<Caution> {
+    let ratio = racking::beams_to_columns(frame);
+    let text = format!(
+        "with flexible beams the formula makes the drift of the first storey too small and of upper storeys too large, far \
+         too large in low frames: 2 G/C is {ratio:.2} at the ground; at 0.2 a tall uniform frame's first storey is short by \
+         12 %, its top storey over by 25 %"
+    );
+    (frame.storeys() > 1 && ratio < racking::FLEXIBLE).then_some(Caution(text))
 }
 
 /// Reasons to refuse that the formulas have with or without a chord part.

@@ -39,7 +39,7 @@ impl Method for WilburChord {
     };
 
     fn fit(frame: &Frame) -> Fit {
-        fit::judge(wilbur::refusals(frame).into_iter().chain([fit::no_areas(frame)]), [None])
+        fit::judge(wilbur::refusals(frame).into_iter().chain([fit::no_areas(frame)]), [wilbur::doubts(frame)])
     }
 
     fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
