@@ -1,15 +1,12 @@
 //! Reasons for which the methods with known sizes refuse or doubt a frame.
 
-use crate::frame::{Feet, Frame, line_name};
+use crate::frame::{Feet, Frame, SLENDER, line_name};
 use crate::response::{Caution, Fit};
 use std::ops::RangeInclusive;
 
 /// Beam over column stiffness at a joint outside of which a method gives no answer: under it a rounding error of 1e-16
 /// shows in the digits that matter, over it products overflow.
 const SOUND_RATIOS: RangeInclusive<f64> = 1e-9..=1e30;
-/// Height over width from which drift without column axial strain is cautioned about: there the comparison's exact
-/// answer takes it in.
-const SLENDER: f64 = 2.0;
 
 /// The first reason to refuse, or the reasons to doubt.
 pub(super) fn judge(

@@ -7,14 +7,12 @@ use crate::approx::METHODS;
 use crate::exact::second_order::{self, SecondOrder};
 use crate::exact::{Unsolvable, slope_deflection, stiffness};
 use crate::frame::options::AnalysisOptions;
-use crate::frame::{Feet, Frame};
+use crate::frame::{Feet, Frame, SLENDER};
 use crate::response::statics::{self, Statics};
 use crate::response::{Entry, Fit, Response};
 use thiserror::Error;
 
-/// Above this height over width, column axial strain is part of the exact answer where areas allow it.
-const SLENDER: f64 = 2.0;
-/// Above this number of storeys likewise.
+/// Above this number of storeys, as above [`SLENDER`], a measure without column axial strain is warned about.
 const TALL: usize = 8;
 /// Foot springs of the second line that fixed feet get, times 4 E I_c / h: real feet lie between (common practice).
 pub const FOOT_RATIOS: [f64; 2] = [20.0, 1.0];

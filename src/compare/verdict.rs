@@ -8,7 +8,7 @@ use std::cmp::Ordering;
 use std::collections::BTreeMap;
 
 /// Numbers that differ by less than this are equal: the first member is quoted, whatever rounding leaves.
-const TIE: f64 = 1e-7;
+pub const TIE: f64 = 1e-7;
 
 /// What a verdict is about.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, PartialOrd, Ord)]

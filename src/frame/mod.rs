@@ -20,6 +20,8 @@ use crate::units::ReportUnits;
 pub const MAX_STOREYS: usize = 500;
 /// The most bays a frame may have.
 pub const MAX_BAYS: usize = 100;
+/// Above this height over width, column axial strain counts in drifts and moments (common practice: about 2).
+pub const SLENDER: f64 = 2.0;
 /// A storey higher than this is taken for a slip and warned about, in m (common practice: 3 to 6 m).
 pub const TALL_STOREY: f64 = 15.0;
 

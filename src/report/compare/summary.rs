@@ -4,7 +4,7 @@ use super::words;
 use crate::compare::Comparison;
 use crate::compare::errors::ValueError;
 use crate::compare::places::Class;
-use crate::compare::verdict::Subject;
+use crate::compare::verdict::{Subject, TIE};
 use crate::frame::{Frame, MemberKind};
 use crate::report::number::Form;
 use crate::report::{State, TableBlock, TableCell, say};
@@ -164,8 +164,8 @@ pub(super) fn judged(mut table: TableBlock, comparison: &Comparison) -> TableBlo
 /// A storey error, marked where it is beyond the tolerance; with a decimal where rounding would hide on which side.
 pub(super) fn percent_cell(percent: f64, tolerance: f64) -> TableCell {
     let state = match percent {
-        short if short < -tolerance - 1e-7 => Some(State::FallsShort),
-        over if over > tolerance + 1e-7 => Some(State::SafeSide),
+        short if short < -tolerance - TIE => Some(State::FallsShort),
+        over if over > tolerance + TIE => Some(State::SafeSide),
         _ => None,
     };
     // The fewest decimals that show on which side of the tolerance the value lies; two are enough to be honest.
@@ -187,7 +187,7 @@ fn telling(found: &[&ValueError], tolerance: f64) -> TableCell {
     let percents = || found.iter().filter_map(|error| error.storey_error_percent).filter(|percent| percent.is_finite());
     let lowest = percents().reduce(f64::min);
     let farthest = percents().reduce(|a, b| if b.abs() > a.abs() { b } else { a });
-    let told = lowest.filter(|lowest| *lowest < -tolerance).or(farthest);
+    let told = lowest.filter(|lowest| *lowest < -tolerance - TIE).or(farthest);
     told.map_or_else(TableCell::blank, |percent| percent_cell(percent, tolerance))
 }
 
