@@ -11,6 +11,7 @@ use support::{Sizes, Within, build, energy, laws, parts};
 use swaybound::approx;
 use swaybound::exact::{Unsolvable, slope_deflection, stiffness};
 use swaybound::frame::{Feet, Frame, FrameParts, Member, SizeSource};
+use swaybound::lane::Form;
 use swaybound::response::{Forces, Members, Quantity, Response, Work, statics};
 
 /// Two solutions of one ordinary frame in different forms: what rounding does to it, with a margin of a hundred.
@@ -351,16 +352,18 @@ fn changed(parts: &FrameParts, factor: f64) -> FrameParts {
     other
 }
 
-/// Runs every quick method on four frames together and on each alone.
+/// Runs every quick method on four frames together, in every form, and on each alone.
 #[track_caller]
 fn same_bits_side_by_side(together: &Members<4>, alone: [&Members<1>; 4]) {
     for entry in &approx::METHODS {
-        let mut four = Forces::for_members(together);
-        (entry.four)(together, &mut Work::for_members(together), &mut four);
-        for (lane, members) in alone.into_iter().enumerate() {
-            let mut one = Forces::for_members(members);
-            (entry.one)(members, &mut Work::for_members(members), &mut one);
-            same_bits(entry.info.id, &one, &four, lane);
+        for form in [Some(Form::PORTABLE), Form::avx2()].into_iter().flatten() {
+            let mut four = Forces::for_members(together);
+            (entry.four)(form, together, &mut Work::for_members(together), &mut four);
+            for (lane, members) in alone.into_iter().enumerate() {
+                let mut one = Forces::for_members(members);
+                (entry.one)(form, members, &mut Work::for_members(members), &mut one);
+                same_bits(entry.info.id, &one, &four, lane);
+            }
         }
     }
 }
@@ -394,7 +397,7 @@ fn statics_find_a_single_slip() {
     let frame = build(bare);
     let members = Members::of(&frame);
     let mut sound = Forces::for_members(&members);
-    (approx::find("cantilever").unwrap().one)(&members, &mut Work::for_members(&members), &mut sound);
+    (approx::find("cantilever").unwrap().one)(Form::PORTABLE, &members, &mut Work::for_members(&members), &mut sound);
     let check = |forces: &Forces<1>| statics::check(&frame, &Response::from_forces("slip", &frame, forces));
     assert!(check(&sound).closes());
     let column = Member::Column { storey: 1, line: 2 };

@@ -31,9 +31,12 @@ const ORDER: [&[&str]; 13] = [
 const KEPT_IN: [(&[&str], &[&str]); 4] =
     [(&["clap"], &["cli"]), (&["plotters"], &["report"]), (&["rayon"], &["family"]), (&["std", "fs"], &["store"])];
 
-/// Words that may not occur at all, and what they stand for.
+/// Words that may not occur, and what they stand for.
 const BANNED: [(&str, &str); 3] =
     [("unsafe", "unsafe code"), ("unsafe_code", "a lint level for unsafe code"), ("macro_rules", "a macro of our own")];
+
+/// The one file of unsafe code: registers that not every processor has, and the way into code that uses them.
+const UNSAFE_IN: &str = "src/lane/avx2.rs";
 
 /// The most lines of a file and of a function.
 const LONGEST_FILE: usize = 600;
@@ -60,6 +63,7 @@ fn breaches(files: &[File]) -> Vec<String> {
         found.extend(uses(file, &module, &code));
         for token in &code {
             let banned = BANNED.iter().find(|(word, _)| *word == token.text);
+            let banned = banned.filter(|(word, _)| !(file.path == UNSAFE_IN && word.starts_with("unsafe")));
             found.extend(banned.map(|(_, what)| format!("{}:{}: {what}", file.path, token.line)));
         }
     }
@@ -224,7 +228,8 @@ fn planted_breaches_are_caught() {
         ("src/main.rs", "use std::fs;"),
         ("src/main.rs", "use std as library;"),
         ("src/lane/mod.rs", "fn f() { unsafe { g() } }"),
-        ("src/lane/mod.rs", "#![allow(unsafe_code)]"),
+        ("src/lane/form.rs", "#![allow(unsafe_code)]"),
+        ("src/lane/avx2.rs", "macro_rules! lane { () => {} }"),
         ("src/units.rs", "macro_rules! unit { () => {} }"),
     ];
     for (path, text) in planted {
@@ -248,6 +253,7 @@ fn lawful_source_is_left_alone() {
         ("src/frame/mod.rs", "#[test]\nfn f() { let _ = std::fs::read(\"a\"); }"),
         ("src/frame/mod.rs", "pub(crate) fn f() -> std::fmt::Result { Ok(()) }"),
         ("src/frame/mod.rs", "fn f(fs: usize, clap: usize) -> usize { fs + clap }"),
+        ("src/lane/avx2.rs", "#![allow(unsafe_code)]\nfn f() { unsafe { g() } }"),
     ];
     for (path, text) in lawful {
         assert_eq!(of(path, text), [""; 0], "in {path}: {text}");

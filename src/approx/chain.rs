@@ -1,6 +1,6 @@
 //! One column line with a rotational spring at every floor: the substitute frame and the D-value method's standard frame.
 
-use crate::lane::Lane;
+use crate::lane::{Lane, Rows};
 use crate::response::Members;
 
 /// What a chain is made of, storey by storey and floor by floor.
@@ -23,7 +23,7 @@ pub(super) struct Chain<Column, Spring, Turning> {
 /// Slope-deflection with the chord rotations eliminated by storey equilibrium; the foot derived for this project.
 pub(super) fn solve<L: Lane<W>, const W: usize>(
     members: &Members<W>,
-    scratch: &mut [Vec<[f64; W]>; 4],
+    scratch: &mut [Rows<W>; 4],
     chain: &Chain<impl Fn(usize) -> L, impl Fn(usize) -> L, impl Fn(usize) -> L>,
 ) {
     let [turns, pivots, ..] = scratch;

@@ -1,8 +1,20 @@
 //! W frames side by side: the arithmetic every method is written in.
 //!
-//! A method is written once over [`Lane`]. With `f64` it computes one frame; with [`Plain`] it computes four
-//! frames whose numbers stand side by side as `[f64; 4]`. No operation is fused and lanes never mix, so a
-//! frame gives the same bits in either form.
+//! A method is written once over [`Lane`]. With `f64` it computes one frame; with [`Plain`], or on processors that have
+//! them with 256-bit registers, it computes four frames whose numbers stand side by side as `[f64; 4]`. No operation is
+//! fused and lanes never mix, so a frame gives the same bits in every form.
+//!
+//! Work is handed to a [`Form`] as a [`Task`]: the form runs it in the lanes it stands for. [`Rows`] holds lanes in memory.
+
+#[cfg(target_arch = "x86_64")]
+mod avx2;
+mod form;
+mod plain;
+mod rows;
+
+pub use form::{Form, Task};
+pub use plain::Plain;
+pub use rows::Rows;
 
 use std::ops::{Add, Div, Mul, Neg, Sub};
 
@@ -19,9 +31,9 @@ pub trait Lane<const W: usize>:
     fn store(self, to: &mut [f64; W]);
     /// The same number in every lane.
     fn splat(value: f64) -> Self;
-    /// The smaller number, lane by lane.
+    /// The smaller number, lane by lane; `other` where either is no number.
     fn min(self, other: Self) -> Self;
-    /// The larger number, lane by lane.
+    /// The larger number, lane by lane; `other` where either is no number.
     fn max(self, other: Self) -> Self;
     /// The magnitude, lane by lane.
     fn abs(self) -> Self;
@@ -30,101 +42,35 @@ pub trait Lane<const W: usize>:
 }
 
 impl Lane<1> for f64 {
+    #[inline(always)]
     fn load(from: &[f64; 1]) -> Self {
         from[0]
     }
+    #[inline(always)]
     fn store(self, to: &mut [f64; 1]) {
         to[0] = self;
     }
+    #[inline(always)]
     fn splat(value: f64) -> Self {
         value
     }
+    #[inline(always)]
     fn min(self, other: Self) -> Self {
         if self < other { self } else { other }
     }
+    #[inline(always)]
     fn max(self, other: Self) -> Self {
         if self > other { self } else { other }
     }
+    #[inline(always)]
     fn abs(self) -> Self {
         f64::abs(self)
     }
+    #[inline(always)]
     fn sqrt(self) -> Self {
         f64::sqrt(self)
     }
 }
 
-/// Four frames in portable arithmetic.
-#[derive(Debug, Clone, Copy, PartialEq)]
-#[repr(align(32))]
-pub struct Plain([f64; 4]);
-
-impl Plain {
-    fn map(self, operation: impl Fn(f64) -> f64) -> Self {
-        Self(self.0.map(operation))
-    }
-
-    fn zip(self, other: Self, operation: impl Fn(f64, f64) -> f64) -> Self {
-        let [a, b, c, d] = self.0;
-        let [e, f, g, h] = other.0;
-        Self([operation(a, e), operation(b, f), operation(c, g), operation(d, h)])
-    }
-}
-
-impl Add for Plain {
-    type Output = Self;
-    fn add(self, other: Self) -> Self {
-        self.zip(other, |a, b| a + b)
-    }
-}
-
-impl Sub for Plain {
-    type Output = Self;
-    fn sub(self, other: Self) -> Self {
-        self.zip(other, |a, b| a - b)
-    }
-}
-
-impl Mul for Plain {
-    type Output = Self;
-    fn mul(self, other: Self) -> Self {
-        self.zip(other, |a, b| a * b)
-    }
-}
-
-impl Div for Plain {
-    type Output = Self;
-    fn div(self, other: Self) -> Self {
-        self.zip(other, |a, b| a / b)
-    }
-}
-
-impl Neg for Plain {
-    type Output = Self;
-    fn neg(self) -> Self {
-        self.map(|a| -a)
-    }
-}
-
-impl Lane<4> for Plain {
-    fn load(from: &[f64; 4]) -> Self {
-        Self(*from)
-    }
-    fn store(self, to: &mut [f64; 4]) {
-        *to = self.0;
-    }
-    fn splat(value: f64) -> Self {
-        Self([value; 4])
-    }
-    fn min(self, other: Self) -> Self {
-        self.zip(other, Lane::<1>::min)
-    }
-    fn max(self, other: Self) -> Self {
-        self.zip(other, Lane::<1>::max)
-    }
-    fn abs(self) -> Self {
-        self.map(f64::abs)
-    }
-    fn sqrt(self) -> Self {
-        self.map(f64::sqrt)
-    }
-}
+#[cfg(test)]
+mod tests;

@@ -1,37 +1,37 @@
 //! Member forces in lane form.
 
 use super::Members;
-use crate::lane::Lane;
+use crate::lane::{Lane, Rows};
 
 /// Member forces of `W` frames, stored like [`Members`]. Signs are those of the crate's table.
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Forces<const W: usize> {
     /// Column moments at the foot, N m.
-    pub column_foot: Vec<[f64; W]>,
+    pub column_foot: Rows<W>,
     /// Column moments at the head, N m.
-    pub column_head: Vec<[f64; W]>,
+    pub column_head: Rows<W>,
     /// Column axial forces, N.
-    pub column_axial: Vec<[f64; W]>,
+    pub column_axial: Rows<W>,
     /// Beam moments at the left end, N m.
-    pub beam_left: Vec<[f64; W]>,
+    pub beam_left: Rows<W>,
     /// Beam moments at the right end, N m.
-    pub beam_right: Vec<[f64; W]>,
+    pub beam_right: Rows<W>,
     /// Storey drifts, m; relative where the frame's sizes are.
-    pub drift: Vec<[f64; W]>,
+    pub drift: Rows<W>,
 }
 
 impl<const W: usize> Forces<W> {
     /// Room for the forces of `members`, all zero.
     pub fn for_members(members: &Members<W>) -> Self {
-        let columns = vec![[0.0; W]; members.storeys * members.lines()];
-        let beams = vec![[0.0; W]; members.storeys * members.bays];
+        let columns = Rows::zeros(members.storeys * members.lines());
+        let beams = Rows::zeros(members.storeys * members.bays);
         Self {
             column_foot: columns.clone(),
             column_head: columns.clone(),
             column_axial: columns,
             beam_left: beams.clone(),
             beam_right: beams,
-            drift: vec![[0.0; W]; members.storeys],
+            drift: Rows::zeros(members.storeys),
         }
     }
 }
@@ -40,16 +40,16 @@ impl<const W: usize> Forces<W> {
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Work<const W: usize> {
     /// One number per column line.
-    pub line: Vec<[f64; W]>,
+    pub line: Rows<W>,
     /// One number per storey, in four sets.
-    pub storey: [Vec<[f64; W]>; 4],
+    pub storey: [Rows<W>; 4],
 }
 
 impl<const W: usize> Work<W> {
     /// Scratch room for `members`.
     pub fn for_members(members: &Members<W>) -> Self {
-        let storey = vec![[0.0; W]; members.storeys];
-        Self { line: vec![[0.0; W]; members.lines()], storey: [storey.clone(), storey.clone(), storey.clone(), storey] }
+        let storey = Rows::zeros(members.storeys);
+        Self { line: Rows::zeros(members.lines()), storey: [storey.clone(), storey.clone(), storey.clone(), storey] }
     }
 }
 

@@ -1,6 +1,7 @@
 //! Member properties in lane form.
 
 use crate::frame::{Feet, Frame};
+use crate::lane::Rows;
 
 /// Properties of `W` frames of equal shape, one frame per lane.
 ///
@@ -12,22 +13,24 @@ pub struct Members<const W: usize> {
     /// Number of bays.
     pub bays: usize,
     /// Storey heights, m.
-    pub height: Vec<[f64; W]>,
+    pub height: Rows<W>,
     /// Bay widths, m.
-    pub width: Vec<[f64; W]>,
+    pub width: Rows<W>,
     /// Column line positions from line A, m.
-    pub position: Vec<[f64; W]>,
+    pub position: Rows<W>,
     /// Storey shears, N.
-    pub shear: Vec<[f64; W]>,
+    pub shear: Rows<W>,
     /// Column areas, in any one unit: the quick methods use their ratios only. All equal where the frame has none.
-    pub area: Vec<[f64; W]>,
+    pub area: Rows<W>,
     /// Flexural stiffness E I/h of each column, N m; relative where the frame's sizes are.
-    pub column_stiffness: Vec<[f64; W]>,
+    pub column_stiffness: Rows<W>,
     /// Flexural stiffness E I/L of each beam, N m; relative where the frame's sizes are.
-    pub beam_stiffness: Vec<[f64; W]>,
+    pub beam_stiffness: Rows<W>,
     /// Axial stiffness E A of each column, N; relative where the frame's sizes are, equal where it has no areas.
-    pub axial_stiffness: Vec<[f64; W]>,
-    /// Foot fixity S / (S + C): S the sum of the foot springs, C that of the lowest columns' E I/h. 1 fixed, 0 pinned.
+    pub axial_stiffness: Rows<W>,
+    /// Fixity rho = c / (c + 4 E I/h) of each lowest column's foot, c its spring: 1 fixed, 0 pinned.
+    pub foot_rho: Rows<W>,
+    /// Foot fixity of the whole frame S / (S + C): S the sum of the foot springs, C that of the lowest columns' E I/h. 1 fixed, 0 pinned.
     pub foot_fixity: [f64; W],
     /// Height of the ground storey's assumed inflection point over the storey height: 0 on pinned feet, else 1/2.
     pub ground_hinge: [f64; W],
@@ -54,7 +57,7 @@ impl Members<1> {
     /// The members of one frame.
     pub fn of(frame: &Frame) -> Self {
         let each =
-            |count: usize, value: &dyn Fn(usize) -> f64| (0..count).map(|index| [value(index)]).collect::<Vec<_>>();
+            |count: usize, value: &dyn Fn(usize) -> f64| (0..count).map(|index| [value(index)]).collect::<Rows<1>>();
         let lines = frame.lines();
         let bays = frame.bays();
         let has_areas = frame.has_areas();
@@ -72,6 +75,7 @@ impl Members<1> {
             column_stiffness: each(columns, &|index| frame.column_stiffness(index / lines, index % lines)),
             beam_stiffness: each(frame.storeys() * bays, &|index| frame.beam_stiffness(index / bays, index % bays)),
             axial_stiffness: each(columns, &|index| frame.modulus() * area(index)),
+            foot_rho: each(lines, &|line| foot_rho(frame, line)),
             foot_fixity: [foot_fixity(frame)],
             ground_hinge: [if *frame.feet() == Feet::Pinned { 0.0 } else { 0.5 }],
         }
@@ -81,7 +85,7 @@ impl Members<1> {
 impl Members<4> {
     /// Four frames of one shape side by side.
     pub fn side_by_side(frames: [&Members<1>; 4]) -> Self {
-        let gather = |values: fn(&Members<1>) -> &Vec<[f64; 1]>| {
+        let gather = |values: fn(&Members<1>) -> &Rows<1>| -> Rows<4> {
             let count = values(frames[0]).len();
             (0..count).map(|index| frames.map(|frame| values(frame)[index][0])).collect()
         };
@@ -96,6 +100,7 @@ impl Members<4> {
             column_stiffness: gather(|frame| &frame.column_stiffness),
             beam_stiffness: gather(|frame| &frame.beam_stiffness),
             axial_stiffness: gather(|frame| &frame.axial_stiffness),
+            foot_rho: gather(|frame| &frame.foot_rho),
             foot_fixity: frames.map(|frame| frame.foot_fixity[0]),
             ground_hinge: frames.map(|frame| frame.ground_hinge[0]),
         }
@@ -111,5 +116,13 @@ fn foot_fixity(frame: &Frame) -> f64 {
             let columns: f64 = (0..frame.lines()).map(|line| frame.column_stiffness(0, line)).sum();
             springs / (springs + columns)
         }
+    }
+}
+
+fn foot_rho(frame: &Frame, line: usize) -> f64 {
+    match frame.feet() {
+        Feet::Fixed => 1.0,
+        Feet::Pinned => 0.0,
+        Feet::Springs(springs) => springs[line] / (springs[line] + 4.0 * frame.column_stiffness(0, line)),
     }
 }

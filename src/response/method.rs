@@ -2,7 +2,8 @@
 
 use super::{Forces, Members, Response, Work, Worksheet};
 use crate::frame::Frame;
-use crate::lane::Plain;
+use crate::lane::{Form, Lane, Task};
+use std::marker::PhantomData;
 
 /// What a method is, for reports and for choosing it.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -70,11 +71,7 @@ pub trait Method {
     /// Computes what [`Info::gives`] says for `W` frames; the rest of `forces` means nothing.
     ///
     /// `work` and `forces` must have been made for `members`.
-    fn respond<L: crate::lane::Lane<W>, const W: usize>(
-        members: &Members<W>,
-        work: &mut Work<W>,
-        forces: &mut Forces<W>,
-    );
+    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>);
 
     /// The hand calculation with the frame's own numbers; `response` is the method's answer for `frame`.
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet;
@@ -88,9 +85,9 @@ pub struct Entry {
     /// See [`Method::fit`].
     pub fit: fn(&Frame) -> Fit,
     /// [`Method::respond`] for one frame.
-    pub one: fn(&Members<1>, &mut Work<1>, &mut Forces<1>),
-    /// [`Method::respond`] for four frames in portable arithmetic.
-    pub four: fn(&Members<4>, &mut Work<4>, &mut Forces<4>),
+    pub one: fn(Form, &Members<1>, &mut Work<1>, &mut Forces<1>),
+    /// [`Method::respond`] for four frames.
+    pub four: fn(Form, &Members<4>, &mut Work<4>, &mut Forces<4>),
     /// See [`Method::worksheet`].
     pub worksheet: fn(&Frame, &Response) -> Worksheet,
 }
@@ -101,8 +98,8 @@ impl Entry {
         Self {
             info: &M::INFO,
             fit: M::fit,
-            one: M::respond::<f64, 1>,
-            four: M::respond::<Plain, 4>,
+            one: |form, members, work, forces| form.one(Respond::<M, 1>::new(members, work, forces)),
+            four: |form, members, work, forces| form.four(Respond::<M, 4>::new(members, work, forces)),
             worksheet: M::worksheet,
         }
     }
@@ -111,7 +108,7 @@ impl Entry {
     pub fn analyse(&self, frame: &Frame) -> Response {
         let members = Members::of(frame);
         let mut forces = Forces::for_members(&members);
-        (self.one)(&members, &mut Work::for_members(&members), &mut forces);
+        (self.one)(Form::PORTABLE, &members, &mut Work::for_members(&members), &mut forces);
         let response = match self.info.gives.forces() {
             true => Response::from_forces(self.info.id, frame, &forces),
             false => Response::without_forces(self.info.id, frame),
@@ -120,5 +117,27 @@ impl Entry {
             true => response.with_drifts(&forces.drift.iter().map(|[drift]| *drift).collect::<Vec<_>>()),
             false => response,
         }
+    }
+}
+
+/// [`Method::respond`] as a task for lanes.
+struct Respond<'a, M, const W: usize> {
+    members: &'a Members<W>,
+    work: &'a mut Work<W>,
+    forces: &'a mut Forces<W>,
+    method: PhantomData<M>,
+}
+
+impl<'a, M, const W: usize> Respond<'a, M, W> {
+    fn new(members: &'a Members<W>, work: &'a mut Work<W>, forces: &'a mut Forces<W>) -> Self {
+        Self { members, work, forces, method: PhantomData }
+    }
+}
+
+impl<M: Method, const W: usize> Task<W> for Respond<'_, M, W> {
+    type Output = ();
+    #[inline(always)]
+    fn run<L: Lane<W>>(self) {
+        M::respond::<L, W>(self.members, self.work, self.forces);
     }
 }

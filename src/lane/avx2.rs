@@ -1,0 +1,133 @@
+//! Four lanes in one 256-bit register, and the one way to run code that uses them.
+//!
+//! The only unsafe code of the crate. It rests on one fact: an [`Avx2`] exists only inside [`four`], which runs only with
+//! a [`Proof`] that the processor has these registers; nothing outside this file makes either.
+#![allow(unsafe_code, reason = "intrinsics of registers that not every processor has; see the module page")]
+
+use super::{Lane, Task};
+use std::arch::x86_64::{
+    __m256d, _mm256_add_pd, _mm256_andnot_pd, _mm256_div_pd, _mm256_loadu_pd, _mm256_max_pd, _mm256_min_pd,
+    _mm256_mul_pd, _mm256_set1_pd, _mm256_sqrt_pd, _mm256_storeu_pd, _mm256_sub_pd, _mm256_xor_pd,
+};
+use std::ops::{Add, Div, Mul, Neg, Sub};
+
+/// Four frames in one register.
+#[derive(Debug, Clone, Copy)]
+pub(super) struct Avx2(__m256d);
+
+/// The proof that this processor has AVX2.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) struct Proof(());
+
+impl Proof {
+    /// Asks the processor.
+    pub(super) fn find() -> Option<Self> {
+        std::is_x86_feature_detected!("avx2").then_some(Self(()))
+    }
+
+    /// Does `task` four frames at a time.
+    pub(super) fn four<T: Task<4>>(self, task: T) -> T::Output {
+        // SAFETY: a proof is made in `find` only, where the processor said that it has AVX2.
+        unsafe { four(task) }
+    }
+
+    /// Does `task` one frame at a time, compiled for AVX2.
+    pub(super) fn one<T: Task<1>>(self, task: T) -> T::Output {
+        // SAFETY: as in `four`.
+        unsafe { one(task) }
+    }
+}
+
+/// The trampoline: all that is inlined here is compiled for AVX2.
+#[target_feature(enable = "avx2")]
+fn four<T: Task<4>>(task: T) -> T::Output {
+    task.run::<Avx2>()
+}
+
+#[target_feature(enable = "avx2")]
+fn one<T: Task<1>>(task: T) -> T::Output {
+    task.run::<f64>()
+}
+
+impl Add for Avx2 {
+    type Output = Self;
+    #[inline(always)]
+    fn add(self, other: Self) -> Self {
+        // SAFETY: an `Avx2` exists only inside `four`, so the processor has AVX2. This holds for every block below.
+        Self(unsafe { _mm256_add_pd(self.0, other.0) })
+    }
+}
+
+impl Sub for Avx2 {
+    type Output = Self;
+    #[inline(always)]
+    fn sub(self, other: Self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_sub_pd(self.0, other.0) })
+    }
+}
+
+impl Mul for Avx2 {
+    type Output = Self;
+    #[inline(always)]
+    fn mul(self, other: Self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_mul_pd(self.0, other.0) })
+    }
+}
+
+impl Div for Avx2 {
+    type Output = Self;
+    #[inline(always)]
+    fn div(self, other: Self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_div_pd(self.0, other.0) })
+    }
+}
+
+impl Neg for Avx2 {
+    type Output = Self;
+    #[inline(always)]
+    fn neg(self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_xor_pd(self.0, _mm256_set1_pd(-0.0)) })
+    }
+}
+
+impl Lane<4> for Avx2 {
+    #[inline(always)]
+    fn load(from: &[f64; 4]) -> Self {
+        // SAFETY: as in `add`; the reference covers the 32 bytes read, which need no alignment.
+        Self(unsafe { _mm256_loadu_pd(from.as_ptr()) })
+    }
+    #[inline(always)]
+    fn store(self, to: &mut [f64; 4]) {
+        // SAFETY: as in `add`; the reference covers the 32 bytes written, which need no alignment.
+        unsafe { _mm256_storeu_pd(to.as_mut_ptr(), self.0) }
+    }
+    #[inline(always)]
+    fn splat(value: f64) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_set1_pd(value) })
+    }
+    #[inline(always)]
+    fn min(self, other: Self) -> Self {
+        // SAFETY: as in `add`. The instruction gives `self < other ? self : other`.
+        Self(unsafe { _mm256_min_pd(self.0, other.0) })
+    }
+    #[inline(always)]
+    fn max(self, other: Self) -> Self {
+        // SAFETY: as in `add`. The instruction gives `self > other ? self : other`.
+        Self(unsafe { _mm256_max_pd(self.0, other.0) })
+    }
+    #[inline(always)]
+    fn abs(self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_andnot_pd(_mm256_set1_pd(-0.0), self.0) })
+    }
+    #[inline(always)]
+    fn sqrt(self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_sqrt_pd(self.0) })
+    }
+}
