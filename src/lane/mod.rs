@@ -8,13 +8,17 @@
 
 #[cfg(target_arch = "x86_64")]
 mod avx2;
+mod exp;
 mod form;
 mod plain;
 mod rows;
+mod words;
 
+pub use exp::{EXP_REACH, exp};
 pub use form::{Form, Task};
 pub use plain::Plain;
 pub use rows::Rows;
+pub use words::{PlainWords, Words};
 
 use std::ops::{Add, Div, Mul, Neg, Sub};
 
@@ -25,6 +29,9 @@ use std::ops::{Add, Div, Mul, Neg, Sub};
 pub trait Lane<const W: usize>:
     Copy + Add<Output = Self> + Sub<Output = Self> + Mul<Output = Self> + Div<Output = Self> + Neg<Output = Self>
 {
+    /// Whole numbers in the same lanes.
+    type Words: Words<W>;
+
     /// Reads the lanes of `from`.
     fn load(from: &[f64; W]) -> Self;
     /// Writes the lanes to `to`.
@@ -39,9 +46,21 @@ pub trait Lane<const W: usize>:
     fn abs(self) -> Self;
     /// The square root, lane by lane; IEEE 754 rounds it once, so it has the same bits everywhere.
     fn sqrt(self) -> Self;
+    /// 2^self, exact, where `self` is a whole number from -1022 to 1023.
+    fn power_of_two(self) -> Self;
+    /// The low halves of `words` as numbers, exact.
+    fn of_low(words: Self::Words) -> Self;
 }
 
+/// 2^52: in a number from here to 2^53 the low bits are those of the whole number above it.
+const WHOLE: f64 = 4_503_599_627_370_496.0;
+/// What the exponent of a number is stored above.
+const BIAS: f64 = 1023.0;
+/// Where the exponent of a number is stored.
+const EXPONENT: u32 = 52;
+
 impl Lane<1> for f64 {
+    type Words = u64;
     #[inline(always)]
     fn load(from: &[f64; 1]) -> Self {
         from[0]
@@ -69,6 +88,14 @@ impl Lane<1> for f64 {
     #[inline(always)]
     fn sqrt(self) -> Self {
         f64::sqrt(self)
+    }
+    #[inline(always)]
+    fn power_of_two(self) -> Self {
+        f64::from_bits((self + (WHOLE + BIAS)).to_bits() << EXPONENT)
+    }
+    #[inline(always)]
+    fn of_low(words: u64) -> Self {
+        f64::from_bits((words & 0xffff_ffff) | WHOLE.to_bits()) - WHOLE
     }
 }
 

@@ -1,6 +1,6 @@
 //! Four lanes in arithmetic that every processor has.
 
-use super::Lane;
+use super::{Lane, PlainWords};
 use std::ops::{Add, Div, Mul, Neg, Sub};
 
 /// Four frames in portable arithmetic.
@@ -54,6 +54,7 @@ impl Neg for Plain {
 }
 
 impl Lane<4> for Plain {
+    type Words = PlainWords;
     #[inline(always)]
     fn load(from: &[f64; 4]) -> Self {
         Self(*from)
@@ -85,5 +86,15 @@ impl Lane<4> for Plain {
     fn sqrt(self) -> Self {
         let [a, b, c, d] = self.0;
         Self([a.sqrt(), b.sqrt(), c.sqrt(), d.sqrt()])
+    }
+    #[inline(always)]
+    fn power_of_two(self) -> Self {
+        let [a, b, c, d] = self.0;
+        Self([a.power_of_two(), b.power_of_two(), c.power_of_two(), d.power_of_two()])
+    }
+    #[inline(always)]
+    fn of_low(words: PlainWords) -> Self {
+        let [a, b, c, d] = words.0;
+        Self([f64::of_low(a), f64::of_low(b), f64::of_low(c), f64::of_low(d)])
     }
 }

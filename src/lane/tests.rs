@@ -1,6 +1,6 @@
 //! Every form against plain arithmetic, bit for bit.
 
-use super::{Form, Lane, Rows, Task};
+use super::{EXP_REACH, Form, Lane, Rows, Task, Words, exp};
 
 /// Every operation of [`Lane`] on rows of two operands.
 struct Operations<'a, const W: usize> {
@@ -68,6 +68,140 @@ fn plain_arithmetic_is_what_it_says() {
     let found = Form::PORTABLE.one(Operations { left: &[[3.0]], right: &[[-2.0]] });
     let expected = [1.0, 5.0, -6.0, -1.5, -3.0, -2.0, 3.0, 3.0, 3f64.sqrt(), 2.5];
     assert_eq!(found[0].map(|[value]| value), expected);
+}
+
+/// Every operation of [`Words`] on rows of two operands, and the low halves as numbers.
+struct WordOperations<'a, const W: usize> {
+    left: &'a [[u64; W]],
+    right: &'a [[u64; W]],
+}
+
+impl<const W: usize> Task<W> for WordOperations<'_, W> {
+    type Output = Vec<[[u64; W]; 6]>;
+    fn run<L: Lane<W>>(self) -> Self::Output {
+        let each = |(a, b): (&[u64; W], &[u64; W])| {
+            let (a, b) = (L::Words::load(a), L::Words::load(b));
+            let mut low = [0.0; W];
+            L::of_low(a).store(&mut low);
+            let words =
+                [a, a ^ b, a.multiply_low(b), a.high(), a ^ L::Words::splat(0x8123_4567_89ab_cdef)].map(|result| {
+                    let mut row = [0; W];
+                    result.store(&mut row);
+                    row
+                });
+            [words[0], words[1], words[2], words[3], words[4], low.map(f64::to_bits)]
+        };
+        self.left.iter().zip(self.right).map(each).collect()
+    }
+}
+
+#[test]
+fn words_are_whole_numbers_in_every_form() {
+    let some = [0, 1, 0xffff_ffff, 0x1_0000_0000, u64::MAX, 0x9e37_79b9_7f4a_7c15, 0x8000_0000, 0x7fff_ffff_ffff_ffff];
+    let pairs: Vec<(u64, u64)> = some.iter().flat_map(|a| some.into_iter().map(move |b| (*a, b))).collect();
+    let low = |word: u64| word & 0xffff_ffff;
+    let expected = |(a, b): (u64, u64)| {
+        let number = (low(a) as f64).to_bits();
+        [a, a ^ b, low(a) * low(b), a >> 32, a ^ 0x8123_4567_89ab_cdef, number]
+    };
+    for (index, pair) in pairs.iter().enumerate() {
+        let (left, right) = ([[pair.0]], [[pair.1]]);
+        let alone = Form::PORTABLE.one(WordOperations { left: &left, right: &right });
+        assert_eq!(alone[0].map(|[word]| word), expected(*pair), "{pair:x?}");
+        let side = [0, 1, 2, 3].map(|lane| pairs[(index + lane) % pairs.len()]);
+        for form in [Some(Form::PORTABLE), Form::avx2()].into_iter().flatten() {
+            let (left, right) = ([side.map(|pair| pair.0)], [side.map(|pair| pair.1)]);
+            let found = form.four(WordOperations { left: &left, right: &right });
+            for (lane, pair) in side.iter().enumerate() {
+                assert_eq!(found[0].map(|row| row[lane]), expected(*pair), "{pair:x?} in {} form", form.name());
+            }
+        }
+    }
+}
+
+/// e^x and, for whole x, 2^x.
+struct Powers<'a, const W: usize>(&'a [[f64; W]]);
+
+impl<const W: usize> Task<W> for Powers<'_, W> {
+    type Output = Vec<[[f64; W]; 2]>;
+    fn run<L: Lane<W>>(self) -> Self::Output {
+        let each = |x: &[f64; W]| {
+            let x = L::load(x);
+            let mut rows = [[0.0; W]; 2];
+            exp(x).store(&mut rows[0]);
+            x.power_of_two().store(&mut rows[1]);
+            rows
+        };
+        self.0.iter().map(each).collect()
+    }
+}
+
+#[test]
+fn powers_of_two_are_exact_in_every_form() {
+    let whole: Vec<[f64; 4]> = (-1024..1024).step_by(4).map(|n| [0, 1, 2, 3].map(|lane| f64::from(n + lane))).collect();
+    for form in [Some(Form::PORTABLE), Form::avx2()].into_iter().flatten() {
+        for (row, powers) in whole.iter().zip(form.four(Powers(&whole))) {
+            for (n, found) in row.iter().zip(powers[1]).filter(|(n, _)| **n >= -1022.0) {
+                assert_eq!(found, libm::scalbn(1.0, *n as i32), "2^{n} in {} form", form.name());
+                assert_eq!(Form::PORTABLE.one(Powers(&[[*n]]))[0][1][0], found, "2^{n}");
+            }
+        }
+    }
+}
+
+/// Rows of four over the whole reach of [`exp`], finer near 0.
+fn exponents() -> Vec<[f64; 4]> {
+    let steps = (-100_000..100_000).map(|step| f64::from(step) + 0.37);
+    let all = steps.flat_map(|step| [step * (EXP_REACH / 1e5), step * 1e-5, step * 1e-12, step * 3.7e-4]);
+    all.collect::<Vec<_>>().as_chunks::<4>().0.to_vec()
+}
+
+#[test]
+fn exp_is_right_to_the_last_place() {
+    // One unit in the last place for ours, half of one for the reference, which is rounded too.
+    let limit = 1.5 * f64::EPSILON;
+    let rows = exponents();
+    let found = Form::best().four(Powers(&rows));
+    let mut worst: f64 = 0.0;
+    for (row, found) in rows.iter().zip(&found) {
+        for (x, found) in row.iter().zip(found[0]) {
+            worst = worst.max((found / libm::exp(*x) - 1.0).abs());
+        }
+    }
+    assert!(worst < limit, "{worst:e}");
+    assert_eq!(Form::PORTABLE.one(Powers(&[[0.0]]))[0][0], [1.0]);
+}
+
+#[test]
+fn exp_is_the_rounded_value_where_fifty_digits_are_known() {
+    // Computed with 50 digits, rounded to 20.
+    let known = [
+        (1.0, 2.718_281_828_459_045_235_4),
+        (-1.0, 0.367_879_441_171_442_321_60),
+        (0.5, 1.648_721_270_700_128_146_8),
+        (700.0, 1.014_232_054_735_004_509_5e304),
+        (-700.0, 9.859_676_543_759_770_856_5e-305),
+    ];
+    for (x, expected) in known {
+        let found = Form::PORTABLE.one(Powers(&[[x]]))[0][0][0];
+        assert!((found / expected - 1.0_f64).abs() <= f64::EPSILON, "e^{x} = {found:e}, not {expected:e}");
+    }
+}
+
+#[test]
+fn exp_has_the_same_bits_in_every_form() {
+    let rows = exponents();
+    let alone: Vec<[f64; 1]> = rows.iter().flatten().map(|x| [*x]).collect();
+    let expected = Form::PORTABLE.one(Powers(&alone));
+    for form in [Some(Form::PORTABLE), Form::avx2()].into_iter().flatten() {
+        let four = form.four(Powers(&rows));
+        let one = form.one(Powers(&alone));
+        for (index, [expected, _]) in expected.iter().enumerate() {
+            let place = format!("e^{} in {} form", alone[index][0], form.name());
+            assert_eq!(four[index / 4][0][index % 4].to_bits(), expected[0].to_bits(), "{place}");
+            assert_eq!(one[index][0][0].to_bits(), expected[0].to_bits(), "{place}, one lane");
+        }
+    }
 }
 
 #[test]
