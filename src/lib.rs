@@ -7,7 +7,7 @@
 //! # Flow
 //! text of a frame file -> [`frame::Frame`] -> [`response::Response`], one per method -> errors and verdicts ->
 //! dataset -> files, text and page. Modules use each other in one direction: units, frame, lane, response, solve, exact and
-//! approx, compare, report, store.
+//! approx, compare, family, report, store.
 //!
 //! # Words
 //! *Storey* i lies between two floors, *floor* i on top of storey i, 1 = lowest; the top floor is the *roof*. *Bays*
@@ -57,6 +57,7 @@
 pub mod approx;
 pub mod compare;
 pub mod exact;
+pub mod family;
 pub mod frame;
 pub mod lane;
 pub mod report;

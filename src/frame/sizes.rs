@@ -74,6 +74,19 @@ impl fmt::Display for Range {
 /// Number of ranges in a [`SizeModel`], in the order of [`SizeModel::at`].
 pub const SIZE_PARAMETERS: usize = 9;
 
+/// Names of the ranges as the files write them, in the order of [`SizeModel::at`].
+pub const SIZE_NAMES: [&str; SIZE_PARAMETERS] = [
+    "beam_to_column",
+    "interior_to_end",
+    "taper",
+    "beam_taper",
+    "roof_beam",
+    "span_power",
+    "foot_spring",
+    "end_column_inertia",
+    "area_per_inertia",
+];
+
 /// Ranges of all parameters of the size model.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct SizeModel {
@@ -130,6 +143,21 @@ impl SizeModel {
     /// not in it: it is a factor for each member, see [`SizeSet::sections`].
     pub fn at(&self, shares: &[f64; SIZE_PARAMETERS]) -> SizeSet {
         self.map(|index, range| range.at(shares[index]))
+    }
+
+    /// The ranges in the order of [`Self::at`]; none where the model leaves a parameter out.
+    pub fn ranges(&self) -> [Option<Range>; SIZE_PARAMETERS] {
+        [
+            Some(self.beam_to_column),
+            Some(self.interior_to_end),
+            Some(self.taper),
+            Some(self.beam_taper),
+            Some(self.roof_beam),
+            Some(self.span_power),
+            self.foot_spring,
+            self.end_column_inertia,
+            Some(self.area_per_inertia),
+        ]
     }
 
     fn map(&self, value: impl Fn(usize, Range) -> f64) -> SizeSet {
@@ -243,12 +271,13 @@ pub struct Within {
     pub all: f64,
 }
 
-fn mean(values: &[f64]) -> f64 {
+/// The mean.
+pub(crate) fn mean(values: &[f64]) -> f64 {
     values.iter().sum::<f64>() / values.len() as f64
 }
 
 /// The middle value; of an even number of values the mean of the middle two.
-fn median(values: &[f64]) -> f64 {
+pub(crate) fn median(values: &[f64]) -> f64 {
     let mut sorted = values.to_vec();
     sorted.sort_by(f64::total_cmp);
     let middle = sorted.len() / 2;

@@ -82,6 +82,28 @@ impl Members<1> {
     }
 }
 
+impl Members<1> {
+    /// The same frame in each of `V` lanes.
+    pub fn in_every_lane<const V: usize>(&self) -> Members<V> {
+        let spread = |rows: &Rows<1>| rows.iter().map(|[value]| [*value; V]).collect::<Rows<V>>();
+        Members {
+            storeys: self.storeys,
+            bays: self.bays,
+            height: spread(&self.height),
+            width: spread(&self.width),
+            position: spread(&self.position),
+            shear: spread(&self.shear),
+            area: spread(&self.area),
+            column_stiffness: spread(&self.column_stiffness),
+            beam_stiffness: spread(&self.beam_stiffness),
+            axial_stiffness: spread(&self.axial_stiffness),
+            foot_rho: spread(&self.foot_rho),
+            foot_fixity: [self.foot_fixity[0]; V],
+            ground_hinge: [self.ground_hinge[0]; V],
+        }
+    }
+}
+
 impl Members<4> {
     /// Four frames of one shape side by side.
     pub fn side_by_side(frames: [&Members<1>; 4]) -> Self {
