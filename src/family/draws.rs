@@ -63,7 +63,8 @@ impl<const W: usize> SizeDraws<W> {
         }
     }
 
-    /// One draw as a frame, by plain arithmetic; the lanes agree with it to 1e-13.
+    /// One draw as a frame, by plain arithmetic; the lanes agree with it to 1e-13. All but sizes, feet and modulus is
+    /// that of the frame the draws were made for, the source of its sizes included.
     ///
     /// # Errors
     /// [`FrameFault`] where the drawn sizes make no frame.

@@ -8,6 +8,7 @@ use crate::response::Members;
 
 mod model;
 mod numbers;
+mod spread;
 mod timing;
 mod within;
 

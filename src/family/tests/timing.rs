@@ -16,9 +16,9 @@ impl<const W: usize> Task<W> for Repeat<'_, W> {
     #[inline(always)]
     fn run<L: Lane<W>>(self) {
         for group in 0..GROUPS {
-            let mut numbers = [0; W];
-            for lane in 0..W {
-                numbers[lane] = group * W as u64 + lane as u64;
+            let mut numbers = [group * W as u64; W];
+            for (lane, number) in numbers.iter_mut().enumerate() {
+                *number += lane as u64;
             }
             self.draws.fill::<L>(numbers, self.members);
             black_box(&mut *self.members);
