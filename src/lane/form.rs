@@ -71,3 +71,21 @@ impl Form {
         }
     }
 }
+
+/// A form as the runner of tasks of `W` lanes, for code that is generic over their number.
+pub trait Width<const W: usize> {
+    /// Does `task`.
+    fn run<T: Task<W>>(self, task: T) -> T::Output;
+}
+
+impl Width<1> for Form {
+    fn run<T: Task<1>>(self, task: T) -> T::Output {
+        self.one(task)
+    }
+}
+
+impl Width<4> for Form {
+    fn run<T: Task<4>>(self, task: T) -> T::Output {
+        self.four(task)
+    }
+}

@@ -15,7 +15,7 @@ mod rows;
 mod words;
 
 pub use exp::{EXP_REACH, exp};
-pub use form::{Form, Task};
+pub use form::{Form, Task, Width};
 pub use plain::Plain;
 pub use rows::Rows;
 pub use words::{PlainWords, Words};

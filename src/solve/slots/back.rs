@@ -1,0 +1,110 @@
+//! The way back: unknowns from the roof to the ground; and a second right-hand side on the way up.
+
+use super::group::Group;
+use super::record::{LevelRecord, Record};
+use crate::lane::Lane;
+
+/// Finds all unknowns from the records of the way up.
+#[inline(always)]
+pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
+    order: usize,
+    record: &mut Record<W>,
+    found: &mut [[f64; W]],
+) {
+    let lines = (order - 1) / B;
+    let mut end = found.len();
+    for record in record.levels(order).rev() {
+        let found = &mut found[end - order..];
+        let roof = found.len() == order;
+        end -= order;
+        for index in (0..Group::groups(lines, B)).rev() {
+            let group = Group::of(index, lines, B);
+            let rest = if roof { B * (lines - group.line - group.count) } else { order };
+            match (group.count * B, roof) {
+                (1, false) => step::<L, W, 1>(1 + B * group.line, order, &record, found),
+                (2, false) => step::<L, W, 2>(1 + B * group.line, order, &record, found),
+                (_, false) => step::<L, W, 3>(1 + B * group.line, order, &record, found),
+                (1, true) => step::<L, W, 1>(1 + B * group.line, rest, &record, found),
+                (2, true) => step::<L, W, 2>(1 + B * group.line, rest, &record, found),
+                (_, true) => step::<L, W, 3>(1 + B * group.line, rest, &record, found),
+            }
+        }
+        step::<L, W, 1>(0, order - 1, &record, found);
+    }
+}
+
+/// x = y - M x_rest for the `G` unknowns from `first` on; the `rest` are those right behind them.
+///
+/// What was found last comes last, so that the sums need not wait for it.
+#[inline(always)]
+fn step<L: Lane<W>, const W: usize, const G: usize>(
+    first: usize,
+    rest: usize,
+    record: &LevelRecord<W>,
+    found: &mut [[f64; W]],
+) {
+    let (own, behind) = found[first..].split_at_mut(G);
+    let behind = &behind[..rest];
+    let mut sums = [L::splat(0.0); G];
+    for row in 0..G {
+        sums[row] = L::load(record.right(first + row));
+    }
+    for index in (0..rest).rev() {
+        let value = L::load(&behind[index]);
+        for row in 0..G {
+            sums[row] = sums[row] - L::load(&record.multipliers(first + row)[index]) * value;
+        }
+    }
+    for row in 0..G {
+        sums[row].store(&mut own[row]);
+    }
+}
+
+/// Takes another right-hand side, in the order of the unknowns, through the eliminations of the records, and leaves it
+/// there for [`substitute`]. `right` is used up.
+#[inline(always)]
+pub(super) fn forward<L: Lane<W>, const W: usize, const B: usize>(
+    order: usize,
+    record: &mut Record<W>,
+    right: &mut [[f64; W]],
+) {
+    let lines = (order - 1) / B;
+    let mut start = 0;
+    for mut record in record.levels(order) {
+        let right = &mut right[start..];
+        let roof = right.len() == order;
+        start += order;
+        eliminate::<L, W, 1>(0, order - 1, &mut record, right);
+        for index in 0..Group::groups(lines, B) {
+            let group = Group::of(index, lines, B);
+            let (first, rest) = (1 + B * group.line, if roof { B * (lines - group.line - group.count) } else { order });
+            match group.count * B {
+                1 => eliminate::<L, W, 1>(first, rest, &mut record, right),
+                2 => eliminate::<L, W, 2>(first, rest, &mut record, right),
+                _ => eliminate::<L, W, 3>(first, rest, &mut record, right),
+            }
+        }
+    }
+}
+
+/// y = D^-1 b; c <- c - M' b for the `rest` right behind.
+#[inline(always)]
+fn eliminate<L: Lane<W>, const W: usize, const G: usize>(
+    first: usize,
+    rest: usize,
+    record: &mut LevelRecord<W>,
+    right: &mut [[f64; W]],
+) {
+    let (own, behind) = right[first..].split_at_mut(G);
+    for row in 0..G {
+        let mut sum = L::splat(0.0);
+        for column in 0..G {
+            sum = sum + L::load(record.inverse(first + row, column)) * L::load(&own[column]);
+        }
+        sum.store(record.right_mut(first + row));
+        let multipliers = record.multipliers(first + row);
+        for (number, multiplier) in behind[..rest].iter_mut().zip(multipliers) {
+            (L::load(number) - L::load(multiplier) * L::load(&own[row])).store(number);
+        }
+    }
+}

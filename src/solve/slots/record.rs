@@ -1,0 +1,112 @@
+//! What the way up leaves for the way back.
+
+use crate::lane::{Lane, Rows};
+
+/// Most unknowns that one step eliminates.
+pub(super) const WIDEST: usize = 3;
+
+/// One row for each unknown, level by level in the order of elimination.
+pub(super) struct Record<const W: usize> {
+    /// Unknowns of a level.
+    order: usize,
+    /// Multipliers of the unknowns that follow, as many as a level has.
+    multipliers: Rows<W>,
+    /// The block's inverse times its right-hand side.
+    right: Rows<W>,
+    /// The inverse of the block that the unknown was eliminated with, [`WIDEST`] numbers a row.
+    inverses: Rows<W>,
+}
+
+impl<const W: usize> Record<W> {
+    pub(super) fn new(order: usize, levels: usize) -> Self {
+        let unknowns = order * levels;
+        let (multipliers, right) = (Rows::zeros(unknowns * order), Rows::zeros(unknowns));
+        Self { order, multipliers, right, inverses: Rows::zeros(unknowns * WIDEST) }
+    }
+
+    /// The records of all levels; `order` is that of [`Record::new`], given again where the compiler knows it.
+    #[inline(always)]
+    pub(super) fn levels(&mut self, order: usize) -> impl DoubleEndedIterator<Item = LevelRecord<'_, W>> {
+        debug_assert_eq!(order, self.order);
+        let multipliers = self.multipliers.chunks_exact_mut(order * order);
+        let right = self.right.chunks_exact_mut(order);
+        let inverses = self.inverses.chunks_exact_mut(order * WIDEST);
+        multipliers.zip(right).zip(inverses).map(move |((multipliers, right), inverses)| LevelRecord {
+            order,
+            multipliers,
+            right,
+            inverses,
+        })
+    }
+}
+
+/// The rows of one level.
+pub(super) struct LevelRecord<'a, const W: usize> {
+    order: usize,
+    multipliers: &'a mut [[f64; W]],
+    right: &'a mut [[f64; W]],
+    inverses: &'a mut [[f64; W]],
+}
+
+impl<const W: usize> LevelRecord<'_, W> {
+    /// Keeps the row of one unknown.
+    #[inline(always)]
+    pub(super) fn keep<L: Lane<W>, const G: usize>(
+        &mut self,
+        row: usize,
+        multipliers: &[L],
+        right: L,
+        inverse: &[L; G],
+    ) {
+        let own = self.keep_row(row, multipliers.len(), right, inverse);
+        for column in 0..multipliers.len() {
+            multipliers[column].store(&mut own[column]);
+        }
+    }
+
+    /// Keeps the row of one unknown but for its `count` multipliers, which are to be written where this says.
+    #[inline(always)]
+    pub(super) fn keep_row<L: Lane<W>, const G: usize>(
+        &mut self,
+        row: usize,
+        count: usize,
+        right: L,
+        inverse: &[L; G],
+    ) -> &mut [[f64; W]] {
+        right.store(&mut self.right[row]);
+        for column in 0..G {
+            inverse[column].store(&mut self.inverses[row * WIDEST + column]);
+        }
+        &mut self.multipliers[row * self.order..][..count]
+    }
+
+    /// A multiplier.
+    #[inline(always)]
+    pub(super) fn multiplier(&mut self, row: usize, column: usize) -> &mut [f64; W] {
+        &mut self.multipliers[row * self.order + column]
+    }
+
+    /// The multipliers of an unknown.
+    #[inline(always)]
+    pub(super) fn multipliers(&self, row: usize) -> &[[f64; W]] {
+        &self.multipliers[row * self.order..][..self.order]
+    }
+
+    /// The right-hand side of an unknown.
+    #[inline(always)]
+    pub(super) fn right(&self, row: usize) -> &[f64; W] {
+        &self.right[row]
+    }
+
+    /// The right-hand side of an unknown, to be replaced.
+    #[inline(always)]
+    pub(super) fn right_mut(&mut self, row: usize) -> &mut [f64; W] {
+        &mut self.right[row]
+    }
+
+    /// A number of a block's inverse.
+    #[inline(always)]
+    pub(super) fn inverse(&self, row: usize, column: usize) -> &[f64; W] {
+        &self.inverses[row * WIDEST + column]
+    }
+}

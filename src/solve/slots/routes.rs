@@ -1,0 +1,128 @@
+//! One compiled route for each kind of joint and order of the window, chosen when the shape is known.
+
+use super::joint::{RiseAndRotation, Rotation, Unknowns};
+use super::sweep::Sweep;
+use super::window::{Narrow, Wide, Window};
+use super::{Joint, Memory, back, moments, refine};
+use crate::lane::{Form, Lane, Task, Width};
+use crate::response::{Forces, Members};
+use std::marker::PhantomData;
+
+/// A route as a plain function pointer.
+pub(super) type Route<const W: usize> = fn(Form, &mut Memory<W>, &Members<W>, &mut Forces<W>) -> [bool; W];
+
+/// The route for frames of `bays` bays.
+pub(super) fn route<const W: usize>(joint: Joint, bays: usize) -> Route<W>
+where
+    Form: Width<W>,
+{
+    match (joint, bays) {
+        (Joint::Rotation, 1) => fixed::<Rotation, W, 1, 3>,
+        (Joint::Rotation, 2) => fixed::<Rotation, W, 1, 4>,
+        (Joint::Rotation, 3) => fixed::<Rotation, W, 1, 5>,
+        (Joint::Rotation, 4) => fixed::<Rotation, W, 1, 6>,
+        (Joint::Rotation, 5) => fixed::<Rotation, W, 1, 7>,
+        (Joint::Rotation, 6) => fixed::<Rotation, W, 1, 8>,
+        (Joint::Rotation, 7) => fixed::<Rotation, W, 1, 9>,
+        (Joint::Rotation, 8) => fixed::<Rotation, W, 1, 10>,
+        (Joint::Rotation, _) => any::<Rotation, W, 1>,
+        (Joint::RiseAndRotation, 1) => fixed::<RiseAndRotation, W, 2, 5>,
+        (Joint::RiseAndRotation, 2) => fixed::<RiseAndRotation, W, 2, 7>,
+        (Joint::RiseAndRotation, 3) => fixed::<RiseAndRotation, W, 2, 9>,
+        (Joint::RiseAndRotation, 4) => fixed::<RiseAndRotation, W, 2, 11>,
+        (Joint::RiseAndRotation, 5) => fixed::<RiseAndRotation, W, 2, 13>,
+        (Joint::RiseAndRotation, 6) => fixed::<RiseAndRotation, W, 2, 15>,
+        (Joint::RiseAndRotation, 7) => fixed::<RiseAndRotation, W, 2, 17>,
+        (Joint::RiseAndRotation, 8) => fixed::<RiseAndRotation, W, 2, 19>,
+        (Joint::RiseAndRotation, _) => any::<RiseAndRotation, W, 2>,
+    }
+}
+
+/// The window's order is `N`, known to the compiler.
+fn fixed<U: Unknowns<B>, const W: usize, const B: usize, const N: usize>(
+    form: Form,
+    memory: &mut Memory<W>,
+    members: &Members<W>,
+    forces: &mut Forces<W>,
+) -> [bool; W]
+where
+    Form: Width<W>,
+{
+    form.run(Fixed::<U, W, B, N> { memory, members, forces, unknowns: PhantomData })
+}
+
+struct Fixed<'a, U, const W: usize, const B: usize, const N: usize> {
+    memory: &'a mut Memory<W>,
+    members: &'a Members<W>,
+    forces: &'a mut Forces<W>,
+    unknowns: PhantomData<U>,
+}
+
+impl<U: Unknowns<B>, const W: usize, const B: usize, const N: usize> Task<W> for Fixed<'_, U, W, B, N> {
+    type Output = [bool; W];
+
+    #[inline(always)]
+    fn run<L: Lane<W>>(self) -> [bool; W] {
+        solve::<U, L, _, W, B>(Narrow::<L, N>::new(), N, self.memory, self.members, self.forces)
+    }
+}
+
+/// The window's order is a variable.
+fn any<U: Unknowns<B>, const W: usize, const B: usize>(
+    form: Form,
+    memory: &mut Memory<W>,
+    members: &Members<W>,
+    forces: &mut Forces<W>,
+) -> [bool; W]
+where
+    Form: Width<W>,
+{
+    form.run(Any::<U, W, B> { memory, members, forces, unknowns: PhantomData })
+}
+
+struct Any<'a, U, const W: usize, const B: usize> {
+    memory: &'a mut Memory<W>,
+    members: &'a Members<W>,
+    forces: &'a mut Forces<W>,
+    unknowns: PhantomData<U>,
+}
+
+impl<U: Unknowns<B>, const W: usize, const B: usize> Task<W> for Any<'_, U, W, B> {
+    type Output = [bool; W];
+
+    #[inline(always)]
+    fn run<L: Lane<W>>(self) -> [bool; W] {
+        let order = 1 + B * self.members.lines();
+        solve::<U, L, _, W, B>(Wide::new(order), order, self.memory, self.members, self.forces)
+    }
+}
+
+/// Steps 1 to 9 of the module page.
+#[inline(always)]
+fn solve<U: Unknowns<B>, L: Lane<W>, M: Window<L, W>, const W: usize, const B: usize>(
+    window: M,
+    order: usize,
+    memory: &mut Memory<W>,
+    members: &Members<W>,
+    forces: &mut Forces<W>,
+) -> [bool; W] {
+    let Memory { slope, strain, record, found, change, refines } = memory;
+    let frames = Memory::frames::<L>(slope, strain, members, B > 1);
+    let mut sweep = Sweep::<U, L, M, W, B> { window, unknowns: PhantomData };
+    let reserve = sweep.run(&frames, record);
+    back::substitute::<L, W, B>(order, record, found);
+    moments::recover::<L, W, B>(order, &frames, found, forces);
+    if *refines {
+        refine::misfit::<L, W, B>(order, &frames, found, forces, change);
+        back::forward::<L, W, B>(order, record, change);
+        back::substitute::<L, W, B>(order, record, change);
+        for (found, change) in found.iter_mut().zip(change.iter()) {
+            (L::load(found) + L::load(change)).store(found);
+        }
+        moments::recover::<L, W, B>(order, &frames, found, forces);
+    }
+    let (mut reserves, mut last) = ([0.0; W], [0.0; W]);
+    reserve.store(&mut reserves);
+    L::load(&found[0]).store(&mut last);
+    std::array::from_fn(|lane| reserves[lane] > 0.0 && last[lane].is_finite())
+}

@@ -1,0 +1,183 @@
+//! The way up: unknowns are eliminated from the ground to the roof.
+
+use super::frames::{Frames, Level};
+use super::group::Group;
+use super::joint::{Unknowns, two_thirds};
+use super::record::{LevelRecord, Record};
+use super::window::{Eliminated, Window};
+use crate::lane::Lane;
+use std::marker::PhantomData;
+
+/// A sweep over frames whose joints have `B` unknowns of kind `U`.
+pub(super) struct Sweep<U, L, M, const W: usize, const B: usize> {
+    pub window: M,
+    pub unknowns: PhantomData<(U, L)>,
+}
+
+impl<U, L, M, const W: usize, const B: usize> Sweep<U, L, M, W, B>
+where
+    U: Unknowns<B>,
+    L: Lane<W>,
+    M: Window<L, W>,
+{
+    /// Eliminates all unknowns; returns what the pivots had to spare: a frame cannot stand where it is not positive.
+    #[inline(always)]
+    pub(super) fn run(&mut self, frames: &Frames<W>, record: &mut Record<W>) -> L {
+        let order = self.window.order();
+        let lines = (order - 1) / B;
+        self.open(&frames.level(0, lines));
+        let mut records = record.levels(order);
+        for storey in 1..frames.storeys {
+            if let Some(mut record) = records.next() {
+                self.replace(&frames.level(storey, lines), &mut record);
+            }
+        }
+        if let Some(mut record) = records.next() {
+            self.close(&mut record);
+        }
+        self.window.reserve()
+    }
+
+    /// The lowest level comes in.
+    #[inline(always)]
+    fn open(&mut self, ground: &Level<W>) {
+        let mut storey = L::splat(0.0);
+        for line in 0..=ground.bays() {
+            let (column, rho, place) = (ground.column::<L>(line), ground.rho::<L>(line), 1 + B * line);
+            storey = storey + column * (L::splat(1.0 / 6.0) + L::splat(0.5) * rho);
+            *self.window.at(0, place + B - 1) = column * (L::splat(0.5) + L::splat(0.5) * rho);
+            self.add_joint(ground, line, place);
+        }
+        *self.window.at(0, 0) = storey;
+        *self.window.diagonal(0) = storey;
+        *self.window.right(0) = ground.push();
+    }
+
+    /// Eliminates the level in the window; `next`, the one above, takes its slots.
+    #[inline(always)]
+    fn replace(&mut self, next: &Level<W>, record: &mut LevelRecord<W>) {
+        let order = self.window.order();
+        let lines = (order - 1) / B;
+        let _: Eliminated<L, 1> = self.window.eliminate(order, 0, record);
+        self.storey_comes_in(next, record);
+        for index in 0..Group::groups(lines, B) {
+            let group = Group::of(index, lines, B);
+            match group.count * B {
+                1 if B == 1 => self.replace_joints::<1>(next, group, record),
+                3 if B == 1 => self.replace_joints::<3>(next, group, record),
+                _ => self.replace_joints::<2>(next, group, record),
+            }
+        }
+    }
+
+    /// Eliminates a group of joints, which stand at the front; those above them come in at the back.
+    #[inline(always)]
+    fn replace_joints<const G: usize>(&mut self, next: &Level<W>, group: Group, record: &mut LevelRecord<W>) {
+        let below = self.window.eliminate::<G>(self.window.order(), 1 + B * group.line, record);
+        self.joints_come_in::<G>(next, group, &below, record);
+    }
+
+    /// Eliminates the top level; the window runs empty.
+    #[inline(always)]
+    fn close(&mut self, record: &mut LevelRecord<W>) {
+        let order = self.window.order();
+        let lines = (order - 1) / B;
+        let _: Eliminated<L, 1> = self.window.eliminate(order, 0, record);
+        for index in 0..Group::groups(lines, B) {
+            let group = Group::of(index, lines, B);
+            let (held, first) = (B * (lines - group.line), 1 + B * group.line);
+            match group.count * B {
+                1 if B == 1 => _ = self.window.eliminate::<1>(held, first, record),
+                3 if B == 1 => _ = self.window.eliminate::<3>(held, first, record),
+                _ => _ = self.window.eliminate::<2>(held, first, record),
+            }
+        }
+    }
+
+    /// A storey comes in behind the joints at its foot; no term binds it to the storey below.
+    #[inline(always)]
+    fn storey_comes_in(&mut self, level: &Level<W>, record: &mut LevelRecord<W>) {
+        let back = self.window.order() - 1;
+        let mut sum = L::splat(0.0);
+        for line in 0..=level.bays() {
+            let column = level.column(line);
+            sum = sum + column;
+            for unknown in 0..B {
+                let turns = unknown == B - 1;
+                *self.window.at(B * line + unknown, back) = if turns { column } else { L::splat(0.0) };
+            }
+        }
+        let own = two_thirds::<L, W>() * sum;
+        *self.window.at(back, back) = own;
+        *self.window.diagonal(back) = own;
+        *self.window.right(back) = level.push();
+        L::splat(0.0).store(record.multiplier(0, back));
+    }
+
+    /// The joints of a group come in at the back, each bound to the one just eliminated below it by terms K.
+    ///
+    /// # Formula
+    /// With D and y of the eliminated block: the new rows are -K D^-1 C' in the columns of the others and -K D^-1 K among
+    /// themselves, the new right-hand side -K y; then come the joints' own terms.
+    #[inline(always)]
+    fn joints_come_in<const G: usize>(
+        &mut self,
+        level: &Level<W>,
+        group: Group,
+        below: &Eliminated<L, G>,
+        record: &mut LevelRecord<W>,
+    ) {
+        let (back, first) = (self.window.order() - G, 1 + B * group.line);
+        let mut bonds = [L::splat(0.0); G];
+        for index in 0..G {
+            bonds[index] = U::column::<L, W>(level, group.line + index / B)[index % B];
+        }
+        for index in 0..G {
+            let minus = -bonds[index];
+            for row in 0..back {
+                let multiplier = L::load(record.multiplier(first + index, row));
+                *self.window.at(row, back + index) = minus * multiplier;
+            }
+            for other in 0..G {
+                let multiplier = below.inverse[other][index] * bonds[index];
+                multiplier.store(record.multiplier(first + other, back + index));
+                if other <= index {
+                    *self.window.at(back + other, back + index) = -(bonds[other] * multiplier);
+                }
+            }
+            *self.window.right(back + index) = minus * below.right[index];
+        }
+        let storey = B * (level.bays() + 1 - group.line - group.count);
+        for index in 0..group.count {
+            let place = back + B * index;
+            self.add(storey, place + B - 1, bonds[B * index + B - 1]);
+            self.add_joint(level, group.line + index, place);
+        }
+    }
+
+    /// The terms of a joint, which stands at `place`, with itself and with the joint on its left, right before it.
+    #[inline(always)]
+    fn add_joint(&mut self, level: &Level<W>, line: usize, place: usize) {
+        let own = U::own::<L, W>(level, line);
+        for row in 0..B {
+            *self.window.diagonal(place + row) = own[row][row];
+            for column in row..B {
+                self.add(place + row, place + column, own[row][column]);
+            }
+        }
+        if line > 0 {
+            let beam = U::beam::<L, W>(level, line - 1);
+            for row in 0..B {
+                for column in 0..B {
+                    self.add(place - B + row, place + column, beam[row][column]);
+                }
+            }
+        }
+    }
+
+    #[inline(always)]
+    fn add(&mut self, row: usize, column: usize, term: L) {
+        let entry = self.window.at(row, column);
+        *entry = *entry + term;
+    }
+}
