@@ -60,6 +60,7 @@ pub mod exact;
 pub mod family;
 pub mod frame;
 pub mod lane;
+pub mod progress;
 pub mod report;
 pub mod response;
 pub mod solve;

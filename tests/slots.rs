@@ -10,7 +10,7 @@ use support::random::{cases, extreme_frames, frames, of_shape};
 use swaybound::exact::plain::{Analysis, Plain};
 use swaybound::exact::{slope_deflection, stiffness};
 use swaybound::frame::{Feet, Frame, FrameParts};
-use swaybound::lane::{Form, Rows, Width};
+use swaybound::lane::{Form, RowWidth, Rows};
 use swaybound::response::{Forces, Members, Response};
 use swaybound::solve::{Joint, Slots};
 
@@ -24,7 +24,7 @@ fn forms() -> impl Iterator<Item = Form> {
 /// The frames' forces, and which can stand.
 fn solve<const W: usize>(analysis: Analysis, form: Form, members: &Members<W>) -> (Forces<W>, [bool; W])
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
     let mut forces = Forces::for_members(members);
     let stands = Plain::new(analysis, members.storeys, members.bays).respond(form, members, &mut forces);

@@ -1,6 +1,6 @@
 //! Exact analyses of plain frames, `W` at a time: what a family of frames is solved by.
 
-use crate::lane::{Form, Lane, Task, Width};
+use crate::lane::{Form, Lane, RowWidth, Task, Width};
 use crate::response::{Forces, Members, axial_from_beam_shears};
 use crate::solve::{Joint, Slots};
 
@@ -46,7 +46,7 @@ pub struct Plain<const W: usize> {
 
 impl<const W: usize> Plain<W>
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
     /// The analysis of frames of `storeys` storeys and `bays` bays, each 1 or more.
     pub fn new(analysis: Analysis, storeys: usize, bays: usize) -> Self {

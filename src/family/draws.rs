@@ -1,5 +1,6 @@
 //! Frames like one frame, its sizes drawn: in lanes for the many, one at a time to write down.
 
+use super::batch::{Population, Shape};
 use super::numbers::{MEMBERS, SIZES, WITHIN_ALL, WITHIN_BEAMS};
 use super::{DrawFault, Geometry, ModelDraws, Source, WithinDraws};
 use crate::frame::sizes::{SIZE_PARAMETERS, SizeModel, SizeSet, Within};
@@ -19,6 +20,21 @@ pub struct SizeDraws<const W: usize> {
 enum Kind<const W: usize> {
     Model { model: Box<SizeModel>, draws: ModelDraws, geometry: Geometry<W> },
     Within { within: Within, draws: WithinDraws },
+}
+
+impl Population for SizeDraws<4> {
+    fn shape(&self, _draw: u64) -> Shape {
+        Shape { storeys: self.frame.storeys(), bays: self.frame.bays() }
+    }
+
+    fn members(&self, _shape: Shape) -> Members<4> {
+        SizeDraws::members(self)
+    }
+
+    #[inline(always)]
+    fn fill<L: Lane<4>>(&self, draws: [u64; 4], members: &mut Members<4>) {
+        SizeDraws::fill::<L>(self, draws, members);
+    }
 }
 
 impl<const W: usize> SizeDraws<W> {

@@ -4,6 +4,7 @@
 //! whatever else is drawn. [`SizeDraws`] draws the sizes of one frame, `W` draws side by side; [`ModelDraws`] does so
 //! for any [`Geometry`], also one that differs from lane to lane.
 
+pub mod batch;
 mod draws;
 mod fault;
 mod feet;

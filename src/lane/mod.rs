@@ -8,12 +8,14 @@
 
 #[cfg(target_arch = "x86_64")]
 mod avx2;
+mod block;
 mod exp;
 mod form;
 mod plain;
 mod rows;
 mod words;
 
+pub use block::{Block, RowTask, RowWidth};
 pub use exp::{EXP_REACH, exp};
 pub use form::{Form, Task, Width};
 pub use plain::Plain;

@@ -4,16 +4,17 @@ use super::group::Group;
 use super::record::{LevelRecord, Record};
 use crate::lane::Lane;
 
-/// Finds all unknowns from the records of the way up.
+/// Finds all unknowns from the records of the way up; `sizes` are those of [`Record::levels`].
 #[inline(always)]
 pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
-    order: usize,
+    sizes: [usize; 2],
     record: &mut Record<W>,
     found: &mut [[f64; W]],
 ) {
+    let order = sizes[0];
     let lines = (order - 1) / B;
     let mut end = found.len();
-    for record in record.levels(order).rev() {
+    for record in record.levels(sizes).rev() {
         let found = &mut found[end - order..];
         let roof = found.len() == order;
         end -= order;
@@ -45,14 +46,15 @@ fn step<L: Lane<W>, const W: usize, const G: usize>(
 ) {
     let (own, behind) = found[first..].split_at_mut(G);
     let behind = &behind[..rest];
-    let mut sums = [L::splat(0.0); G];
+    let (mut sums, mut multipliers): ([L; G], [&[[f64; W]]; G]) = ([L::splat(0.0); G], [&[]; G]);
     for row in 0..G {
         sums[row] = L::load(record.right(first + row));
+        multipliers[row] = &record.multipliers(first + row, 1)[..rest];
     }
     for index in (0..rest).rev() {
         let value = L::load(&behind[index]);
         for row in 0..G {
-            sums[row] = sums[row] - L::load(&record.multipliers(first + row)[index]) * value;
+            sums[row] = sums[row] - L::load(&multipliers[row][index]) * value;
         }
     }
     for row in 0..G {
@@ -64,13 +66,14 @@ fn step<L: Lane<W>, const W: usize, const G: usize>(
 /// there for [`substitute`]. `right` is used up.
 #[inline(always)]
 pub(super) fn forward<L: Lane<W>, const W: usize, const B: usize>(
-    order: usize,
+    sizes: [usize; 2],
     record: &mut Record<W>,
     right: &mut [[f64; W]],
 ) {
+    let order = sizes[0];
     let lines = (order - 1) / B;
     let mut start = 0;
-    for mut record in record.levels(order) {
+    for mut record in record.levels(sizes) {
         let right = &mut right[start..];
         let roof = right.len() == order;
         start += order;
@@ -102,7 +105,7 @@ fn eliminate<L: Lane<W>, const W: usize, const G: usize>(
             sum = sum + L::load(record.inverse(first + row, column)) * L::load(&own[column]);
         }
         sum.store(record.right_mut(first + row));
-        let multipliers = record.multipliers(first + row);
+        let multipliers = record.multipliers(first + row, 1);
         for (number, multiplier) in behind[..rest].iter_mut().zip(multipliers) {
             (L::load(number) - L::load(multiplier) * L::load(&own[row])).store(number);
         }

@@ -44,7 +44,7 @@
 //! frame cannot stand. The window's order is a constant of the compiled code up to 8 bays, a variable beyond.
 //!
 //! # Where to read on
-//! `window` has steps 2 to 4, `sweep` 1, 5 and 6, `back` 7, `moments` 8, `refine` 9; `frames` and `joint` the terms of the
+//! `window` (and `wide`, for any order) has steps 2 to 4, `sweep` 1, 5 and 6, `back` 7, `moments` 8, `refine` 9; `frames` and `joint` the terms of the
 //! equations; `group` which joints leave together; `record` what is kept for the way back.
 
 #![allow(clippy::needless_range_loop, reason = "rows and columns are what is meant; iterators would hide them")]
@@ -59,9 +59,10 @@ mod record;
 mod refine;
 mod routes;
 mod sweep;
+mod wide;
 mod window;
 
-use crate::lane::{Form, Lane, Rows, Width};
+use crate::lane::{Form, Lane, RowWidth, Rows};
 use crate::response::{Forces, Members};
 use frames::Frames;
 use record::Record;
@@ -100,7 +101,7 @@ struct Memory<const W: usize> {
 
 impl<const W: usize> Slots<W>
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
     /// Room for frames of `storeys` storeys and `bays` bays, each 1 or more.
     pub fn new(joint: Joint, storeys: usize, bays: usize) -> Self {
@@ -108,10 +109,11 @@ where
             Joint::Rotation => bays + 2,
             Joint::RiseAndRotation => 2 * bays + 3,
         };
+        let stride = if bays > routes::NARROW { wide::stride::<W>(order) } else { order };
         let memory = Memory {
             slope: Rows::zeros(bays),
             strain: Rows::zeros(storeys),
-            record: Record::new(order, storeys),
+            record: Record::new(order, stride, storeys),
             found: Rows::zeros(order * storeys),
             change: Rows::zeros(0),
             refines: false,

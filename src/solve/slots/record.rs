@@ -9,6 +9,8 @@ pub(super) const WIDEST: usize = 3;
 pub(super) struct Record<const W: usize> {
     /// Unknowns of a level.
     order: usize,
+    /// Numbers from row to row of the multipliers.
+    stride: usize,
     /// Multipliers of the unknowns that follow, as many as a level has.
     multipliers: Rows<W>,
     /// The block's inverse times its right-hand side.
@@ -18,21 +20,26 @@ pub(super) struct Record<const W: usize> {
 }
 
 impl<const W: usize> Record<W> {
-    pub(super) fn new(order: usize, levels: usize) -> Self {
+    /// Room for the multipliers of `stride` unknowns in a row, `order` or more.
+    pub(super) fn new(order: usize, stride: usize, levels: usize) -> Self {
         let unknowns = order * levels;
-        let (multipliers, right) = (Rows::zeros(unknowns * order), Rows::zeros(unknowns));
-        Self { order, multipliers, right, inverses: Rows::zeros(unknowns * WIDEST) }
+        let (multipliers, right) = (Rows::zeros(unknowns * stride), Rows::zeros(unknowns));
+        Self { order, stride, multipliers, right, inverses: Rows::zeros(unknowns * WIDEST) }
     }
 
-    /// The records of all levels; `order` is that of [`Record::new`], given again where the compiler knows it.
+    /// The records of all levels; `order` and `stride` are those of [`Record::new`], given again where the compiler knows
+    /// them.
     #[inline(always)]
-    pub(super) fn levels(&mut self, order: usize) -> impl DoubleEndedIterator<Item = LevelRecord<'_, W>> {
-        debug_assert_eq!(order, self.order);
-        let multipliers = self.multipliers.chunks_exact_mut(order * order);
+    pub(super) fn levels(
+        &mut self,
+        [order, stride]: [usize; 2],
+    ) -> impl DoubleEndedIterator<Item = LevelRecord<'_, W>> {
+        debug_assert_eq!([order, stride], [self.order, self.stride]);
+        let multipliers = self.multipliers.chunks_exact_mut(order * stride);
         let right = self.right.chunks_exact_mut(order);
         let inverses = self.inverses.chunks_exact_mut(order * WIDEST);
         multipliers.zip(right).zip(inverses).map(move |((multipliers, right), inverses)| LevelRecord {
-            order,
+            stride,
             multipliers,
             right,
             inverses,
@@ -42,7 +49,7 @@ impl<const W: usize> Record<W> {
 
 /// The rows of one level.
 pub(super) struct LevelRecord<'a, const W: usize> {
-    order: usize,
+    stride: usize,
     multipliers: &'a mut [[f64; W]],
     right: &'a mut [[f64; W]],
     inverses: &'a mut [[f64; W]],
@@ -77,19 +84,19 @@ impl<const W: usize> LevelRecord<'_, W> {
         for column in 0..G {
             inverse[column].store(&mut self.inverses[row * WIDEST + column]);
         }
-        &mut self.multipliers[row * self.order..][..count]
+        &mut self.multipliers[row * self.stride..][..count]
     }
 
     /// A multiplier.
     #[inline(always)]
     pub(super) fn multiplier(&mut self, row: usize, column: usize) -> &mut [f64; W] {
-        &mut self.multipliers[row * self.order + column]
+        &mut self.multipliers[row * self.stride + column]
     }
 
-    /// The multipliers of an unknown.
+    /// The multipliers of `count` unknowns, row after row.
     #[inline(always)]
-    pub(super) fn multipliers(&self, row: usize) -> &[[f64; W]] {
-        &self.multipliers[row * self.order..][..self.order]
+    pub(super) fn multipliers(&self, row: usize, count: usize) -> &[[f64; W]] {
+        &self.multipliers[row * self.stride..][..count * self.stride]
     }
 
     /// The right-hand side of an unknown.

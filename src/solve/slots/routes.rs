@@ -2,11 +2,15 @@
 
 use super::joint::{RiseAndRotation, Rotation, Unknowns};
 use super::sweep::Sweep;
-use super::window::{Narrow, Wide, Window};
+use super::wide::{self, Wide};
+use super::window::{Narrow, Window};
 use super::{Joint, Memory, back, moments, refine};
-use crate::lane::{Form, Lane, Task, Width};
+use crate::lane::{Block, Form, Lane, RowTask, RowWidth, Task, Width};
 use crate::response::{Forces, Members};
 use std::marker::PhantomData;
+
+/// Most bays whose windows have orders that the compiler knows.
+pub(super) const NARROW: usize = 8;
 
 /// A route as a plain function pointer.
 pub(super) type Route<const W: usize> = fn(Form, &mut Memory<W>, &Members<W>, &mut Forces<W>) -> [bool; W];
@@ -14,7 +18,7 @@ pub(super) type Route<const W: usize> = fn(Form, &mut Memory<W>, &Members<W>, &m
 /// The route for frames of `bays` bays.
 pub(super) fn route<const W: usize>(joint: Joint, bays: usize) -> Route<W>
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
     match (joint, bays) {
         (Joint::Rotation, 1) => fixed::<Rotation, W, 1, 3>,
@@ -46,7 +50,7 @@ fn fixed<U: Unknowns<B>, const W: usize, const B: usize, const N: usize>(
     forces: &mut Forces<W>,
 ) -> [bool; W]
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
     form.run(Fixed::<U, W, B, N> { memory, members, forces, unknowns: PhantomData })
 }
@@ -63,7 +67,7 @@ impl<U: Unknowns<B>, const W: usize, const B: usize, const N: usize> Task<W> for
 
     #[inline(always)]
     fn run<L: Lane<W>>(self) -> [bool; W] {
-        solve::<U, L, _, W, B>(Narrow::<L, N>::new(), N, self.memory, self.members, self.forces)
+        solve::<U, L, _, W, B>(Narrow::<L, N>::new(), [N, N], self.memory, self.members, self.forces)
     }
 }
 
@@ -75,9 +79,9 @@ fn any<U: Unknowns<B>, const W: usize, const B: usize>(
     forces: &mut Forces<W>,
 ) -> [bool; W]
 where
-    Form: Width<W>,
+    Form: RowWidth<W>,
 {
-    form.run(Any::<U, W, B> { memory, members, forces, unknowns: PhantomData })
+    form.run_rows(Any::<U, W, B> { memory, members, forces, unknowns: PhantomData })
 }
 
 struct Any<'a, U, const W: usize, const B: usize> {
@@ -87,13 +91,15 @@ struct Any<'a, U, const W: usize, const B: usize> {
     unknowns: PhantomData<U>,
 }
 
-impl<U: Unknowns<B>, const W: usize, const B: usize> Task<W> for Any<'_, U, W, B> {
+impl<U: Unknowns<B>, const W: usize, const B: usize> RowTask<W> for Any<'_, U, W, B> {
     type Output = [bool; W];
 
     #[inline(always)]
-    fn run<L: Lane<W>>(self) -> [bool; W] {
+    fn run<L: Lane<W>, K: Block<L, W>>(self) -> [bool; W] {
         let order = 1 + B * self.members.lines();
-        solve::<U, L, _, W, B>(Wide::new(order), order, self.memory, self.members, self.forces)
+        let mut room = [wide::room::<W>(order), wide::room::<W>(order)];
+        let window = Wide::<L, K, W>::new(order, room.each_mut().map(|rows| &mut rows[..]));
+        solve::<U, L, _, W, B>(window, [order, wide::stride::<W>(order)], self.memory, self.members, self.forces)
     }
 }
 
@@ -101,21 +107,22 @@ impl<U: Unknowns<B>, const W: usize, const B: usize> Task<W> for Any<'_, U, W, B
 #[inline(always)]
 fn solve<U: Unknowns<B>, L: Lane<W>, M: Window<L, W>, const W: usize, const B: usize>(
     window: M,
-    order: usize,
+    sizes: [usize; 2],
     memory: &mut Memory<W>,
     members: &Members<W>,
     forces: &mut Forces<W>,
 ) -> [bool; W] {
     let Memory { slope, strain, record, found, change, refines } = memory;
+    let order = sizes[0];
     let frames = Memory::frames::<L>(slope, strain, members, B > 1);
     let mut sweep = Sweep::<U, L, M, W, B> { window, unknowns: PhantomData };
     let reserve = sweep.run(&frames, record);
-    back::substitute::<L, W, B>(order, record, found);
+    back::substitute::<L, W, B>(sizes, record, found);
     moments::recover::<L, W, B>(order, &frames, found, forces);
     if *refines {
         refine::misfit::<L, W, B>(order, &frames, found, forces, change);
-        back::forward::<L, W, B>(order, record, change);
-        back::substitute::<L, W, B>(order, record, change);
+        back::forward::<L, W, B>(sizes, record, change);
+        back::substitute::<L, W, B>(sizes, record, change);
         for (found, change) in found.iter_mut().zip(change.iter()) {
             (L::load(found) + L::load(change)).store(found);
         }

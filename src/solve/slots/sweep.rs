@@ -26,7 +26,7 @@ where
         let order = self.window.order();
         let lines = (order - 1) / B;
         self.open(&frames.level(0, lines));
-        let mut records = record.levels(order);
+        let mut records = record.levels([order, self.window.stride()]);
         for storey in 1..frames.storeys {
             if let Some(mut record) = records.next() {
                 self.replace(&frames.level(storey, lines), &mut record);
@@ -45,12 +45,12 @@ where
         for line in 0..=ground.bays() {
             let (column, rho, place) = (ground.column::<L>(line), ground.rho::<L>(line), 1 + B * line);
             storey = storey + column * (L::splat(1.0 / 6.0) + L::splat(0.5) * rho);
-            *self.window.at(0, place + B - 1) = column * (L::splat(0.5) + L::splat(0.5) * rho);
+            self.window.set(0, place + B - 1, column * (L::splat(0.5) + L::splat(0.5) * rho));
             self.add_joint(ground, line, place);
         }
-        *self.window.at(0, 0) = storey;
-        *self.window.diagonal(0) = storey;
-        *self.window.right(0) = ground.push();
+        self.window.set(0, 0, storey);
+        self.window.set_diagonal(0, storey);
+        self.window.set_right(0, ground.push());
     }
 
     /// Eliminates the level in the window; `next`, the one above, takes its slots.
@@ -104,13 +104,13 @@ where
             sum = sum + column;
             for unknown in 0..B {
                 let turns = unknown == B - 1;
-                *self.window.at(B * line + unknown, back) = if turns { column } else { L::splat(0.0) };
+                self.window.set(B * line + unknown, back, if turns { column } else { L::splat(0.0) });
             }
         }
         let own = two_thirds::<L, W>() * sum;
-        *self.window.at(back, back) = own;
-        *self.window.diagonal(back) = own;
-        *self.window.right(back) = level.push();
+        self.window.set(back, back, own);
+        self.window.set_diagonal(back, own);
+        self.window.set_right(back, level.push());
         L::splat(0.0).store(record.multiplier(0, back));
     }
 
@@ -134,23 +134,23 @@ where
         }
         for index in 0..G {
             let minus = -bonds[index];
+            let multipliers = &record.multipliers(first + index, 1)[..back];
             for row in 0..back {
-                let multiplier = L::load(record.multiplier(first + index, row));
-                *self.window.at(row, back + index) = minus * multiplier;
+                self.window.set(row, back + index, minus * L::load(&multipliers[row]));
             }
             for other in 0..G {
                 let multiplier = below.inverse[other][index] * bonds[index];
                 multiplier.store(record.multiplier(first + other, back + index));
                 if other <= index {
-                    *self.window.at(back + other, back + index) = -(bonds[other] * multiplier);
+                    self.window.set(back + other, back + index, -(bonds[other] * multiplier));
                 }
             }
-            *self.window.right(back + index) = minus * below.right[index];
+            self.window.set_right(back + index, minus * below.right[index]);
         }
         let storey = B * (level.bays() + 1 - group.line - group.count);
         for index in 0..group.count {
             let place = back + B * index;
-            self.add(storey, place + B - 1, bonds[B * index + B - 1]);
+            self.window.add(storey, place + B - 1, bonds[B * index + B - 1]);
             self.add_joint(level, group.line + index, place);
         }
     }
@@ -160,24 +160,18 @@ where
     fn add_joint(&mut self, level: &Level<W>, line: usize, place: usize) {
         let own = U::own::<L, W>(level, line);
         for row in 0..B {
-            *self.window.diagonal(place + row) = own[row][row];
+            self.window.set_diagonal(place + row, own[row][row]);
             for column in row..B {
-                self.add(place + row, place + column, own[row][column]);
+                self.window.add(place + row, place + column, own[row][column]);
             }
         }
         if line > 0 {
             let beam = U::beam::<L, W>(level, line - 1);
             for row in 0..B {
                 for column in 0..B {
-                    self.add(place - B + row, place + column, beam[row][column]);
+                    self.window.add(place - B + row, place + column, beam[row][column]);
                 }
             }
         }
-    }
-
-    #[inline(always)]
-    fn add(&mut self, row: usize, column: usize, term: L) {
-        let entry = self.window.at(row, column);
-        *entry = *entry + term;
     }
 }

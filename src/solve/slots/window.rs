@@ -1,7 +1,7 @@
 //! The window of unknowns that are being eliminated, and one step of elimination.
 
 use super::inverse::inverse;
-use super::record::{LevelRecord, WIDEST};
+use super::record::LevelRecord;
 use crate::lane::Lane;
 
 /// The unknowns that have been met and not yet eliminated, in the order of their elimination: the upper triangle of their
@@ -9,12 +9,16 @@ use crate::lane::Lane;
 pub(super) trait Window<L: Lane<W>, const W: usize> {
     /// The most unknowns the window holds.
     fn order(&self) -> usize;
-    /// A number of the upper triangle.
-    fn at(&mut self, row: usize, column: usize) -> &mut L;
-    /// A right-hand side.
-    fn right(&mut self, row: usize) -> &mut L;
-    /// A diagonal term before any elimination.
-    fn diagonal(&mut self, row: usize) -> &mut L;
+    /// Numbers from row to row of the record's multipliers.
+    fn stride(&self) -> usize;
+    /// Adds to a number of the upper triangle.
+    fn add(&mut self, row: usize, column: usize, term: L);
+    /// Replaces a number of the upper triangle.
+    fn set(&mut self, row: usize, column: usize, term: L);
+    /// Replaces a right-hand side.
+    fn set_right(&mut self, row: usize, value: L);
+    /// Replaces a diagonal term as it is before any elimination.
+    fn set_diagonal(&mut self, row: usize, term: L);
     /// What the pivots so far had to spare, see [`inverse`].
     fn reserve(&self) -> L;
 
@@ -62,18 +66,28 @@ impl<L: Lane<W>, const W: usize, const N: usize> Window<L, W> for Narrow<L, N> {
     }
 
     #[inline(always)]
-    fn at(&mut self, row: usize, column: usize) -> &mut L {
-        &mut self.matrix[row][column]
+    fn stride(&self) -> usize {
+        N
     }
 
     #[inline(always)]
-    fn right(&mut self, row: usize) -> &mut L {
-        &mut self.right[row]
+    fn add(&mut self, row: usize, column: usize, term: L) {
+        self.matrix[row][column] = self.matrix[row][column] + term;
     }
 
     #[inline(always)]
-    fn diagonal(&mut self, row: usize) -> &mut L {
-        &mut self.diagonal[row]
+    fn set(&mut self, row: usize, column: usize, term: L) {
+        self.matrix[row][column] = term;
+    }
+
+    #[inline(always)]
+    fn set_right(&mut self, row: usize, value: L) {
+        self.right[row] = value;
+    }
+
+    #[inline(always)]
+    fn set_diagonal(&mut self, row: usize, term: L) {
+        self.diagonal[row] = term;
     }
 
     #[inline(always)]
@@ -134,136 +148,5 @@ impl<L: Lane<W>, const W: usize, const N: usize> Window<L, W> for Narrow<L, N> {
             self.diagonal[row - G] = self.diagonal[row];
         }
         Eliminated { inverse, right }
-    }
-}
-
-/// A window of any order.
-pub(super) struct Wide<L> {
-    order: usize,
-    /// In rows of `order`.
-    matrix: Vec<L>,
-    right: Vec<L>,
-    diagonal: Vec<L>,
-    /// Copies of a step's front rows, in rows of `order`.
-    front: Vec<L>,
-    reserve: L,
-}
-
-impl<L> Wide<L> {
-    pub(super) fn new<const W: usize>(order: usize) -> Self
-    where
-        L: Lane<W>,
-    {
-        let numbers = |count: usize| vec![L::splat(0.0); count];
-        Self {
-            order,
-            matrix: numbers(order * order),
-            right: numbers(order),
-            diagonal: numbers(order),
-            front: numbers(order * WIDEST),
-            reserve: L::splat(f64::MAX),
-        }
-    }
-}
-
-impl<L: Lane<W>, const W: usize> Window<L, W> for Wide<L> {
-    #[inline(always)]
-    fn order(&self) -> usize {
-        self.order
-    }
-
-    #[inline(always)]
-    fn at(&mut self, row: usize, column: usize) -> &mut L {
-        &mut self.matrix[row * self.order + column]
-    }
-
-    #[inline(always)]
-    fn right(&mut self, row: usize) -> &mut L {
-        &mut self.right[row]
-    }
-
-    #[inline(always)]
-    fn diagonal(&mut self, row: usize) -> &mut L {
-        &mut self.diagonal[row]
-    }
-
-    #[inline(always)]
-    fn reserve(&self) -> L {
-        self.reserve
-    }
-
-    #[inline(always)]
-    fn eliminate<const G: usize>(
-        &mut self,
-        held: usize,
-        first: usize,
-        record: &mut LevelRecord<W>,
-    ) -> Eliminated<L, G> {
-        let (order, zero) = (self.order, L::splat(0.0));
-        let (mut block, mut diagonal, mut right) = ([[zero; G]; G], [zero; G], [zero; G]);
-        for row in 0..G {
-            diagonal[row] = self.diagonal[row];
-            for column in row..G {
-                block[row][column] = self.matrix[row * order + column];
-            }
-            let from = row * order..row * order + held;
-            self.front[from.clone()].copy_from_slice(&self.matrix[from]);
-        }
-        let inverse = inverse(&block, &diagonal, &mut self.reserve);
-        for row in 0..G {
-            right[row] = inverse[row][0] * self.right[0];
-            for index in 1..G {
-                right[row] = right[row] + inverse[row][index] * self.right[index];
-            }
-            let multipliers = record.keep_row(first + row, held - G, right[row], &inverse[row]);
-            for (column, multiplier) in multipliers.iter_mut().enumerate() {
-                let mut sum = inverse[row][0] * self.front[G + column];
-                for index in 1..G {
-                    sum = sum + inverse[row][index] * self.front[index * order + G + column];
-                }
-                sum.store(multiplier);
-            }
-        }
-        for row in G..held {
-            let mut factors = [zero; G];
-            let mut multipliers: [&[[f64; W]]; G] = [&[]; G];
-            for index in 0..G {
-                factors[index] = self.front[index * order + row];
-                multipliers[index] = &record.multipliers(first + index)[row - G..held - G];
-            }
-            let (above, own) = self.matrix.split_at_mut(row * order);
-            let target = &mut above[(row - G) * (order + 1)..][..held - row];
-            subtract(&factors, &multipliers, &own[row..held], target);
-            let mut sum = factors[0] * right[0];
-            for index in 1..G {
-                sum = sum + factors[index] * right[index];
-            }
-            self.right[row - G] = self.right[row] - sum;
-            self.diagonal[row - G] = self.diagonal[row];
-        }
-        Eliminated { inverse, right }
-    }
-}
-
-/// target <- source - the sum of factors times rows.
-#[inline(always)]
-fn subtract<L: Lane<W>, const W: usize, const G: usize>(
-    factors: &[L; G],
-    rows: &[&[[f64; W]]; G],
-    source: &[L],
-    target: &mut [L],
-) {
-    let length = target.len();
-    let source = &source[..length];
-    let mut even = *rows;
-    for row in &mut even {
-        *row = &row[..length];
-    }
-    for column in 0..length {
-        let mut sum = factors[0] * L::load(&even[0][column]);
-        for index in 1..G {
-            sum = sum + factors[index] * L::load(&even[index][column]);
-        }
-        target[column] = source[column] - sum;
     }
 }
