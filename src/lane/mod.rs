@@ -10,10 +10,12 @@
 mod avx2;
 mod form;
 mod plain;
+mod reciprocal;
 mod rows;
 
 pub use form::{Form, Task};
 pub use plain::Plain;
+pub use reciprocal::{invert, reciprocals};
 pub use rows::Rows;
 
 use std::ops::{Add, Div, Mul, Neg, Sub};
