@@ -11,7 +11,7 @@ use swaybound::exact::plain::{Analysis, Plain};
 use swaybound::exact::{slope_deflection, stiffness};
 use swaybound::frame::{Feet, Frame, FrameParts};
 use swaybound::lane::{Form, RowWidth, Rows};
-use swaybound::response::{Forces, Members, Response};
+use swaybound::response::{Forces, Members, Response, Work};
 use swaybound::solve::{Joint, Slots};
 
 const BOTH: [Analysis; 2] = [Analysis::SlopeDeflection, Analysis::Stiffness];
@@ -26,8 +26,8 @@ fn solve<const W: usize>(analysis: Analysis, form: Form, members: &Members<W>) -
 where
     Form: RowWidth<W>,
 {
-    let mut forces = Forces::for_members(members);
-    let stands = Plain::new(analysis, members.storeys, members.bays).respond(form, members, &mut forces);
+    let (mut work, mut forces) = (Work::for_members(members), Forces::for_members(members));
+    let stands = Plain::new(analysis, members.storeys, members.bays).respond(form, members, &mut work, &mut forces);
     (forces, stands)
 }
 

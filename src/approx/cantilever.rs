@@ -1,11 +1,9 @@
 //! The cantilever method.
 
-use super::{march, range_fit, sheet};
+use super::{march, range_fit, sheet, sums};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{
-    Caution, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet, axial_from_beam_shears,
-};
+use crate::response::{Caution, Fit, ForceRows, Gives, Info, MemberRows, Method, Response, WorkRows, Worksheet};
 
 /// The cantilever method: column axial stress grows with the distance from the centroid of the column areas.
 ///
@@ -43,17 +41,15 @@ impl Method for Cantilever {
         range_fit(frame, 35, 5.0, (!frame.has_areas()).then(|| Caution(text.into())))
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        let mut above = L::splat(0.0);
-        for storey in (0..members.storeys).rev() {
-            let whole = L::load(&members.shear[storey]) * L::load(&members.height[storey]);
-            let moment = above + whole * (L::splat(1.0) - march::hinge(members, storey));
-            axial_by_distance(members, forces, storey, moment);
-            beams_from_axial::<L, W>(members, forces, storey);
-            columns_from_beams::<L, W>(members, forces, storey);
-            above = above + whole;
-        }
-        axial_from_beam_shears::<L, W>(members, forces);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(
+        members: &MemberRows<W>,
+        _work: &mut WorkRows<W>,
+        forces: &mut ForceRows<W>,
+    ) {
+        axial_by_distance::<L, W>(members, forces);
+        beams_from_axial::<L, W>(members, forces);
+        columns_from_beams::<L, W>(members, forces);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -61,63 +57,74 @@ impl Method for Cantilever {
     }
 }
 
-/// N = -M A d / sum(A d^2) for the columns of a storey.
-fn axial_by_distance<L: Lane<W>, const W: usize>(
-    members: &Members<W>,
-    forces: &mut Forces<W>,
-    storey: usize,
-    moment: L,
-) {
-    let area = |line: usize| L::load(&members.area[members.column(storey, line)]);
-    let position = |line: usize| L::load(&members.position[line]);
-    let mut sums = [L::splat(0.0); 2];
-    for line in 0..members.lines() {
-        sums = [sums[0] + area(line), sums[1] + area(line) * position(line)];
-    }
-    let centroid = sums[1] / sums[0];
-    let mut second = L::splat(0.0);
-    for line in 0..members.lines() {
-        let distance = position(line) - centroid;
-        second = second + area(line) * distance * distance;
-    }
-    for line in 0..members.lines() {
-        let axial = -(moment * area(line) * (position(line) - centroid) / second);
-        axial.store(&mut forces.column_axial[members.column(storey, line)]);
+/// N = -M A d / sum(A d^2) for every column, from the roof down.
+#[inline(always)]
+fn axial_by_distance<L: Lane<W>, const W: usize>(members: &MemberRows<W>, forces: &mut ForceRows<W>) {
+    let position = &members.position[..members.lines()];
+    let mut above = L::splat(0.0);
+    for storey in (0..members.storeys).rev() {
+        let whole: L = sums::turning(members, storey);
+        let moment = above + whole * (L::splat(1.0) - march::hinge(members, storey));
+        above = above + whole;
+        let area = members.columns_of(members.area, storey);
+        let axial = members.columns_of_mut(forces.column_axial, storey);
+        let [centroid, second]: [L; 2] = sums::about_centroid(area, position);
+        let stress_per_distance = -moment / second;
+        for line in 0..members.lines() {
+            let distance = L::load(&position[line]) - centroid;
+            (stress_per_distance * distance * L::load(&area[line])).store(&mut axial[line]);
+        }
     }
 }
 
-/// Beam end moments of a floor from the axial forces below and above it, from the left.
-fn beams_from_axial<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mut Forces<W>, floor: usize) {
-    let mut shear = L::splat(0.0);
-    for bay in 0..members.bays {
-        shear = shear + L::load(&forces.column_axial[members.column(floor, bay)]);
-        if floor + 1 < members.storeys {
-            shear = shear - L::load(&forces.column_axial[members.column(floor + 1, bay)]);
+/// Beam end moments of every floor from the axial forces below and above it, from the left.
+#[inline(always)]
+fn beams_from_axial<L: Lane<W>, const W: usize>(members: &MemberRows<W>, forces: &mut ForceRows<W>) {
+    let width = &members.width[..members.bays];
+    let beams = members.by_floor_mut(forces.beam_left).zip(members.by_floor_mut(forces.beam_right));
+    let mut axial = members.by_storey(forces.column_axial);
+    let mut below = axial.next();
+    for (left, right) in beams {
+        let above = axial.next();
+        let mut shear = L::splat(0.0);
+        for bay in 0..members.bays {
+            if let Some(below) = below {
+                shear = shear + L::load(&below[bay]);
+            }
+            if let Some(above) = above {
+                shear = shear - L::load(&above[bay]);
+            }
+            let moment = shear * L::load(&width[bay]) * L::splat(0.5);
+            moment.store(&mut left[bay]);
+            moment.store(&mut right[bay]);
         }
-        let moment = shear * L::load(&members.width[bay]) * L::splat(0.5);
-        moment.store(&mut forces.beam_left[members.beam(floor, bay)]);
-        moment.store(&mut forces.beam_right[members.beam(floor, bay)]);
+        below = above;
     }
 }
 
-/// Column end moments of a storey from the beams of its top floor and the column above.
-fn columns_from_beams<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mut Forces<W>, storey: usize) {
-    let below: L = march::hinge(members, storey);
-    let above = L::splat(1.0) - below;
-    for line in 0..members.lines() {
-        let mut joint = L::splat(0.0);
-        if line > 0 {
-            joint = joint + L::load(&forces.beam_right[members.beam(storey, line - 1)]);
+/// Column end moments from the beams at the head and the column above, from the roof down.
+#[inline(always)]
+fn columns_from_beams<L: Lane<W>, const W: usize>(members: &MemberRows<W>, forces: &mut ForceRows<W>) {
+    let beams = members.by_floor(forces.beam_left).zip(members.by_floor(forces.beam_right));
+    let columns = members.by_storey_mut(forces.column_foot).zip(members.by_storey_mut(forces.column_head));
+    let mut above: Option<&[[f64; W]]> = None;
+    for (storey, ((left, right), (foot, head))) in beams.zip(columns).enumerate().rev() {
+        let below: L = march::hinge(members, storey);
+        let foot_to_head = below / (L::splat(1.0) - below);
+        for line in 0..members.lines() {
+            let mut joint = L::splat(0.0);
+            if line > 0 {
+                joint = joint + L::load(&right[line - 1]);
+            }
+            if line < members.bays {
+                joint = joint + L::load(&left[line]);
+            }
+            if let Some(above) = above {
+                joint = joint + L::load(&above[line]);
+            }
+            (-joint).store(&mut head[line]);
+            (-joint * foot_to_head).store(&mut foot[line]);
         }
-        if line < members.bays {
-            joint = joint + L::load(&forces.beam_left[members.beam(storey, line)]);
-        }
-        if storey + 1 < members.storeys {
-            joint = joint + L::load(&forces.column_foot[members.column(storey + 1, line)]);
-        }
-        let column = members.column(storey, line);
-        let head = -joint;
-        head.store(&mut forces.column_head[column]);
-        (head * below / above).store(&mut forces.column_foot[column]);
+        above = Some(foot);
     }
 }

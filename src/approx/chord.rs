@@ -1,9 +1,9 @@
 //! Drift from column axial strain: the frame bends as a cantilever whose chords are its columns.
 
-use super::sheet;
+use super::{sheet, sums};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Amount, Members, Step};
+use crate::response::{Amount, MemberRows, Members, Step};
 
 /// Adds the chord drift of every storey to the drifts in `drift`.
 ///
@@ -16,7 +16,8 @@ use crate::response::{Amount, Members, Step};
 ///
 /// # References
 /// B. Stafford Smith and A. Coull, Tall Building Structures, 1991 (from memory).
-pub(super) fn add<L: Lane<W>, const W: usize>(members: &Members<W>, drift: &mut [[f64; W]]) {
+#[inline(always)]
+pub(super) fn add<L: Lane<W>, const W: usize>(members: &MemberRows<W>, drift: &mut [[f64; W]]) {
     let mut walk = Walk::from_the_base(members);
     for (storey, drift) in drift.iter_mut().enumerate() {
         let rotation: L = walk.up(members, storey).mid_height;
@@ -40,19 +41,22 @@ struct Stage<L> {
 }
 
 impl<L> Walk<L> {
-    fn from_the_base<const W: usize>(members: &Members<W>) -> Self
+    #[inline(always)]
+    fn from_the_base<const W: usize>(members: &MemberRows<W>) -> Self
     where
         L: Lane<W>,
     {
-        let moment = (0..members.storeys).fold(L::splat(0.0), |sum, storey| {
-            sum + L::load(&members.shear[storey]) * L::load(&members.height[storey])
-        });
+        let mut moment = L::splat(0.0);
+        for storey in 0..members.storeys {
+            moment = moment + sums::turning(members, storey);
+        }
         Self { moment, rotation: L::splat(0.0) }
     }
 
     /// Goes up one storey. Between straight ends the mean moment is (foot + head) / 2 over the storey, (3 foot + head) / 4
     /// over its lower half.
-    fn up<const W: usize>(&mut self, members: &Members<W>, storey: usize) -> Stage<L>
+    #[inline(always)]
+    fn up<const W: usize>(&mut self, members: &MemberRows<W>, storey: usize) -> Stage<L>
     where
         L: Lane<W>,
     {
@@ -69,23 +73,17 @@ impl<L> Walk<L> {
 }
 
 /// E sum(A c^2) of a storey, N m2.
-fn bending_stiffness<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize) -> L {
-    let axial = |line: usize| L::load(&members.axial_stiffness[members.column(storey, line)]);
-    let position = |line: usize| L::load(&members.position[line]);
-    let mut sums = [L::splat(0.0); 2];
-    for line in 0..members.lines() {
-        sums = [sums[0] + axial(line), sums[1] + axial(line) * position(line)];
-    }
-    let centroid = sums[1] / sums[0];
-    (0..members.lines()).fold(L::splat(0.0), |sum, line| {
-        let distance = position(line) - centroid;
-        sum + axial(line) * distance * distance
-    })
+#[inline(always)]
+fn bending_stiffness<L: Lane<W>, const W: usize>(members: &MemberRows<W>, storey: usize) -> L {
+    let axial = members.columns_of(members.axial_stiffness, storey);
+    let [_, second] = sums::about_centroid(axial, members.position);
+    second
 }
 
 /// The chord part of a hand calculation.
 pub(super) fn steps(frame: &Frame) -> [Step; 2] {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let members = &frame_members.rows();
     let mut walk = Walk::<f64>::from_the_base(members);
     let stages: Vec<_> = (0..frame.storeys()).map(|storey| walk.up::<1>(members, storey)).collect();
     let area = |storey, line| frame.column(storey, line).area.unwrap_or(0.0);

@@ -3,10 +3,15 @@
 mod inflection;
 mod worksheet;
 
+use super::group::{self, Group};
 use super::{fit, march, sums};
 use crate::frame::{Frame, line_name};
-use crate::lane::Lane;
-use crate::response::{Caution, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::lane::{Lane, reciprocals};
+use crate::response::{
+    Caution, Fit, ForceRows, Gives, Info, MemberRows, Members, Method, Response, Work, WorkRows, Worksheet,
+};
+use inflection::Storey;
+use std::ops::Add;
 
 /// The lowest beam to column ratio K of the published tables (from memory).
 const LOWEST_RATIO: f64 = 0.1;
@@ -60,25 +65,27 @@ impl Method for DValue {
         fit::judge(refusals, [low_ratio(frame), fit::slender_drift(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>) {
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        prepare::<L, W>(members, work);
         for storey in 0..members.storeys {
-            let mut sum = L::splat(0.0);
-            for line in 0..members.lines() {
-                let stiffness: L = sway_stiffness(members, storey, line);
-                stiffness.store(&mut work.line[line]);
-                sum = sum + stiffness;
-            }
-            (L::load(&members.shear[storey]) / sum).store(&mut forces.drift[storey]);
-            let turning: L = sums::turning(members, storey);
-            for line in 0..members.lines() {
-                let part = turning * (L::load(&work.line[line]) / sum);
-                let below = inflection::parts::<L, W>(members, work, storey, line).sum();
-                (-(part * below)).store(&mut forces.column_foot[members.column(storey, line)]);
-                let above = L::splat(1.0) - below;
-                (-(part * above)).store(&mut forces.column_head[members.column(storey, line)]);
-            }
+            let columns = Columns::of(members, &work.joint, storey);
+            let height = L::load(&members.height[storey]);
+            let mut stiffnesses = Stiffnesses { columns, height, found: work.line, sum: L::splat(0.0) };
+            group::all(members.lines(), &mut stiffnesses);
+            let found = L::load(&members.shear[storey]) / stiffnesses.sum;
+            found.store(&mut forces.drift[storey]);
+            let mut moments = Moments {
+                columns,
+                stiffness: work.line,
+                inflection: Storey::of(members, work.storey[0], storey),
+                scale: -(found * height),
+                foot: members.columns_of_mut(forces.column_foot, storey),
+                head: members.columns_of_mut(forces.column_head, storey),
+            };
+            group::all(members.lines(), &mut moments);
         }
-        march::forces_from_beam_stiffness::<L, W>(members, forces);
+        march::forces_from_beam_stiffness::<L, W>(members, work, forces);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -86,41 +93,181 @@ impl Method for DValue {
     }
 }
 
-/// E I/L of the beams at the foot and at the head of a column; in the ground storey those at the head twice, so that
-/// their mean over E I/h is K throughout.
-fn beams_at_ends<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> [L; 2] {
-    [storey.saturating_sub(1), storey].map(|floor| sums::joint_beams(members, floor, line))
-}
-
-/// K of a column.
-fn ratio<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> L {
-    let [below, above] = beams_at_ends::<L, W>(members, storey, line);
-    (below + above) / (L::splat(2.0) * sums::column(members, storey, line))
-}
-
-/// a of a column.
-fn reduction<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> L {
-    let ratio: L = ratio(members, storey, line);
-    let [half, one, two] = [0.5, 1.0, 2.0].map(L::splat);
-    if storey > 0 {
-        return ratio / (two + ratio);
+/// Fills the joint sets of `work` with the sum of E I/L of the beams at every joint and one over it, and the first storey
+/// set with the right sides of the standard frame.
+#[inline(always)]
+fn prepare<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>) {
+    let [beams, per_beams, _] = &mut work.joint;
+    sums::joint_beams::<L, W>(members, beams);
+    // One by one, so that equal beams give equal numbers, and no correction for unequal ones.
+    for (beams, per_beams) in beams.iter().zip(per_beams.iter_mut()) {
+        (L::splat(1.0) / L::load(beams)).store(per_beams);
     }
-    let fixity = L::load(&members.foot_fixity);
-    fixity * ((half + ratio) / (two + ratio)) + (one - fixity) * (half * ratio / (one + two * ratio))
+    inflection::right_sides::<L, W>(members, work.storey[0]);
 }
 
-/// D of a column, N/m.
-fn sway_stiffness<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> L {
-    let height = L::load(&members.height[storey]);
-    let column: L = sums::column(members, storey, line);
-    reduction::<L, W>(members, storey, line) * L::splat(12.0) * column / (height * height)
+/// A column and the beams at its ends.
+#[derive(Clone, Copy)]
+struct Ends<L> {
+    /// E I/h of the column, k.
+    column: L,
+    /// Sum of E I/L of the beams at the foot and at the head; in the ground storey those at the head twice, so that their mean
+    /// over k is K throughout.
+    beams: [L; 2],
+    /// One over each.
+    per_beams: [L; 2],
+}
+
+impl<L: Copy + Add<Output = L>> Ends<L> {
+    /// The beams at both ends, B.
+    #[inline(always)]
+    fn both(&self) -> L {
+        self.beams[0] + self.beams[1]
+    }
+}
+
+/// The columns of a storey with the beams at their ends.
+#[derive(Clone, Copy)]
+struct Columns<'a, const W: usize> {
+    ground: bool,
+    /// Fixity of the feet.
+    fixity: [f64; W],
+    /// k of the columns.
+    column: &'a [[f64; W]],
+    /// Beams at foot and head, see [`Ends`].
+    beams: [&'a [[f64; W]]; 2],
+    /// One over each.
+    per_beams: [&'a [[f64; W]]; 2],
+}
+
+impl<'a, const W: usize> Columns<'a, W> {
+    /// The columns of `storey`, for which the sets of joints were prepared.
+    #[inline(always)]
+    fn of(members: &MemberRows<'a, W>, joints: &'a [&mut [[f64; W]]; 3], storey: usize) -> Self {
+        let [beams, per_beams, _] = joints;
+        let foot = storey.saturating_sub(1);
+        Self {
+            ground: storey == 0,
+            fixity: members.foot_fixity,
+            column: members.columns_of(members.column_stiffness, storey),
+            beams: [members.columns_of(beams, foot), members.columns_of(beams, storey)],
+            per_beams: [members.columns_of(per_beams, foot), members.columns_of(per_beams, storey)],
+        }
+    }
+
+    /// The columns on `N` lines from `first`.
+    #[inline(always)]
+    fn ends<L: Lane<W>, const N: usize>(&self, first: usize) -> [Ends<L>; N] {
+        let mut ends = [Ends { column: L::splat(0.0), beams: [L::splat(0.0); 2], per_beams: [L::splat(0.0); 2] }; N];
+        let [foot, head] = self.beams.map(|row| &row[first..][..N]);
+        let [per_foot, per_head] = self.per_beams.map(|row| &row[first..][..N]);
+        let column = &self.column[first..][..N];
+        for line in 0..N {
+            ends[line] = Ends {
+                column: L::load(&column[line]),
+                beams: [L::load(&foot[line]), L::load(&head[line])],
+                per_beams: [L::load(&per_foot[line]), L::load(&per_head[line])],
+            };
+        }
+        ends
+    }
+
+    /// K of a column.
+    #[inline(always)]
+    fn ratio<L: Lane<W>>(&self, line: usize) -> L {
+        let [ends]: [Ends<L>; 1] = self.ends(line);
+        ends.both() / (L::splat(2.0) * ends.column)
+    }
+
+    /// a of `N` columns; with B the beams at both ends K = B / (2 k), so that K / (2 + K) = B / (4 k + B).
+    #[inline(always)]
+    fn reductions<L: Lane<W>, const N: usize>(&self, first: usize) -> [L; N] {
+        let ends: [Ends<L>; N] = self.ends(first);
+        let mut found = [L::splat(0.0); N];
+        for line in 0..N {
+            found[line] = L::splat(4.0) * ends[line].column + ends[line].both();
+        }
+        found = reciprocals(found);
+        let fixity = L::load(&self.fixity);
+        for line in 0..N {
+            let (column, beams) = (ends[line].column, ends[line].both());
+            found[line] = if self.ground {
+                let (fixed, pinned) = ((column + beams) * found[line], L::splat(0.25) * beams / (column + beams));
+                fixity * fixed + (L::splat(1.0) - fixity) * pinned
+            } else {
+                beams * found[line]
+            };
+        }
+        found
+    }
+
+    /// D of `N` columns, N/m.
+    #[inline(always)]
+    fn sway_stiffnesses<L: Lane<W>, const N: usize>(&self, first: usize, height: L) -> [L; N] {
+        let mut found: [L; N] = self.reductions(first);
+        let column = &self.column[first..][..N];
+        let scale = L::splat(12.0) / (height * height);
+        for line in 0..N {
+            found[line] = found[line] * L::load(&column[line]) * scale;
+        }
+        found
+    }
+}
+
+/// Fills `found` with D of the columns of a storey, and adds them up.
+struct Stiffnesses<'a, L, const W: usize> {
+    columns: Columns<'a, W>,
+    height: L,
+    found: &'a mut [[f64; W]],
+    sum: L,
+}
+
+impl<L: Lane<W>, const W: usize> Group for Stiffnesses<'_, L, W> {
+    #[inline(always)]
+    fn take<const N: usize>(&mut self, first: usize) {
+        let found: [L; N] = self.columns.sway_stiffnesses(first, self.height);
+        for (own, row) in found.iter().zip(&mut self.found[first..][..N]) {
+            own.store(row);
+            self.sum = self.sum + *own;
+        }
+    }
+}
+
+/// Fills the end moments of the columns of a storey; column shear = D x drift.
+struct Moments<'a, L, const W: usize> {
+    columns: Columns<'a, W>,
+    stiffness: &'a [[f64; W]],
+    inflection: Storey<'a, L, W>,
+    /// -drift x height.
+    scale: L,
+    foot: &'a mut [[f64; W]],
+    head: &'a mut [[f64; W]],
+}
+
+impl<L: Lane<W>, const W: usize> Group for Moments<'_, L, W> {
+    #[inline(always)]
+    fn take<const N: usize>(&mut self, first: usize) {
+        let ends: [Ends<L>; N] = self.columns.ends(first);
+        let parts = self.inflection.parts(&ends);
+        let (foot, head) = (&mut self.foot[first..][..N], &mut self.head[first..][..N]);
+        for line in 0..N {
+            let whole = L::load(&self.stiffness[first + line]) * self.scale;
+            let below = parts[line].sum();
+            (whole * below).store(&mut foot[line]);
+            (whole * (L::splat(1.0) - below)).store(&mut head[line]);
+        }
+    }
 }
 
 /// Columns outside the published tables.
 fn low_ratio(frame: &Frame) -> Option<Caution> {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let work = &mut scratch.rows();
+    prepare::<f64, 1>(members, work);
+    let columns = &|storey| Columns::of(members, &work.joint, storey);
     let places = (0..frame.storeys()).flat_map(|storey| (0..frame.lines()).map(move |line| (storey, line)));
-    let ratios = places.map(|(storey, line)| (ratio::<f64, 1>(members, storey, line), storey, line));
+    let ratios = places.map(|(storey, line)| (columns(storey).ratio::<f64>(line), storey, line));
     let (lowest, storey, line) = ratios.min_by(|a, b| a.0.total_cmp(&b.0))?;
     let text = format!(
         "beam to column ratio K is {lowest:.2} at column {}, storey {}; the published tables begin at {LOWEST_RATIO}",

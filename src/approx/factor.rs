@@ -2,8 +2,11 @@
 
 use super::{fit, march, sheet, sums};
 use crate::frame::{Feet, Frame};
-use crate::lane::Lane;
-use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::lane::{Lane, invert};
+use crate::response::{
+    Amount, Caution, Fit, ForceRows, Gives, Info, MemberRows, Members, Method, Response, Step, Work, WorkRows,
+    Worksheet, axial_from_beam_shears,
+};
 
 /// The factor method: slope-deflection with the rotations estimated joint by joint.
 ///
@@ -50,30 +53,15 @@ impl Method for Factor {
         fit::judge([fit::springs(frame), fit::loose_joint(frame)], [pinned.then(|| Caution(text.into()))])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        for storey in 0..members.storeys {
-            let mut sum = L::splat(0.0);
-            for line in 0..members.lines() {
-                let [foot, head] = column_factors::<L, W>(members, storey, line);
-                foot.store(&mut forces.column_foot[members.column(storey, line)]);
-                head.store(&mut forces.column_head[members.column(storey, line)]);
-                sum = sum + foot + head;
-            }
-            let scale = -(sums::turning::<L, W>(members, storey) / sum);
-            for column in members.column(storey, 0)..members.column(storey + 1, 0) {
-                for end in [&mut forces.column_foot[column], &mut forces.column_head[column]] {
-                    (L::load(end) * scale).store(end);
-                }
-            }
-        }
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        joints::<L, W>(members, work);
+        let [g, c, _] = &work.joint;
+        columns::<L, W>(members, c, forces);
         for floor in 0..members.storeys {
-            for bay in 0..members.bays {
-                let [left, right] = beam_factors::<L, W>(members, floor, bay);
-                left.store(&mut forces.beam_left[members.beam(floor, bay)]);
-                right.store(&mut forces.beam_right[members.beam(floor, bay)]);
-            }
+            march::beams_from_weights::<L, W>(members, floor, &BeamFactors::of(members, g, floor), forces);
         }
-        march::forces_from_weights::<L, W>(members, forces);
+        axial_from_beam_shears::<L, W>(members, work, forces);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -81,60 +69,145 @@ impl Method for Factor {
     }
 }
 
-/// (g, c) of the joint of `floor` on `line`.
-fn joint<L: Lane<W>, const W: usize>(members: &Members<W>, floor: usize, line: usize) -> (L, L) {
-    let (columns, beams): (L, L) = (sums::joint_columns(members, floor, line), sums::joint_beams(members, floor, line));
-    let all = columns + beams;
-    (columns / all, beams / all)
-}
-
-/// c at the foot and at the head of a column.
-fn column_ends<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> [L; 2] {
-    let (_, head) = joint::<L, W>(members, storey, line);
-    if storey > 0 {
-        return [joint::<L, W>(members, storey - 1, line).1, head];
+/// Fills the first two joint sets of `work` with g and c.
+#[inline(always)]
+fn joints<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>) {
+    let [g, c, per_all] = &mut work.joint;
+    sums::joint_columns::<L, W>(members, g);
+    sums::joint_beams::<L, W>(members, c);
+    for floor in 0..members.storeys {
+        let (g, c) = (members.columns_of_mut(g, floor), members.columns_of_mut(c, floor));
+        let per_all = members.columns_of_mut(per_all, floor);
+        for line in 0..members.lines() {
+            (L::load(&g[line]) + L::load(&c[line])).store(&mut per_all[line]);
+        }
+        invert::<L, W>(per_all);
+        for line in 0..members.lines() {
+            let per_all = L::load(&per_all[line]);
+            (L::load(&g[line]) * per_all).store(&mut g[line]);
+            (L::load(&c[line]) * per_all).store(&mut c[line]);
+        }
     }
-    let fixity = L::load(&members.foot_fixity);
-    [fixity - (L::splat(1.0) - fixity) * head * L::splat(0.5), head]
 }
 
-/// Column factors at foot and head.
-fn column_factors<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize, line: usize) -> [L; 2] {
-    with_half_of_other(column_ends(members, storey, line), sums::column(members, storey, line))
+/// Fills the column end moments: factor x A.
+#[inline(always)]
+fn columns<L: Lane<W>, const W: usize>(members: &MemberRows<W>, c: &[[f64; W]], forces: &mut ForceRows<W>) {
+    let moments = members.by_storey_mut(forces.column_foot).zip(members.by_storey_mut(forces.column_head));
+    for (storey, (foot, head)) in moments.enumerate() {
+        let factors = ColumnFactors::of(members, c, storey);
+        let mut sum = L::splat(0.0);
+        for line in 0..members.lines() {
+            let [at_foot, at_head]: [L; 2] = factors.at(line);
+            sum = sum + at_foot + at_head;
+        }
+        let scale = -(sums::turning::<L, W>(members, storey) / sum);
+        for line in 0..members.lines() {
+            let [at_foot, at_head]: [L; 2] = factors.at(line);
+            (at_foot * scale).store(&mut foot[line]);
+            (at_head * scale).store(&mut head[line]);
+        }
+    }
 }
 
-/// Beam factors at the left and right end.
-fn beam_factors<L: Lane<W>, const W: usize>(members: &Members<W>, floor: usize, bay: usize) -> [L; 2] {
-    let ends = [bay, bay + 1].map(|line| joint::<L, W>(members, floor, line).0);
-    with_half_of_other(ends, sums::beam(members, floor, bay))
+/// The column factors of a storey.
+struct ColumnFactors<'a, const W: usize> {
+    /// c of the joints at the feet; none in the ground storey.
+    foot: Option<&'a [[f64; W]]>,
+    /// c of the joints at the heads.
+    head: &'a [[f64; W]],
+    /// k.
+    stiffness: &'a [[f64; W]],
+    /// Fixity of the ground storey's feet.
+    fixity: [f64; W],
 }
 
-fn with_half_of_other<L: Lane<W>, const W: usize>([near, far]: [L; 2], stiffness: L) -> [L; 2] {
-    let half = L::splat(0.5);
-    [(near + far * half) * stiffness, (far + near * half) * stiffness]
+impl<'a, const W: usize> ColumnFactors<'a, W> {
+    #[inline(always)]
+    fn of(members: &MemberRows<'a, W>, c: &'a [[f64; W]], storey: usize) -> Self {
+        Self {
+            foot: if storey > 0 { Some(members.columns_of(c, storey - 1)) } else { None },
+            head: members.columns_of(c, storey),
+            stiffness: members.columns_of(members.column_stiffness, storey),
+            fixity: members.foot_fixity,
+        }
+    }
+
+    /// Column factors at foot and head.
+    #[inline(always)]
+    fn at<L: Lane<W>>(&self, line: usize) -> [L; 2] {
+        let head = L::load(&self.head[line]);
+        let foot = if let Some(foot) = self.foot {
+            L::load(&foot[line])
+        } else {
+            let fixity = L::load(&self.fixity);
+            fixity - (L::splat(1.0) - fixity) * head * L::splat(0.5)
+        };
+        let stiffness = L::load(&self.stiffness[line]);
+        [with_half_of_other(foot, head) * stiffness, with_half_of_other(head, foot) * stiffness]
+    }
+}
+
+/// The beam factors of a floor.
+struct BeamFactors<'a, const W: usize> {
+    /// g of the joints.
+    joints: &'a [[f64; W]],
+    /// k.
+    stiffness: &'a [[f64; W]],
+}
+
+impl<'a, const W: usize> BeamFactors<'a, W> {
+    #[inline(always)]
+    fn of(members: &MemberRows<'a, W>, g: &'a [[f64; W]], floor: usize) -> Self {
+        let stiffness = members.beams_of(members.beam_stiffness, floor);
+        Self { joints: members.columns_of(g, floor), stiffness }
+    }
+
+    /// Beam factor of the end on line `near`.
+    #[inline(always)]
+    fn end<L: Lane<W>>(&self, bay: usize, near: usize, far: usize) -> L {
+        with_half_of_other(L::load(&self.joints[near]), L::load(&self.joints[far])) * L::load(&self.stiffness[bay])
+    }
+}
+
+impl<L: Lane<W>, const W: usize> march::Weights<L> for BeamFactors<'_, W> {
+    #[inline(always)]
+    fn left(&self, bay: usize) -> L {
+        self.end(bay, bay, bay + 1)
+    }
+    #[inline(always)]
+    fn right(&self, bay: usize) -> L {
+        self.end(bay, bay + 1, bay)
+    }
+}
+
+#[inline(always)]
+fn with_half_of_other<L: Lane<W>, const W: usize>(near: L, far: L) -> L {
+    near + far * L::splat(0.5)
 }
 
 fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let work = &mut scratch.rows();
     let (amount, unit) = sheet::stiffness(frame);
-    let g = |floor, line| joint::<f64, 1>(members, floor, line).0;
-    let column = |end: usize| move |storey, line| column_factors::<f64, 1>(members, storey, line)[end] / unit;
-    let beam = |end: usize| move |floor, bay| beam_factors::<f64, 1>(members, floor, bay)[end] / unit;
+    joints::<f64, 1>(members, work);
+    let [g_of, c_of, _] = &work.joint;
+    let g = |floor, line| g_of[members.column(floor, line)][0];
+    let column = |end: usize| move |storey, line| ColumnFactors::of(members, c_of, storey).at::<f64>(line)[end] / unit;
+    let beam = |end: usize| {
+        move |floor, bay| {
+            let (near, far) = (bay + end, bay + 1 - end);
+            BeamFactors::of(members, g_of, floor).end::<f64>(bay, near, far) / unit
+        }
+    };
     let sum = |storey| (0..frame.lines()).map(|line| column(0)(storey, line) + column(1)(storey, line)).sum::<f64>();
     let turning = |storey: usize| frame.storey_shear(storey) * frame.storey_height(storey);
-    let pinned = *frame.feet() == Feet::Pinned;
-    let foot = if pinned { "at a pinned foot −(c at the head) / 2" } else { "at a fixed foot 1" };
     let steps = vec![
         sheet::storey_shears(frame),
         sheet::column_stiffnesses(frame),
         sheet::beam_stiffnesses(frame),
-        sheet::by_joint(
-            frame,
-            "Joint factors g",
-            &format!("g = sum of column k at the joint / sum of all k at the joint. c = 1 − g; {foot}."),
-            Amount::Ratio,
-            &g,
-        ),
+        joint_factors(frame, &g),
         sheet::by_line_ends(
             frame,
             "Column factors",
@@ -168,4 +241,11 @@ fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
         ),
     ];
     Worksheet { steps: steps.into_iter().chain(sheet::shears_and_axial_forces(frame, response)).collect() }
+}
+
+fn joint_factors(frame: &Frame, g: &dyn Fn(usize, usize) -> f64) -> Step {
+    let pinned = *frame.feet() == Feet::Pinned;
+    let foot = if pinned { "at a pinned foot −(c at the head) / 2" } else { "at a fixed foot 1" };
+    let rule = format!("g = sum of column k at the joint / sum of all k at the joint. c = 1 − g; {foot}.");
+    sheet::by_joint(frame, "Joint factors g", &rule, Amount::Ratio, g)
 }

@@ -6,6 +6,7 @@ mod chord;
 pub mod d_value;
 pub mod factor;
 mod fit;
+mod group;
 mod march;
 pub mod portal;
 pub mod portal_tributary;

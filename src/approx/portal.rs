@@ -3,7 +3,7 @@
 use super::{march, range_fit, sheet};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Amount, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::response::{Amount, Fit, ForceRows, Gives, Info, MemberRows, Method, Response, WorkRows, Worksheet};
 
 /// The portal method: interior columns take twice the shear of the end columns.
 ///
@@ -39,7 +39,8 @@ impl Method for Portal {
         range_fit(frame, 25, 4.0, [])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>) {
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
         let bays = members.bays as f64;
         for (line, share) in work.line.iter_mut().enumerate() {
             let end = line == 0 || line == members.bays;

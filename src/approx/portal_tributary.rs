@@ -3,7 +3,7 @@
 use super::{march, range_fit, sheet};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Amount, Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::response::{Amount, Fit, ForceRows, Gives, Info, MemberRows, Method, Response, WorkRows, Worksheet};
 
 /// The portal method in its variant for unequal bays: each column takes shear in proportion to its tributary width.
 ///
@@ -37,13 +37,14 @@ impl Method for PortalTributary {
         range_fit(frame, 25, 4.0, [])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>) {
-        let total = L::load(&members.position[members.bays]);
-        let half = L::splat(0.5);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        let position = members.position;
+        let share_per_width = L::splat(0.5) / L::load(&position[members.bays]);
         for (line, share) in work.line.iter_mut().enumerate() {
-            let left = L::load(&members.position[line.saturating_sub(1)]);
-            let right = L::load(&members.position[(line + 1).min(members.bays)]);
-            ((right - left) * half / total).store(share);
+            let left = L::load(&position[line.saturating_sub(1)]);
+            let right = L::load(&position[(line + 1).min(members.bays)]);
+            ((right - left) * share_per_width).store(share);
         }
         march::forces_from_shares::<L, W>(members, work, forces);
     }

@@ -3,7 +3,9 @@
 use super::{fit, sheet, sums};
 use crate::frame::{Feet, Frame};
 use crate::lane::Lane;
-use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method, Response, Step, Work, Worksheet};
+use crate::response::{
+    Amount, Caution, Fit, ForceRows, Gives, Info, MemberRows, Members, Method, Response, Step, WorkRows, Worksheet,
+};
 
 /// Beam over column stiffness under which the first-storey formula for fixed feet is markedly short.
 pub(super) const FLEXIBLE: f64 = 0.5;
@@ -46,9 +48,14 @@ impl Method for Racking {
         fit::judge(refusals(frame), [doubts(frame), fit::slender_drift(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        for storey in 0..members.storeys {
-            drift::<L, W>(members, storey).store(&mut forces.drift[storey]);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(
+        members: &MemberRows<W>,
+        _work: &mut WorkRows<W>,
+        forces: &mut ForceRows<W>,
+    ) {
+        for (storey, own) in forces.drift.iter_mut().enumerate() {
+            drift::<L, W>(members, storey).store(own);
         }
     }
 
@@ -75,30 +82,32 @@ pub(super) fn doubts(frame: &Frame) -> Option<Caution> {
 
 /// 2 G/C of the lowest storey: 1 in one bay of equal stiffness, where C is twice that of a column and G that of the beam.
 pub(super) fn beams_to_columns(frame: &Frame) -> f64 {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let members = &frame_members.rows();
     let (columns, beams): (f64, f64) = (sums::storey_columns(members, 0), sums::floor_beams(members, 0));
     2.0 * beams / columns
 }
 
 /// Racking drift of a storey.
-pub(super) fn drift<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize) -> L {
+#[inline(always)]
+pub(super) fn drift<L: Lane<W>, const W: usize>(members: &MemberRows<W>, storey: usize) -> L {
     let height = L::load(&members.height[storey]);
     let (columns, beams): (L, L) = (sums::storey_columns(members, storey), sums::floor_beams(members, storey));
-    let number = L::splat;
     let flexibility = if storey > 0 {
-        number(1.0) / columns + number(1.0) / beams
+        L::splat(1.0) / columns + L::splat(1.0) / beams
     } else {
         let fixity = L::load(&members.foot_fixity);
-        let fixed = (number(2.0 / 3.0) + beams / columns) / (beams + columns / number(6.0));
-        let pinned = number(1.5) / beams + number(4.0) / columns;
-        fixity * fixed + (number(1.0) - fixity) * pinned
+        let fixed = (L::splat(2.0 / 3.0) + beams / columns) / (beams + columns * L::splat(1.0 / 6.0));
+        let pinned = L::splat(1.5) / beams + L::splat(4.0) / columns;
+        fixity * fixed + (L::splat(1.0) - fixity) * pinned
     };
-    L::load(&members.shear[storey]) * height * height / number(12.0) * flexibility
+    L::load(&members.shear[storey]) * height * height * L::splat(1.0 / 12.0) * flexibility
 }
 
 /// The racking part of a hand calculation.
 pub(super) fn steps(frame: &Frame) -> [Step; 5] {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let members = &frame_members.rows();
     let first = match frame.feet() {
         Feet::Pinned => "(V h² / 12)(3 / (2 G) + 4 / C)",
         _ => "(V h² / 12)(2 / (3 G) + 1 / C) / (1 + C / (6 G))",

@@ -3,7 +3,7 @@
 use super::{chord, fit, racking, sheet};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::response::{Fit, ForceRows, Gives, Info, MemberRows, Method, Response, WorkRows, Worksheet};
 
 /// The racking formula with drift from column axial strain: a bare frame is both in series.
 ///
@@ -42,11 +42,16 @@ impl Method for RackingChord {
         fit::judge(racking::refusals(frame).into_iter().chain([fit::no_areas(frame)]), [racking::doubts(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        for storey in 0..members.storeys {
-            racking::drift::<L, W>(members, storey).store(&mut forces.drift[storey]);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(
+        members: &MemberRows<W>,
+        _work: &mut WorkRows<W>,
+        forces: &mut ForceRows<W>,
+    ) {
+        for (storey, own) in forces.drift.iter_mut().enumerate() {
+            racking::drift::<L, W>(members, storey).store(own);
         }
-        chord::add::<L, W>(members, &mut forces.drift);
+        chord::add::<L, W>(members, forces.drift);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {

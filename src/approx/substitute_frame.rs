@@ -1,10 +1,12 @@
 //! The substitute frame.
 
-use super::chain::{self, Chain};
+use super::chain::Chain;
 use super::{fit, march, sheet, sums};
 use crate::frame::{Feet, Frame};
 use crate::lane::Lane;
-use crate::response::{Amount, Fit, Forces, Gives, Info, Members, Method, Response, Step, Work, Worksheet};
+use crate::response::{
+    Amount, Fit, ForceRows, Gives, Info, MemberRows, Members, Method, Response, Step, Work, WorkRows, Worksheet,
+};
 
 /// The substitute frame: all columns of a storey in one, all beams of a floor in one, joints of a floor turning alike.
 ///
@@ -47,25 +49,30 @@ impl Method for SubstituteFrame {
         fit::judge([fit::loose_joint(frame)], [fit::slender_drift(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>) {
-        solve::<L, W>(members, work);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        let chain = solve::<L, W>(members, work);
         let half = L::splat(0.5);
         for storey in 0..members.storeys {
-            let column: L = sums::storey_columns(members, storey);
             let turning: L = sums::turning(members, storey);
-            let difference = chain::difference(members, &work.storey[0], storey, column, turning);
-            let (foot, head) = (turning * half + difference, turning * half - difference);
+            let difference: L = chain.difference(members, storey);
+            let per_column = L::splat(1.0) / L::load(&chain.column[storey]);
+            let at_foot = -((turning * half + difference) * per_column);
+            let at_head = -((turning * half - difference) * per_column);
+            let stiffness = members.columns_of(members.column_stiffness, storey);
+            let foot = members.columns_of_mut(forces.column_foot, storey);
+            let head = members.columns_of_mut(forces.column_head, storey);
             for line in 0..members.lines() {
-                let share = sums::column::<L, W>(members, storey, line) / column;
-                (-(foot * share)).store(&mut forces.column_foot[members.column(storey, line)]);
-                (-(head * share)).store(&mut forces.column_head[members.column(storey, line)]);
+                let own = L::load(&stiffness[line]);
+                (at_foot * own).store(&mut foot[line]);
+                (at_head * own).store(&mut head[line]);
             }
             // theta_head - (theta_head - theta_foot) / 2 is the mean rotation, whatever the feet.
-            let lean =
-                L::load(&work.storey[0][storey]) - half * difference / column + turning / (L::splat(12.0) * column);
-            (lean * L::load(&members.height[storey])).store(&mut forces.drift[storey]);
+            let bent = (turning * L::splat(1.0 / 12.0) - half * difference) * per_column;
+            ((L::load(&chain.turns[storey]) + bent) * L::load(&members.height[storey]))
+                .store(&mut forces.drift[storey]);
         }
-        march::forces_from_beam_stiffness::<L, W>(members, forces);
+        march::forces_from_beam_stiffness::<L, W>(members, work, forces);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -73,14 +80,16 @@ impl Method for SubstituteFrame {
     }
 }
 
-/// Rotations of the floors into the first storey set of `work`.
-fn solve<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>) {
-    let frame = Chain {
-        column: |storey| sums::storey_columns::<L, W>(members, storey),
-        spring: |floor| L::splat(12.0) * sums::floor_beams::<L, W>(members, floor),
-        turning: |storey| sums::turning::<L, W>(members, storey),
-    };
-    chain::solve(members, &mut work.storey, &frame);
+/// The chain of the frame, solved.
+#[inline(always)]
+fn solve<'a, L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &'a mut WorkRows<'_, W>) -> Chain<'a, W> {
+    let mut chain = Chain::in_sets(&mut work.storey);
+    for storey in 0..members.storeys {
+        sums::storey_columns::<L, W>(members, storey).store(&mut chain.column[storey]);
+        (L::splat(12.0) * sums::floor_beams::<L, W>(members, storey)).store(&mut chain.spring[storey]);
+    }
+    chain.solve::<L>(members);
+    chain
 }
 
 fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -113,16 +122,14 @@ fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
 
 /// The equations of the chain and their solution.
 fn rotations(frame: &Frame) -> Step {
-    let members = &Members::of(frame);
-    let mut work = Work::for_members(members);
-    solve::<f64, 1>(members, &mut work);
-    let turns = &work.storey[0];
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let work = &mut scratch.rows();
+    let chain = solve::<f64, 1>(members, work);
     let (amount, unit) = sheet::stiffness(frame);
-    let columns = |storey: usize| sums::storey_columns::<f64, 1>(members, storey);
+    let columns = |storey: usize| chain.column[storey][0];
     let turning = |storey: usize| sums::turning::<f64, 1>(members, storey);
-    let below = |storey: usize| {
-        turns[storey][0] - chain::difference(members, turns, storey, columns(storey), turning(storey)) / columns(storey)
-    };
+    let below = |storey: usize| chain.turns[storey][0] - chain.difference::<f64>(members, storey) / columns(storey);
     let pinned = *frame.feet() == Feet::Pinned;
     let right = |storey: usize| {
         let above = if storey + 1 < frame.storeys() { turning(storey + 1) } else { 0.0 };
@@ -142,9 +149,9 @@ fn rotations(frame: &Frame) -> Step {
     );
     let columns_shown: [sheet::StoreyColumn; 5] = [
         ("C", amount, &|storey| columns(storey) / unit),
-        ("12 G", amount, &|floor| 12.0 * sums::floor_beams::<f64, 1>(members, floor) / unit),
+        ("12 G", amount, &|floor| chain.spring[floor][0] / unit),
         ("right side", Amount::Moment, &right),
-        ("θ", sheet::per_stiffness(frame), &|floor| turns[floor][0] * unit),
+        ("θ", sheet::per_stiffness(frame), &|floor| chain.turns[floor][0] * unit),
         ("θ below", sheet::per_stiffness(frame), &|storey| below(storey) * unit),
     ];
     sheet::by_storey(frame, "Rotations θ of the floors, each on top of its storey", &rule, &columns_shown)

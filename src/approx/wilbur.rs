@@ -3,7 +3,10 @@
 use super::{fit, racking, sheet, sums};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Amount, Caution, Fit, Forces, Gives, Info, Members, Method, Response, Step, Work, Worksheet};
+use crate::response::{
+    Amount, Caution, Fit, ForceRows, Gives, Info, MemberRows, Members, Method, Response, Step, Work, WorkRows,
+    Worksheet,
+};
 
 /// Storey drift by Wilbur's formulas for the stiffness of a storey.
 ///
@@ -46,10 +49,9 @@ impl Method for Wilbur {
         fit::judge(refusals(frame), [fit::slender_drift(frame), doubts(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        for storey in 0..members.storeys {
-            drift::<L, W>(members, storey).store(&mut forces.drift[storey]);
-        }
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        drifts::<L, W>(members, work, forces.drift);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
@@ -74,34 +76,58 @@ pub(super) fn refusals(frame: &Frame) -> [Option<Caution>; 3] {
     [fit::relative_sizes(frame), fit::not_fixed(frame), fit::loose_floor(frame)]
 }
 
-/// Drift of a storey.
-pub(super) fn drift<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize) -> L {
-    L::load(&members.shear[storey]) / stiffness::<L, W>(members, storey)
-}
-
-/// R of a storey, N/m.
-fn stiffness<L: Lane<W>, const W: usize>(members: &Members<W>, storey: usize) -> L {
-    let height = |storey: usize| L::load(&members.height[storey]);
-    let own = height(storey);
-    let mut sum = L::splat(4.0) * own / sums::storey_columns(members, storey);
-    let above = if storey + 1 < members.storeys { height(storey + 1) } else { L::splat(0.0) };
-    sum = sum + (own + above) / restraint::<L, W>(members, storey);
-    if storey > 0 {
-        let times = if storey + 1 < members.storeys { 1.0 } else { 2.0 };
-        sum = sum + (L::splat(times) * height(storey - 1) + own) / restraint::<L, W>(members, storey - 1);
+/// Fills the drifts; the first two storey sets of `work` hold 1/C and 1/G'.
+#[inline(always)]
+pub(super) fn drifts<L: Lane<W>, const W: usize>(
+    members: &MemberRows<W>,
+    work: &mut WorkRows<W>,
+    drift: &mut [[f64; W]],
+) {
+    let [per_columns, per_restraint, ..] = &mut work.storey;
+    for storey in 0..members.storeys {
+        (L::splat(1.0) / sums::storey_columns::<L, W>(members, storey)).store(&mut per_columns[storey]);
+        (L::splat(1.0) / restraint::<L, W>(members, storey)).store(&mut per_restraint[storey]);
     }
-    L::splat(48.0) / (own * sum)
+    for (storey, drift) in drift.iter_mut().enumerate() {
+        let flexibility: L = flexibility(members, per_columns, per_restraint, storey);
+        (L::load(&members.shear[storey]) * flexibility).store(drift);
+    }
 }
 
-/// G of a floor; at the first floor the fixed columns below help by C/12.
-fn restraint<L: Lane<W>, const W: usize>(members: &Members<W>, floor: usize) -> L {
+/// 1/R of a storey, m/N.
+#[inline(always)]
+fn flexibility<L: Lane<W>, const W: usize>(
+    members: &MemberRows<W>,
+    per_columns: &[[f64; W]],
+    per_restraint: &[[f64; W]],
+    storey: usize,
+) -> L {
+    let height = members.height;
+    let own = L::load(&height[storey]);
+    let top = storey + 1 == members.storeys;
+    let above = if top { L::splat(0.0) } else { L::load(&height[storey + 1]) };
+    let mut sum = L::splat(4.0) * own * L::load(&per_columns[storey]);
+    sum = sum + (own + above) * L::load(&per_restraint[storey]);
+    if storey > 0 {
+        let times = if top { L::splat(2.0) } else { L::splat(1.0) };
+        sum = sum + (times * L::load(&height[storey - 1]) + own) * L::load(&per_restraint[storey - 1]);
+    }
+    own * sum * L::splat(1.0 / 48.0)
+}
+
+/// G' of a floor: G; at the first floor the fixed columns below help by C/12.
+#[inline(always)]
+fn restraint<L: Lane<W>, const W: usize>(members: &MemberRows<W>, floor: usize) -> L {
     let beams: L = sums::floor_beams(members, floor);
-    if floor > 0 { beams } else { beams + sums::storey_columns::<L, W>(members, 0) / L::splat(12.0) }
+    if floor > 0 { beams } else { beams + sums::storey_columns::<L, W>(members, 0) * L::splat(1.0 / 12.0) }
 }
 
 /// The steps that give the drifts of these formulas.
 pub(super) fn steps(frame: &Frame) -> [Step; 5] {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let (work, mut drift) = (&mut scratch.rows(), vec![[0.0]; frame.storeys()]);
+    drifts::<f64, 1>(members, work, &mut drift);
     [
         sheet::storey_shears(frame),
         sheet::column_stiffnesses(frame),
@@ -115,8 +141,8 @@ pub(super) fn steps(frame: &Frame) -> [Step; 5] {
              above = 0.",
             &[
                 ("G'", Amount::Stiffness, &|floor| restraint::<f64, 1>(members, floor)),
-                ("R", Amount::StoreyStiffness, &|storey| stiffness::<f64, 1>(members, storey)),
-                ("V / R", Amount::Movement, &|storey| drift::<f64, 1>(members, storey)),
+                ("R", Amount::StoreyStiffness, &|storey| frame.storey_shear(storey) / drift[storey][0]),
+                ("V / R", Amount::Movement, &|storey| drift[storey][0]),
             ],
         ),
     ]

@@ -3,7 +3,7 @@
 use super::{chord, fit, sheet, wilbur};
 use crate::frame::Frame;
 use crate::lane::Lane;
-use crate::response::{Fit, Forces, Gives, Info, Members, Method, Response, Work, Worksheet};
+use crate::response::{Fit, ForceRows, Gives, Info, MemberRows, Method, Response, WorkRows, Worksheet};
 
 /// Wilbur's storey stiffnesses with drift from column axial strain: a bare frame is both in series.
 ///
@@ -42,11 +42,10 @@ impl Method for WilburChord {
         fit::judge(wilbur::refusals(frame).into_iter().chain([fit::no_areas(frame)]), [wilbur::doubts(frame)])
     }
 
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, _work: &mut Work<W>, forces: &mut Forces<W>) {
-        for storey in 0..members.storeys {
-            wilbur::drift::<L, W>(members, storey).store(&mut forces.drift[storey]);
-        }
-        chord::add::<L, W>(members, &mut forces.drift);
+    #[inline(always)]
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>) {
+        wilbur::drifts::<L, W>(members, work, forces.drift);
+        chord::add::<L, W>(members, forces.drift);
     }
 
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet {

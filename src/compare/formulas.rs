@@ -15,6 +15,7 @@ pub const WEAK: f64 = 0.05;
 ///
 /// # Formula
 /// max(storey's largest |e|, 5 % of the frame's largest |e|).
+#[inline(always)]
 pub fn reference<L: Lane<W>, const W: usize>(storey_largest: L, frame_largest: L) -> L {
     storey_largest.max(frame_largest * L::splat(REFERENCE_FLOOR))
 }
@@ -23,6 +24,7 @@ pub fn reference<L: Lane<W>, const W: usize>(storey_largest: L, frame_largest: L
 ///
 /// # Formula
 /// 100 (|q| - |e|) / base, with base = |e| for `error_percent` and the storey's reference for `storey_error_percent`.
+#[inline(always)]
 pub fn error_percent<L: Lane<W>, const W: usize>(exact: L, quick: L, base: L) -> L {
     L::splat(100.0) * (quick.abs() - exact.abs()) / base
 }
@@ -31,6 +33,7 @@ pub fn error_percent<L: Lane<W>, const W: usize>(exact: L, quick: L, base: L) ->
 ///
 /// # Formula
 /// |e| / |q|.
+#[inline(always)]
 pub fn factor<L: Lane<W>, const W: usize>(exact: L, quick: L) -> L {
     exact.abs() / quick.abs()
 }

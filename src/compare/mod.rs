@@ -4,7 +4,9 @@
 
 pub mod amplify;
 pub mod errors;
+pub mod factors;
 pub mod formulas;
+pub mod place_map;
 pub mod places;
 mod run;
 pub mod verdict;

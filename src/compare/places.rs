@@ -81,6 +81,12 @@ impl Band {
 }
 
 impl Class {
+    /// The class of a column line or bay, counted from 0, among `count` of them.
+    #[inline(always)]
+    pub fn of(index: usize, count: usize) -> Self {
+        if index == 0 || index + 1 == count { Self::End } else { Self::Interior }
+    }
+
     /// Name in files, `-` for whole storeys.
     pub fn id(self) -> &'static str {
         match self {
@@ -94,13 +100,17 @@ impl Class {
 impl Place {
     /// The place a member belongs to.
     pub fn of(frame: &Frame, member: Member) -> Self {
-        let class = |end: bool| if end { Class::End } else { Class::Interior };
+        Self::within(frame.storeys(), frame.bays(), member)
+    }
+
+    /// The place a member belongs to in any frame of `storeys` storeys and `bays` bays.
+    pub fn within(storeys: usize, bays: usize, member: Member) -> Self {
         let (kind, class) = match member {
-            Member::Column { line, .. } => (MemberKind::Column, class(frame.is_end_line(line))),
-            Member::Beam { bay, .. } => (MemberKind::Beam, class(frame.is_end_bay(bay))),
+            Member::Column { line, .. } => (MemberKind::Column, Class::of(line, bays + 1)),
+            Member::Beam { bay, .. } => (MemberKind::Beam, Class::of(bay, bays)),
             Member::Storey { .. } => (MemberKind::Storey, Class::Whole),
         };
-        Self { kind, band: Band::of(member.storey(), frame.storeys()), class }
+        Self { kind, band: Band::of(member.storey(), storeys), class }
     }
 
     /// The place in words, such as `ground storey, end columns`.

@@ -1,7 +1,7 @@
 //! Exact analyses of plain frames, `W` at a time: what a family of frames is solved by.
 
 use crate::lane::{Form, Lane, RowWidth, Task, Width};
-use crate::response::{Forces, Members, axial_from_beam_shears};
+use crate::response::{Forces, Members, Work, axial_from_beam_shears};
 use crate::solve::{Joint, Slots};
 
 /// Which exact analysis.
@@ -55,14 +55,20 @@ where
         Self { slots: if tall { slots.refined() } else { slots } }
     }
 
-    /// Fills `forces`, made for `members`, with end moments, axial forces and drifts; returns which frames can stand. The
+    /// Fills `forces`, made for `members` like `work`, with end moments, axial forces and drifts; returns which frames can stand. The
     /// numbers of one that cannot mean nothing.
     ///
     /// # Units
     /// N m, N, m; relative where the frames' sizes are.
-    pub fn respond(&mut self, form: Form, members: &Members<W>, forces: &mut Forces<W>) -> [bool; W] {
+    pub fn respond(
+        &mut self,
+        form: Form,
+        members: &Members<W>,
+        work: &mut Work<W>,
+        forces: &mut Forces<W>,
+    ) -> [bool; W] {
         let stands = self.slots.solve(form, members, forces);
-        form.run(Axial { members, forces });
+        form.run(Axial { members, work, forces });
         stands
     }
 }
@@ -70,6 +76,7 @@ where
 /// Column axial forces from beam shears as a task for lanes.
 struct Axial<'a, const W: usize> {
     members: &'a Members<W>,
+    work: &'a mut Work<W>,
     forces: &'a mut Forces<W>,
 }
 
@@ -78,6 +85,6 @@ impl<const W: usize> Task<W> for Axial<'_, W> {
 
     #[inline(always)]
     fn run<L: Lane<W>>(self) {
-        axial_from_beam_shears::<L, W>(self.members, self.forces);
+        axial_from_beam_shears::<L, W>(&self.members.rows(), &mut self.work.rows(), &mut self.forces.rows());
     }
 }

@@ -2,7 +2,7 @@
 
 use super::{Unsolvable, accept, name_mechanism};
 use crate::frame::{Feet, Frame};
-use crate::response::{Forces, Members, Response, axial_from_beam_shears};
+use crate::response::{Forces, Members, Response, Work, axial_from_beam_shears};
 use crate::solve::{BlockTridiagonal, Singular, Solution};
 
 /// Name of the method in files.
@@ -118,7 +118,7 @@ fn recover(frame: &Frame, levels: Levels, solution: &Solution) -> Forces<1> {
             forces.beam_right[beam] = [end_moment(k, right, left, 0.0)];
         }
     }
-    axial_from_beam_shears::<f64, 1>(&members, &mut forces);
+    axial_from_beam_shears::<f64, 1>(&members.rows(), &mut Work::for_members(&members).rows(), &mut forces.rows());
     forces
 }
 

@@ -6,10 +6,11 @@
 
 use super::{BIAS, EXPONENT, Lane, Task, WHOLE, Words};
 use std::arch::x86_64::{
-    __m256d, __m256i, _mm256_add_pd, _mm256_andnot_pd, _mm256_blend_epi32, _mm256_castpd_si256, _mm256_castsi256_pd,
-    _mm256_div_pd, _mm256_loadu_pd, _mm256_loadu_si256, _mm256_max_pd, _mm256_min_pd, _mm256_mul_epu32, _mm256_mul_pd,
-    _mm256_set1_epi64x, _mm256_set1_pd, _mm256_slli_epi64, _mm256_sqrt_pd, _mm256_srli_epi64, _mm256_storeu_pd,
-    _mm256_storeu_si256, _mm256_sub_pd, _mm256_xor_pd, _mm256_xor_si256,
+    __m256d, __m256i, _CMP_LT_OQ, _mm256_add_pd, _mm256_andnot_pd, _mm256_blend_epi32, _mm256_blendv_pd,
+    _mm256_castpd_si256, _mm256_castsi256_pd, _mm256_cmp_pd, _mm256_div_pd, _mm256_loadu_pd, _mm256_loadu_si256,
+    _mm256_max_pd, _mm256_min_pd, _mm256_movemask_pd, _mm256_mul_epu32, _mm256_mul_pd, _mm256_set1_epi64x,
+    _mm256_set1_pd, _mm256_slli_epi64, _mm256_sqrt_pd, _mm256_srli_epi64, _mm256_storeu_pd, _mm256_storeu_si256,
+    _mm256_sub_pd, _mm256_xor_pd, _mm256_xor_si256,
 };
 use std::ops::{Add, BitXor, Div, Mul, Neg, Sub};
 
@@ -126,6 +127,16 @@ impl Lane<4> for Avx2 {
     fn max(self, other: Self) -> Self {
         // SAFETY: as in `add`. The instruction gives `self > other ? self : other`.
         Self(unsafe { _mm256_max_pd(self.0, other.0) })
+    }
+    #[inline(always)]
+    fn if_less(self, other: Self, then: Self, otherwise: Self) -> Self {
+        // SAFETY: as in `add`.
+        Self(unsafe { _mm256_blendv_pd(otherwise.0, then.0, _mm256_cmp_pd::<_CMP_LT_OQ>(self.0, other.0)) })
+    }
+    #[inline(always)]
+    fn any_less(self, other: Self) -> bool {
+        // SAFETY: as in `add`.
+        unsafe { _mm256_movemask_pd(_mm256_cmp_pd::<_CMP_LT_OQ>(self.0, other.0)) != 0 }
     }
     #[inline(always)]
     fn abs(self) -> Self {

@@ -12,6 +12,7 @@ mod block;
 mod exp;
 mod form;
 mod plain;
+mod reciprocal;
 mod rows;
 mod words;
 
@@ -19,6 +20,7 @@ pub use block::{Block, RowTask, RowWidth};
 pub use exp::{EXP_REACH, exp};
 pub use form::{Form, Task, Width};
 pub use plain::Plain;
+pub use reciprocal::{invert, reciprocals};
 pub use rows::Rows;
 pub use words::{PlainWords, Words};
 
@@ -44,6 +46,10 @@ pub trait Lane<const W: usize>:
     fn min(self, other: Self) -> Self;
     /// The larger number, lane by lane; `other` where either is no number.
     fn max(self, other: Self) -> Self;
+    /// `then` where `self < other`, `otherwise` elsewhere and where either is no number, lane by lane.
+    fn if_less(self, other: Self, then: Self, otherwise: Self) -> Self;
+    /// Whether `self < other` in any lane: for skipping work that would change nothing in the others.
+    fn any_less(self, other: Self) -> bool;
     /// The magnitude, lane by lane.
     fn abs(self) -> Self;
     /// The square root, lane by lane; IEEE 754 rounds it once, so it has the same bits everywhere.
@@ -82,6 +88,14 @@ impl Lane<1> for f64 {
     #[inline(always)]
     fn max(self, other: Self) -> Self {
         if self > other { self } else { other }
+    }
+    #[inline(always)]
+    fn if_less(self, other: Self, then: Self, otherwise: Self) -> Self {
+        if self < other { then } else { otherwise }
+    }
+    #[inline(always)]
+    fn any_less(self, other: Self) -> bool {
+        self < other
     }
     #[inline(always)]
     fn abs(self) -> Self {

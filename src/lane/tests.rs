@@ -8,15 +8,26 @@ struct Operations<'a, const W: usize> {
     right: &'a [[f64; W]],
 }
 
-const OPERATIONS: usize = 10;
+const OPERATIONS: usize = 11;
 
 impl<const W: usize> Task<W> for Operations<'_, W> {
     type Output = Vec<[[f64; W]; OPERATIONS]>;
     fn run<L: Lane<W>>(self) -> Self::Output {
         let each = |(a, b): (&[f64; W], &[f64; W])| {
             let (a, b) = (L::load(a), L::load(b));
-            let results =
-                [a + b, a - b, a * b, a / b, -a, a.min(b), a.max(b), a.abs(), a.abs().sqrt(), a * L::splat(1.5) + b];
+            let results = [
+                a + b,
+                a - b,
+                a * b,
+                a / b,
+                -a,
+                a.min(b),
+                a.max(b),
+                a.if_less(b, a * b, b),
+                a.abs(),
+                a.abs().sqrt(),
+                a * L::splat(1.5) + b,
+            ];
             results.map(|result| {
                 let mut row = [0.0; W];
                 result.store(&mut row);
@@ -66,7 +77,7 @@ fn every_form_gives_the_bits_of_plain_arithmetic() {
 #[test]
 fn plain_arithmetic_is_what_it_says() {
     let found = Form::PORTABLE.one(Operations { left: &[[3.0]], right: &[[-2.0]] });
-    let expected = [1.0, 5.0, -6.0, -1.5, -3.0, -2.0, 3.0, 3.0, 3f64.sqrt(), 2.5];
+    let expected = [1.0, 5.0, -6.0, -1.5, -3.0, -2.0, 3.0, -2.0, 3.0, 3f64.sqrt(), 2.5];
     assert_eq!(found[0].map(|[value]| value), expected);
 }
 
@@ -216,4 +227,43 @@ fn rows_start_on_a_cache_line_and_copy_as_they_are() {
             assert_eq!(rows.as_ptr().addr() % 64, 0, "{count} rows");
         }
     }
+}
+
+#[test]
+fn several_reciprocals_are_those_of_each() {
+    let numbers = [0.3, -7e8, 1e-9, 4.0, 1.0 / 3.0, -2e30, 5e5];
+    for count in 0..=numbers.len() {
+        let mut row: Vec<[f64; 1]> = numbers[..count].iter().map(|number| [*number]).collect();
+        super::invert::<f64, 1>(&mut row);
+        for ([found], number) in row.iter().zip(numbers) {
+            assert!((found * number - 1.0).abs() < 4.0 * f64::EPSILON, "{number}: {found}");
+        }
+    }
+    let [a, b]: [f64; 2] = super::reciprocals([8.0, 0.25]);
+    assert_eq!((a, b), (0.125, 4.0));
+}
+
+/// Whether any lane of the left row is less than that of the right one, row by row.
+struct AnyLess<'a, const W: usize>(&'a [([f64; W], [f64; W])]);
+
+impl<const W: usize> Task<W> for AnyLess<'_, W> {
+    type Output = Vec<bool>;
+    fn run<L: Lane<W>>(self) -> Vec<bool> {
+        self.0.iter().map(|(a, b)| L::load(a).any_less(L::load(b))).collect()
+    }
+}
+
+#[test]
+fn any_less_asks_every_lane() {
+    let mut rows = vec![([1.0; 4], [1.0; 4]), ([2.0; 4], [1.0; 4]), ([f64::NAN; 4], [1.0; 4])];
+    rows.extend((0..4).map(|lane| {
+        let mut left = [3.0; 4];
+        left[lane] = 0.5;
+        (left, [1.0; 4])
+    }));
+    for form in [Some(Form::PORTABLE), Form::avx2()].into_iter().flatten() {
+        let expected = [false, false, false, true, true, true, true];
+        assert_eq!(form.four(AnyLess(&rows)), expected, "{}", form.name());
+    }
+    assert_eq!(Form::PORTABLE.one(AnyLess(&[([1.0], [2.0]), ([2.0], [2.0])])), [true, false]);
 }

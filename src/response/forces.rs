@@ -1,6 +1,6 @@
 //! Member forces in lane form.
 
-use super::Members;
+use super::{ForceRows, MemberRows, Members, WorkRows};
 use crate::lane::{Lane, Rows};
 
 /// Member forces of `W` frames, stored like [`Members`]. Signs are those of the crate's table.
@@ -41,6 +41,10 @@ impl<const W: usize> Forces<W> {
 pub struct Work<const W: usize> {
     /// One number per column line.
     pub line: Rows<W>,
+    /// One number per bay.
+    pub bay: Rows<W>,
+    /// One number per joint, stored like the columns under the joints, in three sets.
+    pub joint: [Rows<W>; 3],
     /// One number per storey, in four sets.
     pub storey: [Rows<W>; 4],
 }
@@ -48,8 +52,13 @@ pub struct Work<const W: usize> {
 impl<const W: usize> Work<W> {
     /// Scratch room for `members`.
     pub fn for_members(members: &Members<W>) -> Self {
-        let storey = Rows::zeros(members.storeys);
-        Self { line: Rows::zeros(members.lines()), storey: [storey.clone(), storey.clone(), storey.clone(), storey] }
+        let (joint, storey) = (Rows::zeros(members.storeys * members.lines()), Rows::zeros(members.storeys));
+        Self {
+            line: Rows::zeros(members.lines()),
+            bay: Rows::zeros(members.bays),
+            joint: [joint.clone(), joint.clone(), joint],
+            storey: [storey.clone(), storey.clone(), storey.clone(), storey],
+        }
     }
 }
 
@@ -61,26 +70,31 @@ impl<const W: usize> Work<W> {
 ///
 /// # Units
 /// N; tension positive.
-pub fn axial_from_beam_shears<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &mut Forces<W>) {
-    for storey in (0..members.storeys).rev() {
-        let mut left_beam = L::splat(0.0);
-        for line in 0..members.lines() {
-            let above = match storey + 1 < members.storeys {
-                true => L::load(&forces.column_axial[members.column(storey + 1, line)]),
-                false => L::splat(0.0),
-            };
-            let right_beam = match line < members.bays {
-                true => beam_shear(members, forces, storey, line),
-                false => L::splat(0.0),
-            };
-            let axial = above + right_beam - left_beam;
-            axial.store(&mut forces.column_axial[members.column(storey, line)]);
-            left_beam = right_beam;
-        }
+#[inline(always)]
+pub fn axial_from_beam_shears<L: Lane<W>, const W: usize>(
+    members: &MemberRows<W>,
+    work: &mut WorkRows<W>,
+    forces: &mut ForceRows<W>,
+) {
+    for (width, per_width) in members.width.iter().zip(&mut *work.bay) {
+        (L::splat(1.0) / L::load(width)).store(per_width);
     }
-}
-
-fn beam_shear<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &Forces<W>, floor: usize, bay: usize) -> L {
-    let beam = members.beam(floor, bay);
-    (L::load(&forces.beam_left[beam]) + L::load(&forces.beam_right[beam])) / L::load(&members.width[bay])
+    let per_width = &work.bay[..members.bays];
+    let beams = members.by_floor(forces.beam_left).zip(members.by_floor(forces.beam_right));
+    let mut above: Option<&[[f64; W]]> = None;
+    for ((left, right), own) in beams.zip(members.by_storey_mut(forces.column_axial)).rev() {
+        let mut before = L::splat(0.0);
+        for line in 0..members.lines() {
+            let mut force = -before;
+            if line < members.bays {
+                before = (L::load(&left[line]) + L::load(&right[line])) * L::load(&per_width[line]);
+                force = force + before;
+            }
+            if let Some(above) = above {
+                force = force + L::load(&above[line]);
+            }
+            force.store(&mut own[line]);
+        }
+        above = Some(own);
+    }
 }

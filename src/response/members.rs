@@ -38,16 +38,19 @@ pub struct Members<const W: usize> {
 
 impl<const W: usize> Members<W> {
     /// Index of the column in `storey` on `line`.
+    #[inline(always)]
     pub fn column(&self, storey: usize, line: usize) -> usize {
         storey * (self.bays + 1) + line
     }
 
     /// Index of the beam at `floor` in `bay`.
+    #[inline(always)]
     pub fn beam(&self, floor: usize, bay: usize) -> usize {
         floor * self.bays + bay
     }
 
     /// Number of column lines.
+    #[inline(always)]
     pub fn lines(&self) -> usize {
         self.bays + 1
     }

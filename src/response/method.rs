@@ -1,6 +1,6 @@
 //! The shape every quick method has, and the table row it is listed by.
 
-use super::{Forces, Members, Response, Work, Worksheet};
+use super::{ForceRows, Forces, MemberRows, Members, Response, Work, WorkRows, Worksheet};
 use crate::frame::Frame;
 use crate::lane::{Form, Lane, Task};
 use std::marker::PhantomData;
@@ -71,7 +71,7 @@ pub trait Method {
     /// Computes what [`Info::gives`] says for `W` frames; the rest of `forces` means nothing.
     ///
     /// `work` and `forces` must have been made for `members`.
-    fn respond<L: Lane<W>, const W: usize>(members: &Members<W>, work: &mut Work<W>, forces: &mut Forces<W>);
+    fn respond<L: Lane<W>, const W: usize>(members: &MemberRows<W>, work: &mut WorkRows<W>, forces: &mut ForceRows<W>);
 
     /// The hand calculation with the frame's own numbers; `response` is the method's answer for `frame`.
     fn worksheet(frame: &Frame, response: &Response) -> Worksheet;
@@ -134,10 +134,26 @@ impl<'a, M, const W: usize> Respond<'a, M, W> {
     }
 }
 
+impl<M: Method, const W: usize> Respond<'_, M, W> {
+    #[inline(always)]
+    fn respond<L: Lane<W>>(self, members: &MemberRows<W>) {
+        M::respond::<L, W>(members, &mut self.work.rows(), &mut self.forces.rows());
+    }
+}
+
 impl<M: Method, const W: usize> Task<W> for Respond<'_, M, W> {
     type Output = ();
     #[inline(always)]
     fn run<L: Lane<W>>(self) {
-        M::respond::<L, W>(self.members, self.work, self.forces);
+        let members = self.members.rows();
+        // One frame alone is no hurry; four at a time, usual widths are compiled with their loops laid out.
+        match members.bays {
+            1 if W > 1 => self.respond::<L>(&members.of_bays::<1>()),
+            2 if W > 1 => self.respond::<L>(&members.of_bays::<2>()),
+            3 if W > 1 => self.respond::<L>(&members.of_bays::<3>()),
+            4 if W > 1 => self.respond::<L>(&members.of_bays::<4>()),
+            5 if W > 1 => self.respond::<L>(&members.of_bays::<5>()),
+            _ => self.respond::<L>(&members),
+        }
     }
 }

@@ -5,6 +5,10 @@
 //! # References
 //! Equilibrium of joints, storeys and free bodies: common practice.
 
+mod lanes;
+
+pub use lanes::imbalance;
+
 use super::Response;
 use crate::frame::{Frame, Member};
 

@@ -1,6 +1,7 @@
 //! The hand calculation of the D-value method.
 
-use super::{inflection, ratio, reduction, sway_stiffness};
+use super::inflection::Storey;
+use super::{Columns, prepare};
 use crate::approx::sheet;
 use crate::frame::{Feet, Frame};
 use crate::response::{Amount, Members, Response, Step, Work, Worksheet};
@@ -24,13 +25,18 @@ pub(super) fn worksheet(frame: &Frame, response: &Response) -> Worksheet {
 
 /// K, a and D.
 fn shares(frame: &Frame) -> [Step; 3] {
-    let members = &Members::of(frame);
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let work = &mut scratch.rows();
+    prepare::<f64, 1>(members, work);
+    let columns = |storey| Columns::of(members, &work.joint, storey);
     let (_, unit) = sheet::stiffness(frame);
     let amount = if frame.has_real_stiffness() { Amount::StoreyStiffness } else { Amount::Ratio };
     // Relative sizes: D over the lowest column's 12 k / h².
     let reference = if frame.has_real_stiffness() { 1.0 } else { 12.0 * unit / frame.storey_height(0).powi(2) };
     let note = if frame.has_real_stiffness() { "" } else { " Over 12 k / h² of the lowest column on line A." };
-    let stiffness = |storey, line| sway_stiffness::<f64, 1>(members, storey, line) / reference;
+    let stiffness =
+        |storey, line| columns(storey).sway_stiffnesses::<f64, 1>(line, frame.storey_height(storey))[0] / reference;
     let ground = match frame.feet() {
         Feet::Pinned => "0.5 K / (1 + 2 K)",
         _ => "(0.5 + K) / (2 + K)",
@@ -43,14 +49,14 @@ fn shares(frame: &Frame) -> [Step; 3] {
             "Beam to column ratios K",
             "K = sum of beam k at head and foot / (2 × column k); in the ground storey sum of beam k at the head / column k.",
             Amount::Ratio,
-            &|storey, line| ratio::<f64, 1>(members, storey, line),
+            &|storey, line| columns(storey).ratio(line),
         ),
         sheet::by_line(
             frame,
             "Factors a",
             &format!("a = K / (2 + K); in the ground storey {ground}."),
             Amount::Ratio,
-            &|storey, line| reduction::<f64, 1>(members, storey, line),
+            &|storey, line| columns(storey).reductions::<f64, 1>(line)[0],
         ),
         sheet::with_column(d, frame, "sum", amount, &|storey| {
             (0..frame.lines()).map(|line| stiffness(storey, line)).sum()
@@ -60,8 +66,12 @@ fn shares(frame: &Frame) -> [Step; 3] {
 
 /// y0, the corrections together, and y.
 fn inflection_heights(frame: &Frame) -> [Step; 5] {
-    let members = &Members::of(frame);
-    let of = |storey, line| inflection::parts::<f64, 1>(members, &mut Work::for_members(members), storey, line);
+    let frame_members = Members::of(frame);
+    let (members, mut scratch) = (&frame_members.rows(), Work::for_members(&frame_members));
+    let work = &mut scratch.rows();
+    prepare::<f64, 1>(members, work);
+    let columns = |storey| Columns::of(members, &work.joint, storey);
+    let of = |storey, line| Storey::of(members, work.storey[0], storey).parts(&columns(storey).ends::<f64, 1>(line))[0];
     let by_line = |title: &str, rule: &str, value: &dyn Fn(usize, usize) -> f64| {
         sheet::by_line(frame, title, rule, Amount::Ratio, value)
     };

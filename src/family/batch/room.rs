@@ -52,7 +52,7 @@ impl Room {
         self.count = draws.len().min(4);
         self.draws = std::array::from_fn(|lane| *draws.get(lane).unwrap_or(last));
         batch.form.four(Fill { population: batch.population, draws: self.draws, members: &mut self.members });
-        let stands = self.exact.respond(batch.form, &self.members, &mut self.forces);
+        let stands = self.exact.respond(batch.form, &self.members, &mut self.work, &mut self.forces);
         let imbalance = batch.form.four(Imbalance { members: &self.members, forces: &self.forces });
         for lane in 0..4 {
             self.failures[lane] = match (stands[lane], imbalance[lane]) {
