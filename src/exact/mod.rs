@@ -1,7 +1,8 @@
-//! Exact linear elastic analyses of plain frames: two independent assemblies, one solver.
+//! Exact linear elastic analyses: two independent assemblies with one solver for single frames, and [`plain`] for many at once.
 
 mod bar;
 mod model;
+pub mod plain;
 pub mod second_order;
 pub mod slope_deflection;
 pub mod stiffness;

@@ -31,7 +31,8 @@ fn sized(
     shape.prop_flat_map(move |(storeys, bays)| of_shape(storeys, bays, exponents.clone())).boxed()
 }
 
-fn of_shape(storeys: usize, bays: usize, exponents: std::ops::Range<f64>) -> impl Strategy<Value = FrameParts> {
+/// Frames of one shape; `exponents` of ten for the inertias.
+pub fn of_shape(storeys: usize, bays: usize, exponents: std::ops::Range<f64>) -> impl Strategy<Value = FrameParts> {
     let lines = bays + 1;
     let inertia = move |count| vec(exponents.clone().prop_map(|exponent| 10f64.powf(exponent)), count);
     let grid = (vec(3.0..10.0, bays), vec(2.5..6.0, storeys));

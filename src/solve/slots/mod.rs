@@ -47,6 +47,8 @@
 //! `window` has steps 2 to 4, `sweep` 1, 5 and 6, `back` 7, `moments` 8, `refine` 9; `frames` and `joint` the terms of the
 //! equations; `group` which joints leave together; `record` what is kept for the way back.
 
+#![allow(clippy::needless_range_loop, reason = "rows and columns are what is meant; iterators would hide them")]
+
 mod back;
 mod frames;
 mod group;
