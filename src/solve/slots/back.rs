@@ -18,19 +18,40 @@ pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
         let found = &mut found[end - order..];
         let roof = found.len() == order;
         end -= order;
-        for index in (0..Group::groups(lines, B)).rev() {
-            let group = Group::of(index, lines, B);
-            let rest = if roof { B * (lines - group.line - group.count) } else { order };
-            match (group.count * B, roof) {
-                (1, false) => step::<L, W, 1>(1 + B * group.line, order, &record, found),
-                (2, false) => step::<L, W, 2>(1 + B * group.line, order, &record, found),
-                (_, false) => step::<L, W, 3>(1 + B * group.line, order, &record, found),
-                (1, true) => step::<L, W, 1>(1 + B * group.line, rest, &record, found),
-                (2, true) => step::<L, W, 2>(1 + B * group.line, rest, &record, found),
-                (_, true) => step::<L, W, 3>(1 + B * group.line, rest, &record, found),
-            }
+        let groups = Group::groups(lines, B);
+        for index in (3..groups).rev() {
+            find::<L, W, B>(index, lines, roof, &record, found);
         }
+        // The last three are written out so that the compiler knows their sizes.
+        if groups > 2 {
+            find::<L, W, B>(2, lines, roof, &record, found);
+        }
+        if groups > 1 {
+            find::<L, W, B>(1, lines, roof, &record, found);
+        }
+        find::<L, W, B>(0, lines, roof, &record, found);
         step::<L, W, 1>(0, order - 1, &record, found);
+    }
+}
+
+/// Finds the unknowns of a group of joints.
+#[inline(always)]
+fn find<L: Lane<W>, const W: usize, const B: usize>(
+    index: usize,
+    lines: usize,
+    roof: bool,
+    record: &LevelRecord<W>,
+    found: &mut [[f64; W]],
+) {
+    let group = Group::of(index, lines, B);
+    let (first, rest) = (1 + B * group.line, B * (lines - group.line - group.count));
+    match (group.count * B, roof) {
+        (1, false) if B == 1 => step::<L, W, 1>(first, 1 + B * lines, record, found),
+        (3, false) if B == 1 => step::<L, W, 3>(first, 1 + B * lines, record, found),
+        (_, false) => step::<L, W, 2>(first, 1 + B * lines, record, found),
+        (1, true) if B == 1 => step::<L, W, 1>(first, rest, record, found),
+        (3, true) if B == 1 => step::<L, W, 3>(first, rest, record, found),
+        (_, true) => step::<L, W, 2>(first, rest, record, found),
     }
 }
 

@@ -60,17 +60,31 @@ where
         let lines = (order - 1) / B;
         let _: Eliminated<L, 1> = self.window.eliminate(order, 0, record);
         self.storey_comes_in(next, record);
-        for index in 0..Group::groups(lines, B) {
-            let group = Group::of(index, lines, B);
-            match group.count * B {
-                1 if B == 1 => self.replace_joints::<1>(next, group, record),
-                3 if B == 1 => self.replace_joints::<3>(next, group, record),
-                _ => self.replace_joints::<2>(next, group, record),
-            }
+        // The first three are written out so that the compiler knows their sizes.
+        let groups = Group::groups(lines, B);
+        self.replace_group(0, next, record);
+        if groups > 1 {
+            self.replace_group(1, next, record);
+        }
+        if groups > 2 {
+            self.replace_group(2, next, record);
+        }
+        for index in 3..groups {
+            self.replace_group(index, next, record);
         }
     }
 
     /// Eliminates a group of joints, which stand at the front; those above them come in at the back.
+    #[inline(always)]
+    fn replace_group(&mut self, index: usize, next: &Level<W>, record: &mut LevelRecord<W>) {
+        let group = Group::of(index, (self.window.order() - 1) / B, B);
+        match group.count * B {
+            1 if B == 1 => self.replace_joints::<1>(next, group, record),
+            3 if B == 1 => self.replace_joints::<3>(next, group, record),
+            _ => self.replace_joints::<2>(next, group, record),
+        }
+    }
+
     #[inline(always)]
     fn replace_joints<const G: usize>(&mut self, next: &Level<W>, group: Group, record: &mut LevelRecord<W>) {
         let below = self.window.eliminate::<G>(self.window.order(), 1 + B * group.line, record);
@@ -83,14 +97,28 @@ where
         let order = self.window.order();
         let lines = (order - 1) / B;
         let _: Eliminated<L, 1> = self.window.eliminate(order, 0, record);
-        for index in 0..Group::groups(lines, B) {
-            let group = Group::of(index, lines, B);
-            let (held, first) = (B * (lines - group.line), 1 + B * group.line);
-            match group.count * B {
-                1 if B == 1 => _ = self.window.eliminate::<1>(held, first, record),
-                3 if B == 1 => _ = self.window.eliminate::<3>(held, first, record),
-                _ => _ = self.window.eliminate::<2>(held, first, record),
-            }
+        let groups = Group::groups(lines, B);
+        self.close_group(0, lines, record);
+        if groups > 1 {
+            self.close_group(1, lines, record);
+        }
+        if groups > 2 {
+            self.close_group(2, lines, record);
+        }
+        for index in 3..groups {
+            self.close_group(index, lines, record);
+        }
+    }
+
+    /// Eliminates a group of joints at the front of a window that holds it and those behind it.
+    #[inline(always)]
+    fn close_group(&mut self, index: usize, lines: usize, record: &mut LevelRecord<W>) {
+        let group = Group::of(index, lines, B);
+        let (held, first) = (B * (lines - group.line), 1 + B * group.line);
+        match group.count * B {
+            1 if B == 1 => _ = self.window.eliminate::<1>(held, first, record),
+            3 if B == 1 => _ = self.window.eliminate::<3>(held, first, record),
+            _ => _ = self.window.eliminate::<2>(held, first, record),
         }
     }
 
