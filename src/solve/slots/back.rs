@@ -4,7 +4,7 @@ use super::group::Group;
 use super::record::{LevelRecord, Record};
 use crate::lane::Lane;
 
-/// Finds all unknowns from the records of the way up; `sizes` are those of [`Record::levels`].
+/// Finds all unknowns from the records of the way up; `sizes` are those of [`Record::parts`].
 #[inline(always)]
 pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
     sizes: [usize; 2],
@@ -13,12 +13,13 @@ pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
 ) {
     let order = sizes[0];
     let lines = (order - 1) / B;
-    let mut end = found.len();
-    for record in record.levels(sizes).rev() {
-        let found = &mut found[end - order..];
-        let roof = found.len() == order;
-        end -= order;
-        let groups = Group::groups(lines, B);
+    let (ground, levels) = record.parts(sizes);
+    let mut start = found.len();
+    for record in levels.rev() {
+        let roof = start == found.len();
+        start = if roof { start - (order - 1) } else { start - order };
+        let found = &mut found[start..];
+        let groups = Group::groups(lines, B, !roof);
         for index in (3..groups).rev() {
             find::<L, W, B>(index, lines, roof, &record, found);
         }
@@ -30,11 +31,11 @@ pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
             find::<L, W, B>(1, lines, roof, &record, found);
         }
         find::<L, W, B>(0, lines, roof, &record, found);
-        step::<L, W, 1>(0, order - 1, &record, found);
     }
+    step::<L, W, 1>(0, order - 1, &ground, found);
 }
 
-/// Finds the unknowns of a group of joints.
+/// Finds the unknowns of a group.
 #[inline(always)]
 fn find<L: Lane<W>, const W: usize, const B: usize>(
     index: usize,
@@ -43,12 +44,14 @@ fn find<L: Lane<W>, const W: usize, const B: usize>(
     record: &LevelRecord<W>,
     found: &mut [[f64; W]],
 ) {
-    let group = Group::of(index, lines, B);
-    let (first, rest) = (1 + B * group.line, B * (lines - group.line - group.count));
-    match (group.count * B, roof) {
-        (1, false) if B == 1 => step::<L, W, 1>(first, 1 + B * lines, record, found),
-        (3, false) if B == 1 => step::<L, W, 3>(first, 1 + B * lines, record, found),
-        (_, false) => step::<L, W, 2>(first, 1 + B * lines, record, found),
+    let group = Group::of(index, lines, B, !roof);
+    let first = B * group.line;
+    // Nothing eliminated with a storey is bound to the next storey, the last unknown of the window.
+    let (all, rest) = (1 + B * lines - usize::from(group.storey), B * (lines - group.line - group.count));
+    match (group.count * B + usize::from(group.storey), roof) {
+        (1, false) if B == 1 => step::<L, W, 1>(first, all, record, found),
+        (2, false) => step::<L, W, 2>(first, all, record, found),
+        (_, false) => step::<L, W, 3>(first, all, record, found),
         (1, true) if B == 1 => step::<L, W, 1>(first, rest, record, found),
         (3, true) if B == 1 => step::<L, W, 3>(first, rest, record, found),
         (_, true) => step::<L, W, 2>(first, rest, record, found),
@@ -93,16 +96,18 @@ pub(super) fn forward<L: Lane<W>, const W: usize, const B: usize>(
 ) {
     let order = sizes[0];
     let lines = (order - 1) / B;
-    let mut start = 0;
-    for mut record in record.levels(sizes) {
+    let (mut ground, levels) = record.parts(sizes);
+    eliminate::<L, W, 1>(0, order - 1, &mut ground, right);
+    let mut start = 1;
+    for mut record in levels {
         let right = &mut right[start..];
-        let roof = right.len() == order;
+        let roof = right.len() < order;
         start += order;
-        eliminate::<L, W, 1>(0, order - 1, &mut record, right);
-        for index in 0..Group::groups(lines, B) {
-            let group = Group::of(index, lines, B);
-            let (first, rest) = (1 + B * group.line, if roof { B * (lines - group.line - group.count) } else { order });
-            match group.count * B {
+        for index in 0..Group::groups(lines, B, !roof) {
+            let group = Group::of(index, lines, B, !roof);
+            let all = 1 + B * lines - usize::from(group.storey);
+            let (first, rest) = (B * group.line, if roof { B * (lines - group.line - group.count) } else { all });
+            match group.count * B + usize::from(group.storey) {
                 1 => eliminate::<L, W, 1>(first, rest, &mut record, right),
                 2 => eliminate::<L, W, 2>(first, rest, &mut record, right),
                 _ => eliminate::<L, W, 3>(first, rest, &mut record, right),

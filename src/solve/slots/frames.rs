@@ -38,8 +38,8 @@ impl<'a, const W: usize> Frames<'a, W> {
             axial_above: &self.axial[above],
             beams: &self.beams[storey * bays..(storey + 1) * bays],
             rho: if storey == 0 { &self.rho[..lines] } else { &[] },
-            shear: &self.shear[storey],
-            height: &self.height[storey],
+            shear: &self.shear[storey..],
+            height: &self.height[storey..],
             slope: &self.slope[..bays],
             strain: &self.strain[storey..],
         }
@@ -56,8 +56,8 @@ pub(super) struct Level<'a, const W: usize> {
     beams: &'a [[f64; W]],
     /// None above the ground storey.
     rho: &'a [[f64; W]],
-    shear: &'a [f64; W],
-    height: &'a [f64; W],
+    shear: &'a [[f64; W]],
+    height: &'a [[f64; W]],
     slope: &'a [[f64; W]],
     strain: &'a [[f64; W]],
 }
@@ -123,12 +123,18 @@ impl<const W: usize> Level<'_, W> {
     /// Storey height, m.
     #[inline(always)]
     pub(super) fn height<L: Lane<W>>(&self) -> L {
-        L::load(self.height)
+        L::load(&self.height[0])
     }
 
-    /// -V h/6, N m.
+    /// -V h/6 of the storey, N m.
     #[inline(always)]
     pub(super) fn push<L: Lane<W>>(&self) -> L {
-        L::load(self.shear) * L::load(self.height) * L::splat(-1.0 / 6.0)
+        L::load(&self.shear[0]) * L::load(&self.height[0]) * L::splat(-1.0 / 6.0)
+    }
+
+    /// -V h/6 of the storey above, N m.
+    #[inline(always)]
+    pub(super) fn push_above<L: Lane<W>>(&self) -> L {
+        L::load(&self.shear[1]) * L::load(&self.height[1]) * L::splat(-1.0 / 6.0)
     }
 }

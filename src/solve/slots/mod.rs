@@ -22,19 +22,23 @@
 //!
 //! ```text
 //!        front  ...                back
-//!       [ p2 | t2A | t2B | t2C ]          p2 is eliminated; p3 comes in: it knows t2A, t2B, t2C
-//!       [ t2A | t2B | t2C | p3 ]          t2A, t2B, t2C are eliminated together (at most three unknowns are);
-//!                                         t3A, t3B, t3C come in: each knows the one below it, p3 and its neighbours
-//!       [ p3 | t3A | t3B | t3C ]          and so on; from the roof nobody comes in and the window runs empty
+//!       [ p1 | t1A | t1B | t1C ]          p1 is eliminated; p2 comes in: it knows t1A, t1B, t1C
+//!       [ t1A | t1B | t1C | p2 ]          t1A, t1B are eliminated together; t2A, t2B come in: each knows the one
+//!                                         below it, p2 and its neighbours
+//!       [ t1C | p2 | t2A | t2B ]          t1C, p2 are eliminated together; t2C comes in, then p3
+//!       [ t2A | t2B | t2C | p3 ]          and so on; above the roof is nobody, and the window runs empty
 //! ```
+//!
+//! At most three unknowns leave together, as equal groups as a level allows; the storey above leaves with the last joints of
+//! a level. With two unknowns a joint, joints leave one by one.
 //!
 //! # The algorithm
 //! 1. Put the lowest level into the window.
 //! 2. Invert the block D of the front unknowns by cofactors: one division, no square root.
 //! 3. M = D^-1 C, C = the block's rows in the window's other columns; y = D^-1 b.
 //! 4. Record M and y; subtract C' M from the window and C' y from its right-hand side, moving all to the front.
-//! 5. The unknowns above the eliminated ones come in at the back. Each is bound to the one below it alone, by a term K:
-//!    its row is -K M, no zero is loaded, multiplied or added; then its own terms are added.
+//! 5. The unknowns above the eliminated ones come in at the back, bound by few terms K to those: their rows are -K' M, no
+//!    zero is loaded, multiplied or added; then their own terms are added.
 //! 6. Go on from 2 until the roof has left the window.
 //! 7. Back from the roof: x = y - M x_rest, x_rest = the unknowns right behind, as many as the window has.
 //! 8. End moments from the unknowns of two levels; drifts from phi.

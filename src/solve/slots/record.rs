@@ -5,7 +5,8 @@ use crate::lane::{Lane, Rows};
 /// Most unknowns that one step eliminates.
 pub(super) const WIDEST: usize = 3;
 
-/// One row for each unknown, level by level in the order of elimination.
+/// One row for each unknown in the order of elimination: the lowest storey, then level by level the joints and the storey
+/// above them.
 pub(super) struct Record<const W: usize> {
     /// Unknowns of a level.
     order: usize,
@@ -22,28 +23,33 @@ pub(super) struct Record<const W: usize> {
 impl<const W: usize> Record<W> {
     /// Room for the multipliers of `stride` unknowns in a row, `order` or more.
     pub(super) fn new(order: usize, stride: usize, levels: usize) -> Self {
-        let unknowns = order * levels;
+        // One more than there are: above the roof is no storey.
+        let unknowns = order * levels + 1;
         let (multipliers, right) = (Rows::zeros(unknowns * stride), Rows::zeros(unknowns));
         Self { order, stride, multipliers, right, inverses: Rows::zeros(unknowns * WIDEST) }
     }
 
-    /// The records of all levels; `order` and `stride` are those of [`Record::new`], given again where the compiler knows
-    /// them.
+    /// The record of the lowest storey, and those of all levels; `order` and `stride` are those of [`Record::new`], given
+    /// again where the compiler knows them.
     #[inline(always)]
-    pub(super) fn levels(
+    pub(super) fn parts(
         &mut self,
         [order, stride]: [usize; 2],
-    ) -> impl DoubleEndedIterator<Item = LevelRecord<'_, W>> {
+    ) -> (LevelRecord<'_, W>, impl DoubleEndedIterator<Item = LevelRecord<'_, W>>) {
         debug_assert_eq!([order, stride], [self.order, self.stride]);
-        let multipliers = self.multipliers.chunks_exact_mut(order * stride);
-        let right = self.right.chunks_exact_mut(order);
-        let inverses = self.inverses.chunks_exact_mut(order * WIDEST);
-        multipliers.zip(right).zip(inverses).map(move |((multipliers, right), inverses)| LevelRecord {
+        let (multipliers, rest) = self.multipliers.split_at_mut(stride);
+        let rows = rest.chunks_exact_mut(order * stride);
+        let (right, rest) = self.right.split_at_mut(1);
+        let rights = rest.chunks_exact_mut(order);
+        let (inverses, rest) = self.inverses.split_at_mut(WIDEST);
+        let blocks = rest.chunks_exact_mut(order * WIDEST);
+        let levels = rows.zip(rights).zip(blocks).map(move |((multipliers, right), inverses)| LevelRecord {
             stride,
             multipliers,
             right,
             inverses,
-        })
+        });
+        (LevelRecord { stride, multipliers, right, inverses }, levels)
     }
 }
 
