@@ -138,7 +138,7 @@ impl<L> Law<L> {
     {
         self.worst = self.worst.max(sum.abs());
         self.scale = self.scale.max(by.abs());
-        self.unsound = self.unsound + (sum - sum);
+        self.unsound = self.unsound + sum * L::splat(0.0);
     }
 
     /// The worst over the scale; where all is zero, zero.
