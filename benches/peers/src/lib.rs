@@ -54,6 +54,9 @@ pub enum Failed {
         /// Who.
         peer: &'static str,
     },
+    /// Sizes cannot be drawn.
+    #[error(transparent)]
+    Draws(#[from] swaybound::family::DrawFault),
     /// A peer has another solution.
     #[error("{peer} differs from the exact analysis of {frame} by {difference:.1e} of the largest moment")]
     Differs {

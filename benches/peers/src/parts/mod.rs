@@ -1,7 +1,6 @@
 //! What is measured: one file per part, each a function from a [`Setting`] to its tables, listed in [`PARTS`].
-//!
-//! The breakdown of a family run (draws, exact analysis, quick methods, factors, reduction) is a further part.
 
+mod chain;
 mod hot;
 mod large;
 mod memory;
@@ -21,10 +20,11 @@ pub struct Part {
 }
 
 /// All parts, in the order in which they run.
-pub const PARTS: [Part; 3] = [
+pub const PARTS: [Part; 4] = [
     Part { name: "hot", run: hot::run },
     Part { name: "memory", run: memory::run },
     Part { name: "large", run: large::run },
+    Part { name: "chain", run: chain::run },
 ];
 
 /// The shapes of the tables.
