@@ -37,23 +37,12 @@ impl Proof {
         // SAFETY: a proof is made in `find` only, where the processor said that it has AVX2.
         unsafe { four(task) }
     }
-
-    /// Does `task` one frame at a time, compiled for AVX2.
-    pub(super) fn one<T: Task<1>>(self, task: T) -> T::Output {
-        // SAFETY: as in `four`.
-        unsafe { one(task) }
-    }
 }
 
 /// The trampoline: all that is inlined here is compiled for AVX2.
 #[target_feature(enable = "avx2")]
 fn four<T: Task<4>>(task: T) -> T::Output {
     task.run::<Avx2>()
-}
-
-#[target_feature(enable = "avx2")]
-fn one<T: Task<1>>(task: T) -> T::Output {
-    task.run::<f64>()
 }
 
 impl Add for Avx2 {
