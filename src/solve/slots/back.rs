@@ -4,7 +4,7 @@ use super::group::Group;
 use super::record::{LevelRecord, Record};
 use crate::lane::Lane;
 
-/// Finds all unknowns from the records of the way up; `sizes` are those of [`Record::parts`].
+/// Finds all unknowns from the records of the way up; `sizes` are those of [`Record::up`].
 #[inline(always)]
 pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
     sizes: [usize; 2],
@@ -13,9 +13,9 @@ pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
 ) {
     let order = sizes[0];
     let lines = (order - 1) / B;
-    let (ground, levels) = record.parts(sizes);
+    let (levels, ground) = record.down(sizes);
     let mut start = found.len();
-    for record in levels.rev() {
+    for record in levels {
         let roof = start == found.len();
         start = if roof { start - (order - 1) } else { start - order };
         let found = &mut found[start..];
@@ -96,7 +96,7 @@ pub(super) fn forward<L: Lane<W>, const W: usize, const B: usize>(
 ) {
     let order = sizes[0];
     let lines = (order - 1) / B;
-    let (mut ground, levels) = record.parts(sizes);
+    let (mut ground, levels) = record.up(sizes);
     eliminate::<L, W, 1>(0, order - 1, &mut ground, right);
     let mut start = 1;
     for mut record in levels {

@@ -8,7 +8,7 @@ pub(super) struct Frames<'a, const W: usize> {
     pub storeys: usize,
     /// E I/h of the columns, N m.
     pub columns: &'a [[f64; W]],
-    /// E A of the columns, N.
+    /// E A of the columns, N; this and all that follows on rises is empty where joints only turn.
     pub axial: &'a [[f64; W]],
     /// E I/L of the beams, N m.
     pub beams: &'a [[f64; W]],
@@ -25,23 +25,23 @@ pub(super) struct Frames<'a, const W: usize> {
 }
 
 impl<'a, const W: usize> Frames<'a, W> {
-    /// The level of a storey; `lines` is given where the compiler knows it.
+    /// The level of a storey, whose joints have `B` unknowns; `lines` is given where the compiler knows it.
     #[inline(always)]
-    pub(super) fn level(&self, storey: usize, lines: usize) -> Level<'a, W> {
-        let (roof, bays) = (storey + 1 == self.storeys, lines - 1);
+    pub(super) fn level<const B: usize>(&self, storey: usize, lines: usize) -> Level<'a, W> {
+        let (roof, bays, rises) = (storey + 1 == self.storeys, lines - 1, B > 1);
         let columns = storey * lines..(storey + 1) * lines;
         let above = if roof { 0..0 } else { columns.end..columns.end + lines };
         Level {
             columns: &self.columns[columns.clone()],
             columns_above: &self.columns[above.clone()],
-            axial: &self.axial[columns],
-            axial_above: &self.axial[above],
+            axial: if rises { &self.axial[columns] } else { &[] },
+            axial_above: if rises { &self.axial[above] } else { &[] },
             beams: &self.beams[storey * bays..(storey + 1) * bays],
             rho: if storey == 0 { &self.rho[..lines] } else { &[] },
             shear: &self.shear[storey..],
             height: &self.height[storey..],
-            slope: &self.slope[..bays],
-            strain: &self.strain[storey..],
+            slope: if rises { &self.slope[..bays] } else { &[] },
+            strain: if rises { &self.strain[storey..] } else { &[] },
         }
     }
 }

@@ -128,6 +128,7 @@ where
     /// The same with one step of iterative refinement, which brings back digits that axial strain costs in tall frames.
     pub fn refined(mut self) -> Self {
         self.memory.refines = true;
+        self.memory.record.keep_inverses();
         self.memory.change = Rows::zeros(self.memory.found.len());
         self
     }
@@ -171,13 +172,13 @@ impl<const W: usize> Memory<W> {
         Frames {
             storeys: members.storeys,
             columns: &members.column_stiffness,
-            axial: &members.axial_stiffness,
+            axial: if rises { &members.axial_stiffness } else { &[] },
             beams: &members.beam_stiffness,
             rho: &members.foot_rho,
             shear: &members.shear,
             height: &members.height,
-            slope,
-            strain,
+            slope: if rises { slope } else { &[] },
+            strain: if rises { strain } else { &[] },
         }
     }
 }

@@ -17,14 +17,15 @@ pub(super) fn recover<L: Lane<W>, const W: usize, const B: usize>(
     forces: &mut Forces<W>,
 ) {
     let lines = (order - 1) / B;
-    let columns = forces.column_foot.chunks_exact_mut(lines).zip(forces.column_head.chunks_exact_mut(lines));
     let bays = lines - 1;
-    let beams = forces.beam_left.chunks_exact_mut(bays).zip(forces.beam_right.chunks_exact_mut(bays));
-    let drifts = forces.drift.iter_mut();
+    let (mut feet, mut heads) = (&mut forces.column_foot[..], &mut forces.column_head[..]);
+    let (mut lefts, mut rights) = (&mut forces.beam_left[..], &mut forces.beam_right[..]);
     let mut below = &found[..0];
-    let rows = found.chunks_exact(order).zip(columns).zip(beams).zip(drifts).enumerate();
-    for (storey, (((own, (foot, head)), (left, right)), drift)) in rows {
-        let level = frames.level(storey, lines);
+    for (storey, drift) in forces.drift.iter_mut().enumerate() {
+        let (foot, head) = (take(&mut feet, lines), take(&mut heads, lines));
+        let (left, right) = (take(&mut lefts, bays), take(&mut rights, bays));
+        let own = &found[storey * order..][..order];
+        let level = frames.level::<B>(storey, lines);
         let chord = L::load(&own[0]);
         (chord * level.height() * L::splat(-1.0 / 3.0)).store(drift);
         for line in 0..lines {
@@ -59,4 +60,12 @@ pub(super) fn recover<L: Lane<W>, const W: usize, const B: usize>(
 fn end_moments<L: Lane<W>, const W: usize>(stiffness: L, near: L, far: L, chord: L) -> (L, L) {
     let (twice, common) = (stiffness + stiffness, near + far + chord);
     (twice * (common + near), twice * (common + far))
+}
+
+/// Splits the first `count` rows off.
+#[inline(always)]
+fn take<'a, const W: usize>(rows: &mut &'a mut [[f64; W]], count: usize) -> &'a mut [[f64; W]] {
+    let (first, rest) = std::mem::take(rows).split_at_mut(count);
+    *rows = rest;
+    first
 }

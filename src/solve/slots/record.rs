@@ -16,7 +16,8 @@ pub(super) struct Record<const W: usize> {
     multipliers: Rows<W>,
     /// The block's inverse times its right-hand side.
     right: Rows<W>,
-    /// The inverse of the block that the unknown was eliminated with, [`WIDEST`] numbers a row.
+    /// The inverse of the block that the unknown was eliminated with, [`WIDEST`] numbers a row; empty where nobody will
+    /// bring another right-hand side.
     inverses: Rows<W>,
 }
 
@@ -26,30 +27,55 @@ impl<const W: usize> Record<W> {
         // One more than there are: above the roof is no storey.
         let unknowns = order * levels + 1;
         let (multipliers, right) = (Rows::zeros(unknowns * stride), Rows::zeros(unknowns));
-        Self { order, stride, multipliers, right, inverses: Rows::zeros(unknowns * WIDEST) }
+        Self { order, stride, multipliers, right, inverses: Rows::zeros(0) }
     }
 
-    /// The record of the lowest storey, and those of all levels; `order` and `stride` are those of [`Record::new`], given
-    /// again where the compiler knows them.
+    /// Makes room for the inverses as well.
+    pub(super) fn keep_inverses(&mut self) {
+        self.inverses = Rows::zeros(self.right.len() * WIDEST);
+    }
+
+    /// The record of the lowest storey, and those of all levels upwards; `order` and `stride` are those of [`Record::new`],
+    /// given again where the compiler knows them.
     #[inline(always)]
-    pub(super) fn parts(
+    pub(super) fn up(
         &mut self,
         [order, stride]: [usize; 2],
-    ) -> (LevelRecord<'_, W>, impl DoubleEndedIterator<Item = LevelRecord<'_, W>>) {
+    ) -> (LevelRecord<'_, W>, impl Iterator<Item = LevelRecord<'_, W>>) {
         debug_assert_eq!([order, stride], [self.order, self.stride]);
         let (multipliers, rest) = self.multipliers.split_at_mut(stride);
         let rows = rest.chunks_exact_mut(order * stride);
         let (right, rest) = self.right.split_at_mut(1);
         let rights = rest.chunks_exact_mut(order);
-        let (inverses, rest) = self.inverses.split_at_mut(WIDEST);
-        let blocks = rest.chunks_exact_mut(order * WIDEST);
-        let levels = rows.zip(rights).zip(blocks).map(move |((multipliers, right), inverses)| LevelRecord {
+        let first = WIDEST.min(self.inverses.len());
+        let (inverses, rest) = self.inverses.split_at_mut(first);
+        let mut blocks = rest.chunks_exact_mut(order * WIDEST);
+        let levels = rows.zip(rights).map(move |(multipliers, right)| LevelRecord {
             stride,
             multipliers,
             right,
-            inverses,
+            inverses: blocks.next().unwrap_or_default(),
         });
         (LevelRecord { stride, multipliers, right, inverses }, levels)
+    }
+
+    /// The records of all levels downwards, and that of the lowest storey; inverses are left out.
+    #[inline(always)]
+    pub(super) fn down(
+        &mut self,
+        [order, stride]: [usize; 2],
+    ) -> (impl Iterator<Item = LevelRecord<'_, W>>, LevelRecord<'_, W>) {
+        let (multipliers, rest) = self.multipliers.split_at_mut(stride);
+        let rows = rest.chunks_exact_mut(order * stride).rev();
+        let (right, rest) = self.right.split_at_mut(1);
+        let rights = rest.chunks_exact_mut(order).rev();
+        let levels = rows.zip(rights).map(move |(multipliers, right)| LevelRecord {
+            stride,
+            multipliers,
+            right,
+            inverses: &mut [],
+        });
+        (levels, LevelRecord { stride, multipliers, right, inverses: &mut [] })
     }
 }
 
@@ -87,8 +113,10 @@ impl<const W: usize> LevelRecord<'_, W> {
         inverse: &[L; G],
     ) -> &mut [[f64; W]] {
         right.store(&mut self.right[row]);
-        for column in 0..G {
-            inverse[column].store(&mut self.inverses[row * WIDEST + column]);
+        if !self.inverses.is_empty() {
+            for column in 0..G {
+                inverse[column].store(&mut self.inverses[row * WIDEST + column]);
+            }
         }
         &mut self.multipliers[row * self.stride..][..count]
     }

@@ -23,7 +23,7 @@ pub(super) fn misfit<L: Lane<W>, const W: usize, const B: usize>(
     let (foot, head) = (&forces.column_foot[..], &forces.column_head[..]);
     let (left, right) = (&forces.beam_left[..], &forces.beam_right[..]);
     for storey in 0..frames.storeys {
-        let level = frames.level(storey, lines);
+        let level = frames.level::<B>(storey, lines);
         let own = &mut misfit[storey * order..][..order];
         let mut turning = L::splat(0.0);
         for line in 0..lines {

@@ -25,16 +25,16 @@ where
     pub(super) fn run(&mut self, frames: &Frames<W>, record: &mut Record<W>) -> L {
         let order = self.window.order();
         let lines = (order - 1) / B;
-        let ground = frames.level(0, lines);
+        let ground = frames.level::<B>(0, lines);
         self.open(&ground);
-        let (mut first, mut levels) = record.parts([order, self.window.stride()]);
+        let (mut first, mut levels) = record.up([order, self.window.stride()]);
         let _: Eliminated<L, 1> = self.window.eliminate(order, 0, &mut first);
         if !ground.is_roof() {
             self.storey_comes_in(&ground);
         }
         for storey in 1..frames.storeys {
             if let Some(mut record) = levels.next() {
-                self.replace(&frames.level(storey, lines), &mut record);
+                self.replace(&frames.level::<B>(storey, lines), &mut record);
             }
         }
         if let Some(mut record) = levels.next() {
