@@ -2,7 +2,7 @@
 
 /// What long work reports to.
 pub trait Progress: Sync {
-    /// So many draws more are done.
+    /// So many draws more are done. Of a run that is stopped, some that were told of here are thrown away again.
     fn advance(&self, draws: u64);
     /// Whether the work should stop where it is; asked between chunks.
     fn stopped(&self) -> bool;

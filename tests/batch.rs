@@ -1,4 +1,5 @@
-//! The batch runner: the same result for any number of threads, lanes and chunks; every frame as it is alone; failures named.
+//! The batch runner: the same frames for any number of threads, forms of lanes and chunks; every frame as it is alone;
+//! failures and refusals named.
 #![allow(clippy::unwrap_used, clippy::expect_used, clippy::panic, reason = "a test fails by panicking")]
 
 mod support;
@@ -8,13 +9,15 @@ use support::{Sizes, build, parts};
 use swaybound::approx;
 use swaybound::exact::plain::Analysis;
 use swaybound::exact::{slope_deflection, stiffness};
-use swaybound::family::batch::{Batch, Failure, Group, Population, Reducer, Shape, with_threads};
+use swaybound::family::batch::{
+    Batch, FAILURES_KEPT, Failure, Group, Population, QuickSizes, Reducer, Shape, with_threads,
+};
 use swaybound::family::{SizeDraws, Source};
 use swaybound::frame::sizes::{Range, SizeModel};
 use swaybound::frame::{Feet, Frame};
 use swaybound::lane::{Form, Lane};
 use swaybound::progress::{Progress, Unwatched};
-use swaybound::response::{Entry, Members, Response};
+use swaybound::response::{Entry, Fit, Members, Response};
 
 /// A building of our own, whose sizes the model draws.
 fn frame() -> Frame {
@@ -30,6 +33,11 @@ fn model() -> SizeModel {
         end_column_inertia: Some(Range::Fixed(4e-3)),
         ..SizeModel::default()
     }
+}
+
+/// The same on feet that are fixed as stated, which every method takes.
+fn on_fixed_feet() -> SizeModel {
+    SizeModel { foot_spring: None, ..model() }
 }
 
 fn draws() -> SizeDraws<4> {
@@ -53,7 +61,7 @@ impl Reducer for Kept {
                 [forces.column_foot[1][lane], forces.column_head[0][lane], forces.beam_left[last][lane]]
                     .map(f64::to_bits)
             };
-            let numbers = [group.exact].into_iter().chain(group.quick).flat_map(of).collect();
+            let numbers = [group.exact].into_iter().chain(group.quick.iter().flatten()).flat_map(of).collect();
             self.0.push((group.draws[lane], numbers));
         }
     }
@@ -85,30 +93,85 @@ fn neither_threads_nor_chunks_nor_forms_change_a_bit() {
     }
 }
 
-/// A draw in the batch is the frame that the plain route makes of it, analysed alone.
+/// A draw in the batch is the frame that the plain route makes of it, analysed alone; a method that refuses it alone
+/// answers nothing here, and says why.
 #[test]
 fn a_draw_is_the_frame_it_stands_for() {
-    let (draws, methods) = (draws(), methods());
-    for analysis in [Analysis::SlopeDeflection, Analysis::Stiffness] {
-        let found = Batch::new(&draws, analysis, &methods).run(0..200, Kept::default, &Unwatched).reduced;
-        for (draw, numbers) in found.0 {
-            let frame = draws.frame(draw).unwrap();
-            let exact = match analysis {
-                Analysis::SlopeDeflection => slope_deflection::analyse(&frame),
-                Analysis::Stiffness => stiffness::analyse(&frame),
-            };
-            let responses = [exact.unwrap()].into_iter().chain(methods.iter().map(|entry| entry.analyse(&frame)));
-            let top = frame.storeys() - 1;
-            let of = |response: Response| {
-                let beam = response.beam(top, frame.bays() - 1).left;
-                [response.column(0, 1).foot, response.column(0, 0).head, beam]
-            };
-            let scale = frame.storey_shear(0) * frame.storey_height(0);
-            for (found, expected) in numbers.iter().map(|bits| f64::from_bits(*bits)).zip(responses.flat_map(of)) {
-                assert!((found - expected).abs() <= 1e-11 * scale, "draw {draw}: {found} for {expected}");
+    let methods = methods();
+    for (model, refused) in [(on_fixed_feet(), false), (model(), true)] {
+        let draws = SizeDraws::of_model(&frame(), &model, Source::new(11)).unwrap();
+        for analysis in [Analysis::SlopeDeflection, Analysis::Stiffness] {
+            let outcome = Batch::new(&draws, analysis, &methods).run(0..200, Kept::default, &Unwatched);
+            for (draw, numbers) in outcome.reduced.0 {
+                same_as_alone(&draws.frame(draw).unwrap(), analysis, &methods, &numbers);
             }
+            let refusing: Vec<_> = outcome.refusals.iter().map(|refusal| refusal.method).collect();
+            let example = draws.frame(0).unwrap();
+            let mut expected: Vec<_> =
+                methods.iter().filter(|entry| refuses(entry, &example)).map(|entry| entry.info.id).collect();
+            expected.sort_unstable();
+            assert_eq!(refusing, expected);
+            assert_eq!(!refusing.is_empty(), refused, "spring feet are refused by some, fixed feet by none");
         }
     }
+}
+
+fn refuses(entry: &Entry, frame: &Frame) -> bool {
+    matches!((entry.fit)(frame), Fit::Refused(_))
+}
+
+#[track_caller]
+fn same_as_alone(frame: &Frame, analysis: Analysis, methods: &[&'static Entry], numbers: &[u64]) {
+    let exact = match analysis {
+        Analysis::SlopeDeflection => slope_deflection::analyse(frame),
+        Analysis::Stiffness => stiffness::analyse(frame),
+    };
+    let answering = methods.iter().filter(|entry| !refuses(entry, frame));
+    let responses = [exact.unwrap()].into_iter().chain(answering.map(|entry| entry.analyse(frame)));
+    let top = frame.storeys() - 1;
+    let of = |response: Response| {
+        let beam = response.beam(top, frame.bays() - 1).left;
+        [response.column(0, 1).foot, response.column(0, 0).head, beam]
+    };
+    let expected: Vec<f64> = responses.flat_map(of).collect();
+    assert_eq!(numbers.len(), expected.len());
+    let scale = frame.storey_shear(0) * frame.storey_height(0);
+    for (found, expected) in numbers.iter().map(|bits| f64::from_bits(*bits)).zip(expected) {
+        assert!((found - expected).abs() <= 1e-11 * scale, "{found} for {expected}");
+    }
+}
+
+/// What an engineer calculates before sizes are known does not know the draw; the exact answer does.
+#[test]
+fn methods_can_be_kept_to_the_assumed_sizes() {
+    let (methods, model) = (methods(), on_fixed_feet());
+    let draws = SizeDraws::of_model(&frame(), &model, Source::new(11)).unwrap();
+    let batch = Batch { quick_sizes: QuickSizes::Assumed, ..Batch::new(&draws, Analysis::SlopeDeflection, &methods) };
+    let kept = batch.run(0..50, Kept::default, &Unwatched).reduced.0;
+    let alone: Vec<u64> = methods
+        .iter()
+        .flat_map(|entry| {
+            let response = entry.analyse(&frame());
+            let beam = response.beam(frame().storeys() - 1, frame().bays() - 1).left;
+            [response.column(0, 1).foot, response.column(0, 0).head, beam].map(f64::to_bits)
+        })
+        .collect();
+    for (draw, numbers) in &kept {
+        assert_eq!(numbers[3..], alone, "draw {draw}");
+    }
+    assert_ne!(kept[0].1[..3], kept[1].1[..3]);
+}
+
+/// Column axial strain needs areas and real sizes, as it does for one frame.
+#[test]
+fn strain_is_not_computed_from_sizes_that_are_only_relative() {
+    let relative = SizeModel { foot_spring: None, end_column_inertia: None, ..model() };
+    let draws = SizeDraws::of_model(&frame(), &relative, Source::new(1)).unwrap();
+    let outcome = Batch::new(&draws, Analysis::Stiffness, &[]).run(0..2000, Kept::default, &Unwatched);
+    assert!(outcome.reduced.0.is_empty() && outcome.failed == 2000 && outcome.failures.len() == FAILURES_KEPT);
+    assert!(outcome.failures.iter().all(|(_, failure)| *failure == Failure::NoRealSizes));
+    let inextensible = Batch::new(&draws, Analysis::SlopeDeflection, &[]).run(0..20, Kept::default, &Unwatched);
+    assert_eq!((inextensible.failed, inextensible.reduced.0.len()), (0, 20));
 }
 
 /// Frames of several shapes, some of which cannot stand.
@@ -128,6 +191,10 @@ impl Mixed {
 impl Population for Mixed {
     fn shape(&self, draw: u64) -> Shape {
         Shape { storeys: 1 + (draw % 3) as usize, bays: 1 + (draw % 5) as usize }
+    }
+
+    fn example(&self, shape: Shape) -> Option<Frame> {
+        Some(Self::frame(shape))
     }
 
     fn members(&self, shape: Shape) -> Members<4> {
@@ -194,7 +261,7 @@ fn a_stopped_run_says_how_far_it_came_and_goes_on_from_there() {
     let batch = Batch { chunk: 32, ..Batch::new(&draws, Analysis::SlopeDeflection, &[]) };
     let whole = batch.run(0..3000, Kept::default, &Unwatched).reduced;
     let progress = After { limit: 500, seen: AtomicU64::new(0) };
-    let first = batch.run(0..3000, Kept::default, &progress);
+    let first = with_threads(1, || batch.run(0..3000, Kept::default, &progress)).unwrap();
     assert!(first.done.end >= 32 && first.done.end < 3000, "{:?}", first.done);
     assert_eq!(first.reduced.0.len() as u64, first.done.end);
     let rest = batch.run(first.done.end..3000, Kept::default, &Unwatched);

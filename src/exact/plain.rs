@@ -38,8 +38,9 @@ pub const REFINED_ABOVE: usize = 40;
 /// An exact analysis of `W` plain frames of one shape at a time.
 ///
 /// # Assumptions
-/// Linear elastic plane frames, first order; plain members between joint centres, floors rigid in their own plane, elastic
-/// feet.
+/// Linear elastic plane frames, first order, lateral loads at floors; plain members between joint centres, floors rigid in
+/// their own plane, elastic feet on supports that do not settle; inextensible columns for slope-deflection. Stiffness needs
+/// areas and real sizes: whoever calls sees to that.
 pub struct Plain<const W: usize> {
     slots: Slots<W>,
 }

@@ -4,7 +4,7 @@ use super::batch::{Population, Shape};
 use super::numbers::{MEMBERS, SIZES, WITHIN_ALL, WITHIN_BEAMS};
 use super::{DrawFault, Geometry, ModelDraws, Source, WithinDraws};
 use crate::frame::sizes::{SIZE_PARAMETERS, SizeModel, SizeSet, Within};
-use crate::frame::{Feet, Frame, FrameFault, FrameParts, Member};
+use crate::frame::{Feet, Frame, FrameFault, FrameParts, Member, SizeSource};
 use crate::lane::Lane;
 use crate::response::Members;
 
@@ -27,6 +27,10 @@ impl Population for SizeDraws<4> {
         Shape { storeys: self.frame.storeys(), bays: self.frame.bays() }
     }
 
+    fn example(&self, _shape: Shape) -> Option<Frame> {
+        self.frame(0).ok()
+    }
+
     fn members(&self, _shape: Shape) -> Members<4> {
         SizeDraws::members(self)
     }
@@ -45,6 +49,10 @@ impl<const W: usize> SizeDraws<W> {
     /// [`DrawFault`] where the model makes no sizes for this frame.
     pub fn of_model(frame: &Frame, model: &SizeModel, source: Source) -> Result<Self, DrawFault> {
         let parts = frame.parts();
+        let stated = matches!(parts.feet, Feet::Springs(_)) && model.foot_spring.is_none();
+        if stated && model.end_column_inertia.is_none() {
+            return Err(DrawFault::SpringsBesideRelativeSizes);
+        }
         let one = Geometry::of(&parts.bays, &parts.storeys, parts.modulus);
         let geometry = Geometry::side_by_side([&one; W]);
         let draws = ModelDraws::new(model, frame.feet(), source)?;
@@ -80,7 +88,8 @@ impl<const W: usize> SizeDraws<W> {
     }
 
     /// One draw as a frame, by plain arithmetic; the lanes agree with it to 1e-13. All but sizes, feet and modulus is
-    /// that of the frame the draws were made for, the source of its sizes included.
+    /// that of the frame the draws were made for. For plain members only: analysis options with stiffnesses of their own
+    /// do not know of the draw.
     ///
     /// # Errors
     /// [`FrameFault`] where the drawn sizes make no frame.
@@ -115,7 +124,10 @@ impl<const W: usize> SizeDraws<W> {
         let lowest = &sections.columns[..self.frame.lines()];
         let springs = set.foot_springs(lowest, parts.modulus, parts.storeys[0]);
         let feet = springs.map_or_else(|| parts.feet.clone(), Feet::Springs);
-        Frame::new(FrameParts { columns: sections.columns, beams: sections.beams, feet, ..parts.clone() })
+        let real = model.end_column_inertia.is_some();
+        let sizes = if real { SizeSource::Assumed } else { SizeSource::AssumedRelative };
+        let (columns, beams) = (sections.columns, sections.beams);
+        Frame::new(FrameParts { columns, beams, feet, sizes, ..parts.clone() })
     }
 
     fn within_frame(&self, within: Within, draw: u64) -> Result<Frame, FrameFault> {

@@ -32,4 +32,9 @@ pub enum DrawFault {
         /// The largest natural logarithm of a size relative to the lowest end column.
         logarithm: f64,
     },
+    /// Foot springs are stated in N m/rad, but sizes are only relative.
+    #[error(
+        "foot springs are stated, but member sizes are only relative; give end_column_inertia, or foot_spring in its place"
+    )]
+    SpringsBesideRelativeSizes,
 }

@@ -6,7 +6,8 @@
 //! - beams I_b = r (L_mean / h_median) I_0 beam_taper^t (L / L_mean)^p (r = `beam_to_column`, p = `span_power`), at the
 //!   roof further multiplied by `roof_beam`;
 //! - each inertia further multiplied by a factor of its own;
-//! - column areas A = a sqrt(I) (a = `area_per_inertia`);
+//! - column areas A = a sqrt(I) (a = `area_per_inertia`; for gross inertias: with cracked ones divide a by the root of the
+//!   stiffness factor);
 //! - foot springs `foot_spring` times 4 E I_c / h of the column above.
 
 use super::{Member, Section};
@@ -261,6 +262,10 @@ impl SizeSet {
 }
 
 /// How far known sizes may be off: log-uniform factors up to these either way, each 1 or more.
+///
+/// `member` and `beams` are factors on inertia: they stand for cracking and effective stiffness, while bare areas are known.
+/// (In a size model scatter does reach the area, which is unknown there.) `all` is a factor on every stiffness, foot springs
+/// and axial stiffness included.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Within {
     /// Drawn for each member alone.

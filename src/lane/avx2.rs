@@ -16,11 +16,11 @@ use std::ops::{Add, BitXor, Div, Mul, Neg, Sub};
 
 /// Four frames in one register.
 #[derive(Debug, Clone, Copy)]
-pub(super) struct Avx2(__m256d);
+struct Avx2(__m256d);
 
 /// Whole numbers of four frames in one register; made from an [`Avx2`]'s own operations only.
 #[derive(Debug, Clone, Copy)]
-pub(super) struct Avx2Words(__m256i);
+struct Avx2Words(__m256i);
 
 /// The proof that this processor has AVX2.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -49,7 +49,7 @@ impl Add for Avx2 {
     type Output = Self;
     #[inline(always)]
     fn add(self, other: Self) -> Self {
-        // SAFETY: an `Avx2` exists only inside `four`, so the processor has AVX2. This holds for every block below.
+        // SAFETY: see the module page: the processor has AVX2. This holds for every block below.
         Self(unsafe { _mm256_add_pd(self.0, other.0) })
     }
 }

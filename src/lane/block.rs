@@ -14,9 +14,9 @@ pub trait Block<L: Lane<W>, const W: usize> {
 
 /// One entry of four frames.
 #[derive(Debug, Clone, Copy)]
-pub struct Entry;
+pub struct OneEntry;
 
-impl<L: Lane<4>> Block<L, 4> for Entry {
+impl<L: Lane<4>> Block<L, 4> for OneEntry {
     type Four = L;
     #[inline(always)]
     fn factor(factor: L) -> L {
@@ -78,6 +78,6 @@ impl<T: RowTask<4>> Task<4> for OfFour<T> {
     type Output = T::Output;
     #[inline(always)]
     fn run<L: Lane<4>>(self) -> T::Output {
-        self.0.run::<L, Entry>()
+        self.0.run::<L, OneEntry>()
     }
 }

@@ -16,7 +16,7 @@ pub trait Task<const W: usize> {
     fn run<L: Lane<W>>(self) -> Self::Output;
 }
 
-/// How lanes are computed. Every form gives the same bits.
+/// How lanes are computed. Every form gives the same bits, but for the payload of numbers that are none.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub struct Form(Kind);
 

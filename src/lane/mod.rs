@@ -2,7 +2,8 @@
 //!
 //! A method is written once over [`Lane`]. With `f64` it computes one frame; with [`Plain`], or on processors that have
 //! them with 256-bit registers, it computes four frames whose numbers stand side by side as `[f64; 4]`. No operation is
-//! fused and lanes never mix, so a frame gives the same bits in every form.
+//! fused and lanes never mix, so a frame gives the same bits in every form
+//! (but for the payload of numbers that are none).
 //!
 //! Work is handed to a [`Form`] as a [`Task`]: the form runs it in the lanes it stands for. [`Rows`] holds lanes in memory.
 

@@ -26,11 +26,13 @@ pub struct Members<const W: usize> {
     pub column_stiffness: Rows<W>,
     /// Flexural stiffness E I/L of each beam, N m; relative where the frame's sizes are.
     pub beam_stiffness: Rows<W>,
-    /// Axial stiffness E A of each column, N; relative where the frame's sizes are, equal where it has no areas.
+    /// Axial stiffness E A of each column, N. Has meaning beside E I only where areas are known and sizes are real: else it is
+    /// equal for all columns, or that of a frame whose lowest end column has 1 m4.
     pub axial_stiffness: Rows<W>,
     /// Fixity rho = c / (c + 4 E I/h) of each lowest column's foot, c its spring: 1 fixed, 0 pinned.
     pub foot_rho: Rows<W>,
-    /// Foot fixity of the whole frame S / (S + C): S the sum of the foot springs, C that of the lowest columns' E I/h. 1 fixed, 0 pinned.
+    /// How far the feet turn with the floor above, S / (S + C): S the sum of the foot springs, C that of the lowest columns'
+    /// E I/h. 1 fixed, 0 pinned. Not rho: the same springs c = 4 E I/h have rho 0.5 and this 0.8. Of quick methods only.
     pub foot_fixity: [f64; W],
     /// Height of the ground storey's assumed inflection point over the storey height: 0 on pinned feet, else 1/2.
     pub ground_hinge: [f64; W],

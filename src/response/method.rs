@@ -46,7 +46,7 @@ impl Gives {
 }
 
 /// A reason to read a method's numbers with care, as one sentence.
-#[derive(Debug, Clone, PartialEq, Eq)]
+#[derive(Debug, Clone, PartialEq, Eq, PartialOrd, Ord)]
 pub struct Caution(pub String);
 
 /// Whether a method may be used on a frame.

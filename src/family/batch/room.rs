@@ -1,10 +1,12 @@
-//! What one thread needs to solve groups of four frames, kept from group to group.
+//! What groups of four frames need to be solved, kept from group to group.
 
-use super::{Batch, Failure, Group, Population, Shape};
-use crate::exact::plain::Plain;
+use super::{Batch, Failure, Group, Population, QuickSizes, Refusal, Shape};
+use crate::exact::plain::{Analysis, Plain};
+use crate::frame::Frame;
 use crate::lane::{Lane, Task};
-use crate::response::{Forces, Members, Work, statics};
+use crate::response::{Caution, Fit, Forces, Members, Work, statics};
 use std::collections::HashMap;
+use std::collections::hash_map::Entry;
 
 /// A room for each shape met so far.
 #[derive(Default)]
@@ -13,8 +15,12 @@ pub(super) struct Rooms {
 }
 
 impl Rooms {
-    pub(super) fn of<P: Population>(&mut self, shape: Shape, batch: &Batch<P>) -> &mut Room {
-        self.rooms.entry(shape).or_insert_with(|| Room::new(shape, batch))
+    /// The room for a shape, or why no frame of it can be solved.
+    pub(super) fn of<P: Population>(&mut self, shape: Shape, batch: &Batch<P>) -> Result<&mut Room, Failure> {
+        match self.rooms.entry(shape) {
+            Entry::Occupied(room) => Ok(room.into_mut()),
+            Entry::Vacant(place) => Ok(place.insert(Room::new(shape, batch)?)),
+        }
     }
 }
 
@@ -24,26 +30,46 @@ pub(super) struct Room {
     exact: Plain<4>,
     work: Work<4>,
     forces: Forces<4>,
-    quick: Vec<Forces<4>>,
+    /// None where a method is refused.
+    quick: Vec<Option<Forces<4>>>,
+    refusals: Vec<Refusal>,
     draws: [u64; 4],
     count: usize,
     failures: [Option<Failure>; 4],
 }
 
 impl Room {
-    fn new<P: Population>(shape: Shape, batch: &Batch<P>) -> Self {
-        let members = batch.population.members(shape);
-        let forces = Forces::for_members(&members);
-        Self {
-            exact: Plain::new(batch.analysis, shape.storeys, shape.bays),
-            work: Work::for_members(&members),
-            quick: vec![forces.clone(); batch.methods.len()],
-            forces,
-            members,
-            draws: [0; 4],
-            count: 0,
-            failures: [None; 4],
+    fn new<P: Population>(shape: Shape, batch: &Batch<P>) -> Result<Self, Failure> {
+        let example = batch.population.example(shape).ok_or(Failure::NoSuchShape)?;
+        let stated = |storeys, bays| (storeys, bays) == (shape.storeys, shape.bays);
+        if !stated(example.storeys(), example.bays()) {
+            return Err(Failure::NoSuchShape);
         }
+        let members = batch.population.members(shape);
+        if !stated(members.storeys, members.bays) {
+            return Err(Failure::NoSuchShape);
+        }
+        if batch.analysis == Analysis::Stiffness && !(example.has_areas() && example.has_real_stiffness()) {
+            return Err(Failure::NoRealSizes);
+        }
+        let (mut work, forces) = (Work::for_members(&members), Forces::for_members(&members));
+        let refusals = refusals(shape, batch, &example);
+        let mut quick = Vec::new();
+        for entry in batch.methods {
+            let refused = refusals.iter().any(|refusal| refusal.method == entry.info.id);
+            let mut answer = (!refused).then(|| forces.clone());
+            if let Some(answer) = &mut answer {
+                (entry.four)(batch.form, &members, &mut work, answer);
+            }
+            quick.push(answer);
+        }
+        let exact = Plain::new(batch.analysis, shape.storeys, shape.bays);
+        Ok(Self { members, exact, work, forces, quick, refusals, draws: [0; 4], count: 0, failures: [None; 4] })
+    }
+
+    /// Methods that do not answer for this shape.
+    pub(super) fn refusals(&self) -> &[Refusal] {
+        &self.refusals
     }
 
     /// Draws, solves and analyses up to four frames; where they are fewer the last is repeated.
@@ -54,15 +80,14 @@ impl Room {
         batch.form.four(Fill { population: batch.population, draws: self.draws, members: &mut self.members });
         let stands = self.exact.respond(batch.form, &self.members, &mut self.work, &mut self.forces);
         let imbalance = batch.form.four(Imbalance { members: &self.members, forces: &self.forces });
-        for lane in 0..4 {
-            self.failures[lane] = match (stands[lane], imbalance[lane]) {
-                (false, _) => Some(Failure::CannotStand),
-                (true, miss) if miss <= statics::CLOSES => None,
-                (true, miss) => Some(Failure::Misses(miss)),
-            };
+        self.failures = std::array::from_fn(|lane| Failure::of(stands[lane], imbalance[lane]));
+        if batch.quick_sizes == QuickSizes::Assumed {
+            return;
         }
         for (entry, quick) in batch.methods.iter().zip(&mut self.quick) {
-            (entry.four)(batch.form, &self.members, &mut self.work, quick);
+            if let Some(quick) = quick {
+                (entry.four)(batch.form, &self.members, &mut self.work, quick);
+            }
         }
     }
 
@@ -83,6 +108,16 @@ impl Room {
         let lanes = self.draws.into_iter().zip(self.failures).take(self.count);
         lanes.filter_map(|(draw, failure)| Some((draw, failure?)))
     }
+}
+
+/// Methods that do not answer for frames like `example`.
+fn refusals<P>(shape: Shape, batch: &Batch<P>, example: &Frame) -> Vec<Refusal> {
+    let reason = |fit: Fit| -> Option<Caution> { if let Fit::Refused(reason) = fit { Some(reason) } else { None } };
+    let refused = batch
+        .methods
+        .iter()
+        .filter_map(|entry| Some(Refusal { shape, method: entry.info.id, reason: reason((entry.fit)(example))? }));
+    refused.collect()
 }
 
 /// [`Population::fill`] as a task for lanes.

@@ -5,20 +5,22 @@ use crate::response::{Forces, MemberRows, Members};
 
 /// The largest relative imbalance of each frame's forces: of the moments at any joint, over the frame's largest end moment;
 /// of the vertical forces at any joint, over its largest axial force; of the end moments of any storey's columns and V h, over
-/// its largest V h. The overturning moments follow from these. Infinity where any of these numbers is none or infinite.
+/// its largest V h; of the moment on any pinned foot. The overturning moments follow from these. Infinity where any of these numbers is none or infinite.
 ///
 /// # Formula
 /// At a joint sum M = 0 and N_above + S_right - S_left - N = 0, beam shear S = (M_left + M_right) / L; in a storey
 /// sum (M_foot + M_head) + V h = 0.
 ///
 /// # Assumptions
-/// Undeformed position, as [`super::check`]. Drifts are not looked at.
+/// Undeformed position, as [`super::check`]. Equilibrium is all that is seen: not drifts, nor wrong stiffness, foot springs
+/// or rises, nor moment moved from one foot to another. Where axial forces were made from beam shears their law is an
+/// identity.
 ///
 /// # References
 /// Equilibrium of joints and storeys: common practice.
 #[inline(always)]
 pub fn imbalance<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &Forces<W>) -> L {
-    let members = &members.rows();
+    let (rhos, members) = (&members.foot_rho[..], &members.rows());
     let (mut moments, mut vertical, mut storeys) = (Law::kept(), Law::kept(), Law::kept());
     let columns = Columns { foot: &forces.column_foot, head: &forces.column_head, axial: &forces.column_axial };
     let beams = [&*forces.beam_left, &*forces.beam_right];
@@ -36,9 +38,10 @@ pub fn imbalance<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &Forc
         }
         storeys.see(sum, turning);
     }
-    // The foot moments of the ground storey meet no joint.
+    // The foot moments of the ground storey meet no joint; where a foot is pinned there is none.
     for line in 0..members.lines() {
-        moments.scale = moments.scale.max(L::load(&columns.foot[line]).abs());
+        let (foot, rho) = (L::load(&columns.foot[line]), L::load(&rhos[line]));
+        moments.see(rho.if_less(L::splat(f64::MIN_POSITIVE), foot, foot * L::splat(0.0)), foot);
     }
     moments.relative().max(vertical.relative()).max(storeys.relative())
 }

@@ -10,7 +10,7 @@ const PIVOT_FLOOR: f64 = 1e-13;
 ///
 /// `reserve` falls to what the least pivot, times the leading minor before it, has over [`PIVOT_FLOOR`] of its own
 /// diagonal term: a frame cannot stand where it is not positive. It also falls to the reciprocal of the determinant, which
-/// is zero where that overflows.
+/// is zero where that overflows. A pivot that is no number may pass here: it reaches every unknown, and is found there.
 #[inline(always)]
 pub(super) fn inverse<L: Lane<W>, const W: usize, const G: usize>(
     block: &[[L; G]; G],

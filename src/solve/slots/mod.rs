@@ -1,18 +1,20 @@
 //! Slot elimination: many frames of one shape at once, exact, without ever building a matrix.
 //!
 //! # The equations
-//! Unknown are each storey's chord rotation, as phi = -3 psi, and for each joint its rotation theta, with column axial
-//! strain before it its rise u = 3 v/l (l = mean bay width). With k = E I/length, q = E A l^2/(18 h), g = l/L and rho the
-//! fixity of a foot, half the slope-deflection equations read
+//! Unknown are each storey's chord rotation psi = drift/h, as phi = -3 psi, and for each joint its rotation theta; with
+//! column axial strain before it its rise v, up positive, as u = 3 v/l (l = mean bay width). A beam's chord has phi = g
+//! (u_right - u_left). With k = E I/length, q = E A l^2/(18 h), g = l/L and rho the fixity c/(c + 4 k) of a foot with spring
+//! c, each row is half the derivative of the strain energy:
 //!
-//! | row | own term | bound to |
-//! |---|---|---|
-//! | theta | 2 sum k | theta at the far end: k; phi of the storeys below and above: k |
-//! | phi | (2/3) sum k over the storey's columns | theta at both ends of the columns: k; right-hand side -V h/6 |
-//! | u | sum q + (2/3) sum k g^2 | u above and below: -q; u across a beam: -(2/3) k g^2; theta at both ends of a beam: k g from its right end, -k g from its left |
+//! | row | own term | bound to | right-hand side |
+//! |---|---|---|---|
+//! | theta | 2 sum k over the members at the joint | theta at the far ends: k; phi of the storeys below and above: k of the column there | 0 |
+//! | phi | (2/3) sum k over the storey's columns | theta at both ends of each column: k | -V h/6 |
+//! | u | sum q over the columns below and above + (2/3) sum k g^2 over the beams at the joint | u above and below: -q; u across a beam: -(2/3) k g^2; theta at both ends of a beam: k g from its right end, -k g from its left | 0 |
 //!
-//! In the ground storey the feet are eliminated beforehand: theta has (3 + rho)/2 of its column's k in place of 2 k, phi
-//! (1 + 3 rho)/6 in place of 2/3, and they are bound by (1 + rho)/2 k. So fixed, pinned and spring feet share lanes.
+//! Supports do not settle: below the ground storey u = 0. The feet are eliminated beforehand: there theta has (3 + rho)/2 of
+//! its column's k in place of 2 k, phi (1 + 3 rho)/6 in place of 2/3, and they are bound by (1 + rho)/2 k. So fixed, pinned
+//! and spring feet share lanes.
 //!
 //! # The slots
 //! Taken storey by storey upwards, each phi before the joints on top of its storey, every unknown is bound only to those of
@@ -48,7 +50,8 @@
 //! frame cannot stand. The window's order is a constant of the compiled code up to 8 bays, a variable beyond.
 //!
 //! # Where to read on
-//! `window` (and `wide`, for any order) has steps 2 to 4, `sweep` 1, 5 and 6, `back` 7, `moments` 8, `refine` 9; `frames` and `joint` the terms of the
+//! `window` (and `wide`, for any order) has steps 2 to 4, with `inverse`; `sweep` 1, 5 and 6; `back` 7, `moments` 8,
+//! `refine` 9. `routes` puts them together and chooses the window; `frames` and `joint` hold the terms of the
 //! equations; `group` which joints leave together; `record` what is kept for the way back.
 
 #![allow(clippy::needless_range_loop, reason = "rows and columns are what is meant; iterators would hide them")]
@@ -89,7 +92,7 @@ pub struct Slots<const W: usize> {
     memory: Memory<W>,
 }
 
-/// What one elimination needs room for.
+/// What one elimination needs room for, but for the windows of frames with many bays.
 struct Memory<const W: usize> {
     /// l/L of each bay.
     slope: Rows<W>,
@@ -141,12 +144,35 @@ where
     ///
     /// # Assumptions
     /// Linear elastic, plain members between joint centres, floors rigid in their own plane. `members` and `forces` are of
-    /// the shape that [`Slots::new`] was given; of any other, no frame is solved.
+    /// the shape that [`Slots::new`] was given; where any row is of another length, no frame is solved.
     pub fn solve(&mut self, form: Form, members: &Members<W>, forces: &mut Forces<W>) -> [bool; W] {
-        if (members.storeys, members.bays) != (self.storeys, self.bays) {
+        if !self.fits(members, forces) {
             return [false; W];
         }
         (self.route)(form, &mut self.memory, members, forces)
+    }
+
+    /// Whether all that is read and written has the length of the shape.
+    fn fits(&self, members: &Members<W>, forces: &Forces<W>) -> bool {
+        let (storeys, bays) = (self.storeys, self.bays);
+        let (columns, beams) = (storeys * (bays + 1), storeys * bays);
+        let lengths = [
+            (members.column_stiffness.len(), columns),
+            (members.axial_stiffness.len(), columns),
+            (members.beam_stiffness.len(), beams),
+            (members.foot_rho.len(), bays + 1),
+            (members.position.len(), bays + 1),
+            (members.width.len(), bays),
+            (members.shear.len(), storeys),
+            (members.height.len(), storeys),
+            (forces.column_foot.len(), columns),
+            (forces.column_head.len(), columns),
+            (forces.beam_left.len(), beams),
+            (forces.beam_right.len(), beams),
+            (forces.drift.len(), storeys),
+        ];
+        let shape = (members.storeys, members.bays) == (storeys, bays);
+        storeys > 0 && bays > 0 && shape && lengths.iter().all(|(found, needed)| found == needed)
     }
 }
 

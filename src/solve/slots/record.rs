@@ -8,10 +8,6 @@ pub(super) const WIDEST: usize = 3;
 /// One row for each unknown in the order of elimination: the lowest storey, then level by level the joints and the storey
 /// above them.
 pub(super) struct Record<const W: usize> {
-    /// Unknowns of a level.
-    order: usize,
-    /// Numbers from row to row of the multipliers.
-    stride: usize,
     /// Multipliers of the unknowns that follow, as many as a level has.
     multipliers: Rows<W>,
     /// The block's inverse times its right-hand side.
@@ -27,7 +23,7 @@ impl<const W: usize> Record<W> {
         // One more than there are: above the roof is no storey.
         let unknowns = order * levels + 1;
         let (multipliers, right) = (Rows::zeros(unknowns * stride), Rows::zeros(unknowns));
-        Self { order, stride, multipliers, right, inverses: Rows::zeros(0) }
+        Self { multipliers, right, inverses: Rows::zeros(0) }
     }
 
     /// Makes room for the inverses as well.
@@ -42,7 +38,6 @@ impl<const W: usize> Record<W> {
         &mut self,
         [order, stride]: [usize; 2],
     ) -> (LevelRecord<'_, W>, impl Iterator<Item = LevelRecord<'_, W>>) {
-        debug_assert_eq!([order, stride], [self.order, self.stride]);
         let (multipliers, rest) = self.multipliers.split_at_mut(stride);
         let rows = rest.chunks_exact_mut(order * stride);
         let (right, rest) = self.right.split_at_mut(1);

@@ -128,6 +128,7 @@ fn solve<U: Unknowns<B>, L: Lane<W>, M: Window<L, W>, const W: usize, const B: u
         }
         moments::recover::<L, W, B>(order, &frames, found, forces);
     }
+    // The unknown found last depends on all others: where any number is none, so is it.
     let (mut reserves, mut last) = ([0.0; W], [0.0; W]);
     reserve.store(&mut reserves);
     L::load(&found[0]).store(&mut last);

@@ -14,7 +14,7 @@ use std::marker::PhantomData;
 /// what that touches left of the diagonal and behind the last column is never read, but for being moved about.
 pub(super) struct Wide<'a, L, B, const W: usize> {
     order: usize,
-    /// Numbers from row to row, of `matrix` and `front`.
+    /// Numbers from row to row, of `matrix` and `next`.
     stride: usize,
     /// The upper triangle, in rows.
     matrix: &'a mut [[f64; W]],

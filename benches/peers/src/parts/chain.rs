@@ -154,7 +154,7 @@ impl<'a> Chain<'a> {
                     (entry.four)(form, members, work, quick);
                 }
             }
-            Stage::Factors => counts.factors(form, members, exact, quick),
+            Stage::Factors => counts.factors(form, members, exact, &quick.iter().collect::<Vec<_>>()),
             Stage::Reduce => counts.count(4),
             Stage::Undrawn => {
                 for stage in [Stage::Exact, Stage::Check, Stage::Quick, Stage::Factors, Stage::Reduce] {
@@ -187,7 +187,7 @@ impl Counts {
         Self { map, methods: methods.into(), measure, factors, counts }
     }
 
-    fn factors(&mut self, form: Form, members: &Members<4>, exact: &Forces<4>, quick: &[Forces<4>]) {
+    fn factors(&mut self, form: Form, members: &Members<4>, exact: &Forces<4>, quick: &[&Forces<4>]) {
         form.four(Factor { counts: self, members, exact, quick });
     }
 
@@ -206,7 +206,8 @@ impl Counts {
 
 impl Reducer for Counts {
     fn group(&mut self, form: Form, group: Group) {
-        self.factors(form, group.members, group.exact, group.quick);
+        let quick: Vec<&Forces<4>> = group.quick.iter().flatten().collect();
+        self.factors(form, group.members, group.exact, &quick);
         self.count(group.count);
     }
 
@@ -248,7 +249,7 @@ struct Factor<'a> {
     counts: &'a mut Counts,
     members: &'a Members<4>,
     exact: &'a Forces<4>,
-    quick: &'a [Forces<4>],
+    quick: &'a [&'a Forces<4>],
 }
 
 impl Task<4> for Factor<'_> {
