@@ -21,8 +21,12 @@ fn models() -> [SizeModel; 4] {
 }
 
 fn both(frame: &Frame, model: &SizeModel) -> (SizeDraws<1>, SizeDraws<4>) {
-    let source = Source::new(SEED);
-    (SizeDraws::of_model(frame, model, source).unwrap(), SizeDraws::of_model(frame, model, source).unwrap())
+    let (source, mut model) = (Source::new(SEED), *model);
+    if matches!(frame.feet(), Feet::Springs(_)) && model.foot_spring.is_none() {
+        // Stated springs stand beside real sizes only.
+        model.end_column_inertia.get_or_insert(Range::Fixed(5e-3));
+    }
+    (SizeDraws::of_model(frame, &model, source).unwrap(), SizeDraws::of_model(frame, &model, source).unwrap())
 }
 
 fn frames() -> Vec<Frame> {
@@ -251,7 +255,10 @@ fn ranges_that_make_no_sizes_are_refused() {
     let name = |fault: DrawFault| match fault {
         DrawFault::Range { name, .. } | DrawFault::Factor { name, .. } => name,
         DrawFault::Reach { .. } => "reach",
+        DrawFault::SpringsBesideRelativeSizes => "springs",
     };
+    let sprung = SizeDraws::<4>::of_model(&frame(1, 2, Feet::Springs(vec![1e7; 2])), &default(), Source::new(1));
+    assert_eq!(name(sprung.unwrap_err()), "springs");
     let backwards = Range::LogUniform { low: 2.0, high: 1.0 };
     assert_eq!(name(refused(SizeModel { taper: backwards, ..default() })), "taper");
     assert_eq!(name(refused(SizeModel { roof_beam: Range::Fixed(0.0), ..default() })), "roof_beam");
