@@ -223,6 +223,40 @@ fn draws_that_cannot_stand_are_named_and_left_out() {
     }
 }
 
+/// Frames that can stand, but in which beams are missing at some joint, so that a method divides by nothing.
+struct Gaps;
+
+impl Population for Gaps {
+    fn shape(&self, _draw: u64) -> Shape {
+        Shape { storeys: 2, bays: 2 }
+    }
+
+    fn example(&self, shape: Shape) -> Option<Frame> {
+        Some(build(parts(&vec![6.0; shape.bays], &vec![3.5; shape.storeys], &vec![1e4; shape.storeys])))
+    }
+
+    fn members(&self, shape: Shape) -> Members<4> {
+        Members::of(&self.example(shape).unwrap()).in_every_lane()
+    }
+
+    fn fill<L: Lane<4>>(&self, draws: [u64; 4], members: &mut Members<4>) {
+        for (lane, draw) in draws.into_iter().enumerate() {
+            let gap = draw % 5 == 2;
+            members.beam_stiffness.iter_mut().for_each(|row| row[lane] = if gap { 0.0 } else { 1.0 });
+        }
+    }
+}
+
+#[test]
+fn draws_in_which_a_method_comes_to_no_number_are_named_and_left_out() {
+    let methods = [approx::find("substitute-frame").unwrap(), approx::find("factor").unwrap()];
+    let outcome = Batch::new(&Gaps, Analysis::SlopeDeflection, &methods).run(0..50, Kept::default, &Unwatched);
+    let gaps: Vec<u64> = (0..50).filter(|draw| draw % 5 == 2).collect();
+    assert!(outcome.failures.iter().map(|(draw, _)| *draw).eq(gaps), "{:?}", outcome.failures);
+    assert!(outcome.failures.iter().all(|(_, failure)| matches!(failure, Failure::NoNumber(_))));
+    assert_eq!(outcome.reduced.0.len(), 40);
+}
+
 #[test]
 fn a_shape_among_others_gives_what_it_gives_alone() {
     let outcome = Batch::new(&Mixed, Analysis::SlopeDeflection, &[]).run(0..100, Kept::default, &Unwatched);

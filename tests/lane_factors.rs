@@ -211,6 +211,15 @@ fn zeros_and_signs_are_counted_by_lane() {
     assert_eq!(turned, [[2.0, 1.0, 0.0, 0.0, 1.0, 2.0], [0.0, 0.0, 1.0, 0.0, 0.0, 1.0]]);
     let weak = by_hand([8.0, 1.0, 0.0], [100.0, -4.0, -100.0]);
     assert_eq!(weak, [[0.08, 0.0, 0.0, 0.0, 12.5, 1.0], [0.25, 1.0, 0.0, 1.0, 4.0, 1.0]]);
+    for place in [0, 2] {
+        let mut quick = [4.0, 2.0, -16.0];
+        for none in [f64::NAN, f64::INFINITY, f64::NEG_INFINITY] {
+            quick[place] = none;
+            let [end, interior] = by_hand([8.0, 1.0, -8.0], quick);
+            assert_eq!(end[0], f64::INFINITY, "{none} at {place} gave the factor {}", end[0]);
+            assert!(none.is_infinite() || interior[0] == 0.5);
+        }
+    }
     let nothing = by_hand([0.0; 3], [0.0; 3]);
     assert_eq!(nothing, [[0.0, 0.0, 2.0, 0.0, 0.0, 0.0], [0.0, 0.0, 1.0, 0.0, 0.0, 0.0]]);
 }

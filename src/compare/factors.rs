@@ -23,7 +23,8 @@ pub struct Measure<const W: usize> {
 /// What is kept of one method by slot; see [`PlaceMap::slots`].
 #[derive(Debug, Clone, PartialEq)]
 pub struct Factors<const W: usize> {
-    /// The largest factor |e| / |q| of the members whose quick value is not zero; 0 where all are.
+    /// The largest factor |e| / |q| of the members whose quick value is not zero, weak ones included; 0 where no member has
+    /// both values. No bound may be stated from it where [`Factors::zeros`] counts any. Infinite where a number is none.
     pub factor: Rows<W>,
     /// 1 where exact and quick differ in sign on any member whose quick value is not zero, else 0.
     pub signs: Rows<W>,
@@ -31,7 +32,8 @@ pub struct Factors<const W: usize> {
     pub zeros: Rows<W>,
     /// Members whose quick value is weak: under 5 % of the storey's largest, but not zero.
     pub weak: Rows<W>,
-    /// Sum of |q| / |e| over the members counted in [`Measure::counted`], for prices.
+    /// Sum of |q| / |e| over the members counted in [`Measure::counted`], for the prices of design moments. Of quantities whose
+    /// exact value can change its sign (end moments, axial forces) the mean over draws does not settle.
     pub ratio_sum: Rows<W>,
 }
 
@@ -474,7 +476,10 @@ impl<L> Tally<L> {
     where
         L: Lane<W>,
     {
-        (L::splat(1.0) / self.least_ratio).store(&mut found.factor[slot]);
+        // A sum that is not finite has met a number that is none, which the least of the ratios forgets.
+        let (factor, sound) = (L::splat(1.0) / self.least_ratio, (self.ratio_sum * L::splat(0.0)).abs());
+        let factor = sound.if_less(L::splat(f64::MIN_POSITIVE), factor, L::splat(f64::INFINITY));
+        factor.store(&mut found.factor[slot]);
         self.signs.store(&mut found.signs[slot]);
         self.zeros.store(&mut found.zeros[slot]);
         self.weak.store(&mut found.weak[slot]);

@@ -63,14 +63,14 @@ pub struct Group<'a> {
     pub draws: [u64; 4],
     /// Lanes that count, 1 to 4.
     pub count: usize,
-    /// Lanes whose exact analysis holds; the others are reported as [`Failure`]s and must be left out.
+    /// Lanes whose analyses hold; the others are reported as [`Failure`]s and must be left out.
     pub sound: [bool; 4],
     /// The frames.
     pub members: &'a Members<4>,
     /// The exact analysis.
     pub exact: &'a Forces<4>,
     /// The quick methods in the order of [`Batch::methods`]; none where a method is refused. What a method does not give
-    /// ([`crate::response::Info::gives`]) means nothing, and nobody has looked for numbers that are none.
+    /// ([`crate::response::Info::gives`]) means nothing.
     pub quick: &'a [Option<Forces<4>>],
 }
 
@@ -118,7 +118,7 @@ pub struct Batch<'a, P> {
     pub chunk: u64,
 }
 
-/// Why a draw has no exact analysis.
+/// Why a draw is left out.
 #[derive(Debug, Clone, Copy, PartialEq, Error)]
 pub enum Failure {
     /// Some movement of the frame is not resisted, or so much less than others that no digit of it is left.
@@ -130,6 +130,9 @@ pub enum Failure {
     /// Column axial strain is asked for, but sizes are only relative or columns have no areas.
     #[error("column axial strain needs areas and real sizes, and these frames have none")]
     NoRealSizes,
+    /// A quick method comes to something that is no number, or infinite.
+    #[error("the method {0} comes to no number")]
+    NoNumber(&'static str),
     /// The population gives members of another shape than it states, or none.
     #[error("the population has no frame of the shape it states")]
     NoSuchShape,
@@ -164,9 +167,9 @@ pub struct Outcome<R> {
     pub reduced: R,
     /// The draws that were done, whole chunks from the first on; fewer than asked for where the run was stopped.
     pub done: Range<u64>,
-    /// Draws without an exact analysis, in order; of very many the first [`FAILURES_KEPT`].
+    /// Draws that were left out, in order; of very many the first [`FAILURES_KEPT`].
     pub failures: Vec<(u64, Failure)>,
-    /// How many draws have no exact analysis.
+    /// How many draws were left out.
     pub failed: u64,
     /// Methods that do not answer for shapes that were met, each once.
     pub refusals: Vec<Refusal>,

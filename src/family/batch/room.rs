@@ -4,7 +4,7 @@ use super::{Batch, Failure, Group, Population, QuickSizes, Refusal, Shape};
 use crate::exact::plain::{Analysis, Plain};
 use crate::frame::Frame;
 use crate::lane::{Lane, Task};
-use crate::response::{Caution, Fit, Forces, Members, Work, statics};
+use crate::response::{Caution, Fit, Forces, Gives, Members, Work, statics};
 use std::collections::HashMap;
 use std::collections::hash_map::Entry;
 
@@ -85,8 +85,13 @@ impl Room {
             return;
         }
         for (entry, quick) in batch.methods.iter().zip(&mut self.quick) {
-            if let Some(quick) = quick {
-                (entry.four)(batch.form, &self.members, &mut self.work, quick);
+            let Some(quick) = quick else { continue };
+            (entry.four)(batch.form, &self.members, &mut self.work, quick);
+            let finite = batch.form.four(Finite { gives: entry.info.gives, forces: quick });
+            for (failure, finite) in self.failures.iter_mut().zip(finite) {
+                if !finite {
+                    failure.get_or_insert(Failure::NoNumber(entry.info.id));
+                }
             }
         }
     }
@@ -103,7 +108,7 @@ impl Room {
         }
     }
 
-    /// Why frames solved last have no exact analysis.
+    /// Why frames solved last are left out.
     pub(super) fn failures(&self) -> impl Iterator<Item = (u64, Failure)> {
         let lanes = self.draws.into_iter().zip(self.failures).take(self.count);
         lanes.filter_map(|(draw, failure)| Some((draw, failure?)))
@@ -151,4 +156,39 @@ impl Task<4> for Imbalance<'_> {
         statics::imbalance::<L, 4>(self.members, self.forces).store(&mut imbalance);
         imbalance
     }
+}
+
+/// Whether all numbers that a method gives are finite, as a task for lanes.
+struct Finite<'a> {
+    gives: Gives,
+    forces: &'a Forces<4>,
+}
+
+impl Task<4> for Finite<'_> {
+    type Output = [bool; 4];
+
+    #[inline(always)]
+    fn run<L: Lane<4>>(self) -> [bool; 4] {
+        let (mut sum, mut last) = (L::splat(0.0), [0.0; 4]);
+        if self.gives.forces() {
+            sum = sum + total::<L>(&self.forces.column_foot) + total::<L>(&self.forces.column_head);
+            sum = sum + total::<L>(&self.forces.beam_left) + total::<L>(&self.forces.beam_right);
+            sum = sum + total::<L>(&self.forces.column_axial);
+        }
+        if self.gives.drifts() {
+            sum = sum + total::<L>(&self.forces.drift);
+        }
+        sum.store(&mut last);
+        last.map(f64::is_finite)
+    }
+}
+
+/// The sum of the rows: no number where any of them is none.
+#[inline(always)]
+fn total<L: Lane<4>>(rows: &[[f64; 4]]) -> L {
+    let mut sum = L::splat(0.0);
+    for row in rows {
+        sum = sum + L::load(row);
+    }
+    sum
 }

@@ -39,8 +39,8 @@ pub fn imbalance<L: Lane<W>, const W: usize>(members: &Members<W>, forces: &Forc
         storeys.see(sum, turning);
     }
     // The foot moments of the ground storey meet no joint; where a foot is pinned there is none.
-    for line in 0..members.lines() {
-        let (foot, rho) = (L::load(&columns.foot[line]), L::load(&rhos[line]));
+    for (foot, rho) in columns.foot.iter().zip(rhos) {
+        let (foot, rho) = (L::load(foot), L::load(rho));
         moments.see(rho.if_less(L::splat(f64::MIN_POSITIVE), foot, foot * L::splat(0.0)), foot);
     }
     moments.relative().max(vertical.relative()).max(storeys.relative())
