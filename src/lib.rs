@@ -6,8 +6,9 @@
 //!
 //! # Flow
 //! text of a frame file -> [`frame::Frame`] -> [`response::Response`], one per method -> errors and verdicts ->
-//! dataset -> files, text and page. Modules use each other in one direction: units, frame, lane, response, solve, exact and
-//! approx, compare, family, report, store.
+//! dataset -> files, text and page. Many frames at once: draw numbers -> [`response::Members`], four frames side by side ->
+//! [`response::Forces`] -> what a [`family::batch::Reducer`] makes of them. Modules use each other in one direction: units and
+//! progress, frame, lane, response, solve, exact and approx, compare, family, report, store.
 //!
 //! # Words
 //! *Storey* i lies between two floors, *floor* i on top of storey i, 1 = lowest; the top floor is the *roof*. *Bays*

@@ -4,4 +4,4 @@ mod block_tridiagonal;
 mod slots;
 
 pub use block_tridiagonal::{BlockTridiagonal, Singular, Solution};
-pub use slots::{Joint, Slots};
+pub use slots::{Joint, Routes, Slots};

@@ -1,9 +1,9 @@
 //! The crate's own kernel.
 
 use crate::{Failed, Joint, Peer};
-use swaybound::lane::{Form, RowWidth};
+use swaybound::lane::Form;
 use swaybound::response::{Forces, Members};
-use swaybound::solve::Slots;
+use swaybound::solve::{Routes, Slots};
 
 /// The kernel for one shape, in one form.
 pub struct Kernel<const W: usize> {
@@ -13,7 +13,7 @@ pub struct Kernel<const W: usize> {
 
 impl<const W: usize> Kernel<W>
 where
-    Form: RowWidth<W>,
+    Form: Routes<W>,
 {
     /// Room for frames of the shape of `example`.
     pub fn new(form: Form, joint: Joint, example: &Members<1>) -> Self {
@@ -28,7 +28,7 @@ where
 
 impl<const W: usize> Peer<W> for Kernel<W>
 where
-    Form: RowWidth<W>,
+    Form: Routes<W>,
 {
     fn solve(&mut self, members: &Members<W>, forces: &mut Forces<W>) -> Result<(), Failed> {
         let stand = self.slots.solve(self.form, members, forces);

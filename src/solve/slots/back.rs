@@ -1,6 +1,6 @@
 //! The way back: unknowns from the roof to the ground; and a second right-hand side on the way up.
 
-use super::group::Group;
+use super::group::{Group, WRITTEN_OUT};
 use super::record::{LevelRecord, Record};
 use crate::lane::Lane;
 
@@ -20,17 +20,19 @@ pub(super) fn substitute<L: Lane<W>, const W: usize, const B: usize>(
         start = if roof { start - (order - 1) } else { start - order };
         let found = &mut found[start..];
         let groups = Group::groups(lines, B, !roof);
-        for index in (3..groups).rev() {
-            find::<L, W, B>(index, lines, roof, &record, found);
+        if groups > WRITTEN_OUT {
+            for index in (0..groups).rev() {
+                find::<L, W, B>(index, lines, roof, &record, found);
+            }
+        } else {
+            if groups > 2 {
+                find::<L, W, B>(2, lines, roof, &record, found);
+            }
+            if groups > 1 {
+                find::<L, W, B>(1, lines, roof, &record, found);
+            }
+            find::<L, W, B>(0, lines, roof, &record, found);
         }
-        // The last three are written out so that the compiler knows their sizes.
-        if groups > 2 {
-            find::<L, W, B>(2, lines, roof, &record, found);
-        }
-        if groups > 1 {
-            find::<L, W, B>(1, lines, roof, &record, found);
-        }
-        find::<L, W, B>(0, lines, roof, &record, found);
     }
     step::<L, W, 1>(0, order - 1, &ground, found);
 }

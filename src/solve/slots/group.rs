@@ -2,6 +2,10 @@
 
 use super::record::WIDEST;
 
+/// Up to so many groups a level are written out, not looped over: then the compiler knows the size of each, and lays out the
+/// loops within. More would make the code long and gain little.
+pub(super) const WRITTEN_OUT: usize = 3;
+
 /// `count` joints of a level, from `line` on, and behind a level's last joints the storey above, where there is one.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub(super) struct Group {

@@ -47,7 +47,8 @@
 //! 9. Where asked, refine once: the moments' misfit in every equation is a new right-hand side for 3, 4 and 7.
 //!
 //! Every number is a [`Lane`]: W frames side by side, which never mix. What is noted of the pivots says at the end which
-//! frame cannot stand. The window's order is a constant of the compiled code up to 8 bays, a variable beyond.
+//! frame cannot stand. The window's order is a constant of the compiled code for four frames of up to 8 bays, a variable
+//! beyond and for one frame alone.
 //!
 //! # Where to read on
 //! `window` (and `wide`, for any order) has steps 2 to 4, with `inverse`; `sweep` 1, 5 and 6; `back` 7, `moments` 8,
@@ -69,11 +70,12 @@ mod sweep;
 mod wide;
 mod window;
 
-use crate::lane::{Form, Lane, RowWidth, Rows};
+use crate::lane::{Form, Lane, Rows};
 use crate::response::{Forces, Members};
 use frames::Frames;
 use record::Record;
 use routes::Route;
+pub use routes::Routes;
 
 /// What moves at a joint.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -108,7 +110,7 @@ struct Memory<const W: usize> {
 
 impl<const W: usize> Slots<W>
 where
-    Form: RowWidth<W>,
+    Form: Routes<W>,
 {
     /// Room for frames of `storeys` storeys and `bays` bays, each 1 or more.
     pub fn new(joint: Joint, storeys: usize, bays: usize) -> Self {
@@ -116,7 +118,7 @@ where
             Joint::Rotation => bays + 2,
             Joint::RiseAndRotation => 2 * bays + 3,
         };
-        let stride = if bays > routes::NARROW { wide::stride::<W>(order) } else { order };
+        let stride = <Form as Routes<W>>::stride(bays, order);
         let memory = Memory {
             slope: Rows::zeros(bays),
             strain: Rows::zeros(storeys),
@@ -125,10 +127,11 @@ where
             change: Rows::zeros(0),
             refines: false,
         };
-        Self { storeys, bays, route: routes::route(joint, bays), memory }
+        Self { storeys, bays, route: <Form as Routes<W>>::route(joint, bays), memory }
     }
 
-    /// The same with one step of iterative refinement, which brings back digits that axial strain costs in tall frames.
+    /// The same with one step of iterative refinement, which brings what the equations miss down to a third and less. Digits
+    /// that rises lose against each other in very tall frames are lost all the same.
     pub fn refined(mut self) -> Self {
         self.memory.refines = true;
         self.memory.record.keep_inverses();
@@ -149,7 +152,7 @@ where
         if !self.fits(members, forces) {
             return [false; W];
         }
-        (self.route)(form, &mut self.memory, members, forces)
+        (self.route.0)(form, &mut self.memory, members, forces)
     }
 
     /// Whether all that is read and written has the length of the shape.

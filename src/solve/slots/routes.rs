@@ -5,69 +5,99 @@ use super::sweep::Sweep;
 use super::wide::{self, Wide};
 use super::window::{Narrow, Window};
 use super::{Joint, Memory, back, moments, refine};
-use crate::lane::{Block, Form, Lane, RowTask, RowWidth, Task, Width};
+use crate::lane::{Block, Form, Lane, RowTask, RowWidth, Task};
 use crate::response::{Forces, Members};
 use std::marker::PhantomData;
 
 /// Most bays whose windows have orders that the compiler knows.
-pub(super) const NARROW: usize = 8;
+const NARROW: usize = 8;
 
 /// A route as a plain function pointer.
-pub(super) type Route<const W: usize> = fn(Form, &mut Memory<W>, &Members<W>, &mut Forces<W>) -> [bool; W];
+#[derive(Clone, Copy)]
+pub struct Route<const W: usize>(pub(super) Solve<W>);
 
-/// The route for frames of `bays` bays.
-pub(super) fn route<const W: usize>(joint: Joint, bays: usize) -> Route<W>
-where
-    Form: RowWidth<W>,
-{
+/// Solves the frames; says which of them can stand.
+type Solve<const W: usize> = fn(Form, &mut Memory<W>, &Members<W>, &mut Forces<W>) -> [bool; W];
+
+/// Numbers of frames that the routes are compiled for, once, in this crate: one and four.
+pub trait Routes<const W: usize>: RowWidth<W> {
+    /// The route for frames of `bays` bays.
+    fn route(joint: Joint, bays: usize) -> Route<W>;
+
+    /// Numbers from row to row of what that route keeps for the way back; `order` is that of its window.
+    fn stride(bays: usize, order: usize) -> usize;
+}
+
+impl Routes<1> for Form {
+    fn route(joint: Joint, _bays: usize) -> Route<1> {
+        // One frame alone is no hurry: windows of any order do for all.
+        Route(match joint {
+            Joint::Rotation => any::<Rotation, 1, 1>,
+            Joint::RiseAndRotation => any::<RiseAndRotation, 1, 2>,
+        })
+    }
+
+    fn stride(_bays: usize, order: usize) -> usize {
+        wide::stride::<1>(order)
+    }
+}
+
+impl Routes<4> for Form {
+    fn route(joint: Joint, bays: usize) -> Route<4> {
+        Route(choose(joint, bays))
+    }
+
+    fn stride(bays: usize, order: usize) -> usize {
+        if bays > NARROW { wide::stride::<4>(order) } else { order }
+    }
+}
+
+fn choose(joint: Joint, bays: usize) -> Solve<4> {
     match (joint, bays) {
-        (Joint::Rotation, 1) => fixed::<Rotation, W, 1, 3>,
-        (Joint::Rotation, 2) => fixed::<Rotation, W, 1, 4>,
-        (Joint::Rotation, 3) => fixed::<Rotation, W, 1, 5>,
-        (Joint::Rotation, 4) => fixed::<Rotation, W, 1, 6>,
-        (Joint::Rotation, 5) => fixed::<Rotation, W, 1, 7>,
-        (Joint::Rotation, 6) => fixed::<Rotation, W, 1, 8>,
-        (Joint::Rotation, 7) => fixed::<Rotation, W, 1, 9>,
-        (Joint::Rotation, 8) => fixed::<Rotation, W, 1, 10>,
-        (Joint::Rotation, _) => any::<Rotation, W, 1>,
-        (Joint::RiseAndRotation, 1) => fixed::<RiseAndRotation, W, 2, 5>,
-        (Joint::RiseAndRotation, 2) => fixed::<RiseAndRotation, W, 2, 7>,
-        (Joint::RiseAndRotation, 3) => fixed::<RiseAndRotation, W, 2, 9>,
-        (Joint::RiseAndRotation, 4) => fixed::<RiseAndRotation, W, 2, 11>,
-        (Joint::RiseAndRotation, 5) => fixed::<RiseAndRotation, W, 2, 13>,
-        (Joint::RiseAndRotation, 6) => fixed::<RiseAndRotation, W, 2, 15>,
-        (Joint::RiseAndRotation, 7) => fixed::<RiseAndRotation, W, 2, 17>,
-        (Joint::RiseAndRotation, 8) => fixed::<RiseAndRotation, W, 2, 19>,
-        (Joint::RiseAndRotation, _) => any::<RiseAndRotation, W, 2>,
+        (Joint::Rotation, 1) => fixed::<Rotation, 1, 3>,
+        (Joint::Rotation, 2) => fixed::<Rotation, 1, 4>,
+        (Joint::Rotation, 3) => fixed::<Rotation, 1, 5>,
+        (Joint::Rotation, 4) => fixed::<Rotation, 1, 6>,
+        (Joint::Rotation, 5) => fixed::<Rotation, 1, 7>,
+        (Joint::Rotation, 6) => fixed::<Rotation, 1, 8>,
+        (Joint::Rotation, 7) => fixed::<Rotation, 1, 9>,
+        (Joint::Rotation, 8) => fixed::<Rotation, 1, 10>,
+        (Joint::Rotation, _) => any::<Rotation, 4, 1>,
+        (Joint::RiseAndRotation, 1) => fixed::<RiseAndRotation, 2, 5>,
+        (Joint::RiseAndRotation, 2) => fixed::<RiseAndRotation, 2, 7>,
+        (Joint::RiseAndRotation, 3) => fixed::<RiseAndRotation, 2, 9>,
+        (Joint::RiseAndRotation, 4) => fixed::<RiseAndRotation, 2, 11>,
+        (Joint::RiseAndRotation, 5) => fixed::<RiseAndRotation, 2, 13>,
+        (Joint::RiseAndRotation, 6) => fixed::<RiseAndRotation, 2, 15>,
+        (Joint::RiseAndRotation, 7) => fixed::<RiseAndRotation, 2, 17>,
+        (Joint::RiseAndRotation, 8) => fixed::<RiseAndRotation, 2, 19>,
+        (Joint::RiseAndRotation, _) => any::<RiseAndRotation, 4, 2>,
     }
 }
 
 /// The window's order is `N`, known to the compiler.
-fn fixed<U: Unknowns<B>, const W: usize, const B: usize, const N: usize>(
+fn fixed<U: Unknowns<B>, const B: usize, const N: usize>(
     form: Form,
-    memory: &mut Memory<W>,
-    members: &Members<W>,
-    forces: &mut Forces<W>,
-) -> [bool; W]
-where
-    Form: RowWidth<W>,
-{
-    form.run(Fixed::<U, W, B, N> { memory, members, forces, unknowns: PhantomData })
+    memory: &mut Memory<4>,
+    members: &Members<4>,
+    forces: &mut Forces<4>,
+) -> [bool; 4] {
+    form.four(Fixed::<U, B, N> { memory, members, forces, unknowns: PhantomData })
 }
 
-struct Fixed<'a, U, const W: usize, const B: usize, const N: usize> {
-    memory: &'a mut Memory<W>,
-    members: &'a Members<W>,
-    forces: &'a mut Forces<W>,
+struct Fixed<'a, U, const B: usize, const N: usize> {
+    memory: &'a mut Memory<4>,
+    members: &'a Members<4>,
+    forces: &'a mut Forces<4>,
     unknowns: PhantomData<U>,
 }
 
-impl<U: Unknowns<B>, const W: usize, const B: usize, const N: usize> Task<W> for Fixed<'_, U, W, B, N> {
-    type Output = [bool; W];
+impl<U: Unknowns<B>, const B: usize, const N: usize> Task<4> for Fixed<'_, U, B, N> {
+    type Output = [bool; 4];
 
     #[inline(always)]
-    fn run<L: Lane<W>>(self) -> [bool; W] {
-        solve::<U, L, _, W, B>(Narrow::<L, N>::new(), [N, N], self.memory, self.members, self.forces)
+    fn run<L: Lane<4>>(self) -> [bool; 4] {
+        solve::<U, L, _, 4, B>(Narrow::<L, N>::new(), [N, N], self.memory, self.members, self.forces)
     }
 }
 

@@ -1,7 +1,7 @@
 //! The way up: unknowns are eliminated from the ground to the roof.
 
 use super::frames::{Frames, Level};
-use super::group::Group;
+use super::group::{Group, WRITTEN_OUT};
 use super::joint::{Unknowns, two_thirds};
 use super::record::{LevelRecord, Record};
 use super::window::{Eliminated, Window};
@@ -63,16 +63,18 @@ where
     #[inline(always)]
     fn replace(&mut self, next: &Level<W>, record: &mut LevelRecord<W>) {
         let groups = Group::groups((self.window.order() - 1) / B, B, true);
-        // The first three are written out so that the compiler knows their sizes.
-        self.replace_group(0, next, record);
-        if groups > 1 {
-            self.replace_group(1, next, record);
-        }
-        if groups > 2 {
-            self.replace_group(2, next, record);
-        }
-        for index in 3..groups {
-            self.replace_group(index, next, record);
+        if groups > WRITTEN_OUT {
+            for index in 0..groups {
+                self.replace_group(index, next, record);
+            }
+        } else {
+            self.replace_group(0, next, record);
+            if groups > 1 {
+                self.replace_group(1, next, record);
+            }
+            if groups > 2 {
+                self.replace_group(2, next, record);
+            }
         }
         if !next.is_roof() {
             self.storey_comes_in(next);
@@ -102,15 +104,18 @@ where
     #[inline(always)]
     fn close(&mut self, record: &mut LevelRecord<W>) {
         let groups = Group::groups((self.window.order() - 1) / B, B, false);
-        self.close_group(0, record);
-        if groups > 1 {
-            self.close_group(1, record);
-        }
-        if groups > 2 {
-            self.close_group(2, record);
-        }
-        for index in 3..groups {
-            self.close_group(index, record);
+        if groups > WRITTEN_OUT {
+            for index in 0..groups {
+                self.close_group(index, record);
+            }
+        } else {
+            self.close_group(0, record);
+            if groups > 1 {
+                self.close_group(1, record);
+            }
+            if groups > 2 {
+                self.close_group(2, record);
+            }
         }
     }
 
