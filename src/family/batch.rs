@@ -1,6 +1,6 @@
 //! Many frames: drawn, solved, analysed and reduced four at a time, in chunks that stay in cache.
 //!
-//! The draws of a run fall into chunks of [`Batch::chunk`] consecutive numbers. A chunk's draws are sorted by shape, taken
+//! The draws of a run fall into chunks of [`field@Batch::chunk`] consecutive numbers. A chunk's draws are sorted by shape, taken
 //! four by four, the last four filled up by repetition, and handed to a [`Reducer`] of the chunk's own as soon as they are
 //! solved; nothing else of them is kept. Each thread keeps room for the shapes it meets. Chunks run on any number of threads; their reducers are merged in the order of the
 //! chunks. So a result depends neither on the number of threads nor on which of them was faster.
