@@ -257,6 +257,39 @@ fn draws_in_which_a_method_comes_to_no_number_are_named_and_left_out() {
     assert_eq!(outcome.reduced.0.len(), 40);
 }
 
+/// Assumed sizes without beams: nothing a method that needs them could answer by.
+struct NoBeamsAssumed;
+
+impl Population for NoBeamsAssumed {
+    fn shape(&self, draw: u64) -> Shape {
+        Gaps.shape(draw)
+    }
+
+    fn example(&self, shape: Shape) -> Option<Frame> {
+        Gaps.example(shape)
+    }
+
+    fn members(&self, shape: Shape) -> Members<4> {
+        let mut members = Gaps.members(shape);
+        members.beam_stiffness.iter_mut().for_each(|row| *row = [0.0; 4]);
+        members
+    }
+
+    fn fill<L: Lane<4>>(&self, _draws: [u64; 4], members: &mut Members<4>) {
+        members.beam_stiffness.iter_mut().for_each(|row| *row = [1.0; 4]);
+    }
+}
+
+#[test]
+fn a_method_that_comes_to_no_number_on_assumed_sizes_is_refused() {
+    let methods = [approx::find("portal").unwrap(), approx::find("substitute-frame").unwrap()];
+    let batch = Batch::new(&NoBeamsAssumed, Analysis::SlopeDeflection, &methods);
+    let outcome = Batch { quick_sizes: QuickSizes::Assumed, ..batch }.run(0..20, Kept::default, &Unwatched);
+    assert!(outcome.refusals.iter().map(|refusal| refusal.method).eq(["substitute-frame"]), "{:?}", outcome.refusals);
+    assert_eq!((outcome.failed, outcome.reduced.0.len()), (0, 20));
+    assert!(outcome.reduced.0.iter().all(|(_, numbers)| numbers.len() == 6), "exact and portal, three numbers each");
+}
+
 #[test]
 fn a_shape_among_others_gives_what_it_gives_alone() {
     let outcome = Batch::new(&Mixed, Analysis::SlopeDeflection, &[]).run(0..100, Kept::default, &Unwatched);

@@ -53,15 +53,21 @@ impl Room {
             return Err(Failure::NoRealSizes);
         }
         let (mut work, forces) = (Work::for_members(&members), Forces::for_members(&members));
-        let refusals = refusals(shape, batch, &example);
+        let mut refusals = refusals(shape, batch, &example);
         let mut quick = Vec::new();
         for entry in batch.methods {
-            let refused = refusals.iter().any(|refusal| refusal.method == entry.info.id);
-            let mut answer = (!refused).then(|| forces.clone());
-            if let Some(answer) = &mut answer {
-                (entry.four)(batch.form, &members, &mut work, answer);
+            let mut answer = forces.clone();
+            let mut answers = refusals.iter().all(|refusal| refusal.method != entry.info.id);
+            // On assumed sizes once for all draws; on drawn ones with each draw.
+            if answers && batch.quick_sizes == QuickSizes::Assumed {
+                (entry.four)(batch.form, &members, &mut work, &mut answer);
+                answers = batch.form.four(Finite { gives: entry.info.gives, forces: &answer }) == [true; 4];
+                if !answers {
+                    let reason = Caution("on the assumed sizes it comes to no number".into());
+                    refusals.push(Refusal { shape, method: entry.info.id, reason });
+                }
             }
-            quick.push(answer);
+            quick.push(answers.then_some(answer));
         }
         let exact = Plain::new(batch.analysis, shape.storeys, shape.bays);
         Ok(Self { members, exact, work, forces, quick, refusals, draws: [0; 4], count: 0, failures: [None; 4] })
